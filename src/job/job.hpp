@@ -1,0 +1,141 @@
+#pragma once
+// What the engineer asks for, as plain values in SI: metres, watts, kelvin, pascals, kilograms.
+// Absolute temperatures are in K; rises, margins and resistances are differences.
+
+#include <optional>
+#include <string>
+#include <variant>
+#include <vector>
+
+namespace finwright::job {
+
+/// Where something stands in the job file, 1-based; line 0 when it was not written there.
+struct Place {
+    int line = 0;
+    int column = 0;
+};
+
+/// A sink dimension as the job leaves it: fixed, bounded on either side, or free. [m, or 1 for the fin count]
+struct Range {
+    std::optional<double> from;
+    std::optional<double> to;
+    Place place;
+
+    bool fixed() const { return from && to && *from == *to; }
+};
+
+/// A coordinate on the base: metres from its edge, or a share of the base's side (0..1).
+struct Coordinate {
+    double value = 0.5;
+    bool share_of_side = true;
+};
+
+/// One power part bolted to the base.
+struct Part {
+    std::string name;
+    double power = 0.0;                           ///< dissipated [W]
+    std::optional<double> junction_limit;         ///< absolute maximum [K]
+    double junction_to_case = 0.0;                ///< [K/W]
+    std::optional<double> rated_power;            ///< the 25 degC rating R_jc was taken from, if it was [W]
+    double interface = 0.0;                       ///< case to base, over the pad [K/W]
+    std::string interface_statement;              ///< the interface as the user wrote it
+    double pad_across = 0.0;                      ///< pad side along the width [m]
+    double pad_along = 0.0;                       ///< pad side along the length [m]
+    std::optional<Coordinate> across;             ///< pad centre from the left edge; empty: placed by the program
+    std::optional<Coordinate> along;              ///< pad centre from the inlet (lower) end; empty: placed by the program
+    Place place;
+};
+
+struct StillAir {};
+
+/// Air led through the fins by a duct that fits them closely. Exactly one is given.
+struct DuctedAir {
+    std::optional<double> velocity; ///< approach velocity in the duct section, width x fin height [m/s]
+    std::optional<double> flow;     ///< volume flow at inlet conditions [m3/s]
+};
+
+struct Air {
+    double temperature = 298.15; ///< at the sink's inlet [K]
+    double altitude = 0.0;       ///< [m]
+    std::variant<StillAir, DuctedAir> state;
+};
+
+struct Space {
+    std::optional<double> width, height, length; ///< overall, across the fins / off the mounting face / along the flow [m]
+};
+
+struct Limits {
+    double margin = 0.0;                   ///< kept below every junction limit [K]
+    std::optional<double> sink_resistance; ///< hottest pad's rise over inlet air / total power [K/W]
+    std::optional<double> mass;            ///< [kg]
+    std::optional<double> pressure_drop;   ///< [Pa]
+    Space space;
+};
+
+struct Alloy {
+    std::string name;
+    double conductivity = 0.0;  ///< [W/(m K)]
+    double density = 0.0;       ///< [kg/m3]
+    double specific_heat = 0.0; ///< [J/(kg K)]
+    std::string source;
+};
+
+struct Finish {
+    std::string name;
+    double emissivity = 0.0; ///< total hemispherical [-]
+    std::string source;
+};
+
+/// What a way of making the part can do. Defaults from the catalogue; the job may overrule each.
+struct Process {
+    std::string name;
+    double smallest_thickness = 0.0;                   ///< thinnest point of a fin [m]
+    double smallest_gap = 0.0;                         ///< narrowest point of a gap [m]
+    double largest_height_to_gap = 0.0;                ///< [-]
+    std::optional<double> largest_height_to_thickness; ///< [-]
+    std::optional<double> largest_height;              ///< fin height [m]
+    double smallest_base = 0.0;                        ///< base thickness [m]
+    double smallest_base_to_thickness = 0.0;           ///< base thickness / fin thickness, 0 = no such rule [-]
+    std::optional<double> largest_circle;              ///< circumscribing circle of the section [m]
+    std::string source;
+};
+
+/// The shop's increments: the drawing carries multiples of these. [m]
+struct Steps {
+    double fin_height = 0.5e-3;
+    double fin_thickness = 0.1e-3;
+    double gap = 0.1e-3;
+    double base_thickness = 0.5e-3;
+    double width = 1e-3;
+    double length = 1e-3;
+};
+
+/// What the search makes smallest.
+enum class Aim { mass, volume, height, footprint, resistance, pressure_drop };
+
+struct Sink {
+    Process process;
+    Alloy alloy;
+    Finish finish; ///< emissivity already overruled by the job where it says so
+    Aim aim = Aim::mass;
+    Range fins, fin_height, fin_thickness, gap, base_thickness, width, length;
+    double fin_draft = 0.0; ///< taper of each fin face from root to tip [rad]
+    Steps steps;
+};
+
+struct Job {
+    std::string title;
+    std::string file;
+    Air air;
+    std::vector<Part> parts;
+    Limits limits;
+    Sink sink;
+
+    double total_power() const {
+        double sum = 0.0;
+        for (const Part& part : parts) sum += part.power;
+        return sum;
+    }
+};
+
+} // namespace finwright::job
