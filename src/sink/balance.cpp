@@ -1,0 +1,112 @@
+#include "src/sink/balance.hpp"
+
+#include "src/sink/ducted_air.hpp"
+#include "src/sink/still_air.hpp"
+#include <cmath>
+#include <stdexcept>
+
+namespace finwright::sink {
+
+using correlations::Dual;
+
+namespace {
+
+constexpr double balance_tolerance = 1e-12;
+constexpr int balance_steps = 60;
+
+template <class T, class Visitor>
+auto with_model(const Geometry<T>& g, const Duty& duty, Visitor&& visit) {
+    if (const auto* still = std::get_if<StillAir>(&duty.surroundings.air))
+        return visit(StillAirSink<T>(g, duty.surroundings, duty.material, still->channel_law));
+    return visit(DuctedSink<T>(g, duty.surroundings, duty.material));
+}
+
+template <class T>
+T pressure_lost(const StillAirSink<T>&, const T&) {
+    return T(0.0);
+}
+template <class T>
+T pressure_lost(const DuctedSink<T>& sink, const T& base_rise) {
+    return sink.pressure_drop(base_rise);
+}
+
+/// Secant in (log rise, log heat): the curve is almost a straight line there.
+template <class Model>
+double balanced_rise(const Model& model, double power) {
+    const auto log_heat = [&](double log_rise) {
+        return std::log(model.shed(std::exp(log_rise)).total() / power);
+    };
+    double x0 = std::log(40.0), f0 = log_heat(x0);
+    double x1 = x0 - f0 / 1.2, f1 = log_heat(x1);
+    for (int step = 0; step < balance_steps; ++step) {
+        if (std::abs(f1) < balance_tolerance || x1 == x0) return std::exp(x1);
+        const double secant = (f1 - f0) / (x1 - x0);
+        const double slope = std::isfinite(secant) ? std::clamp(secant, 0.5, 2.0) : 1.2;
+        x0 = x1;
+        f0 = f1;
+        x1 -= f1 / slope;
+        f1 = log_heat(x1);
+    }
+    if (std::abs(f1) < 1e-10) return std::exp(x1);
+    throw std::domain_error("the heat balance does not settle");
+}
+
+void require_room(const Geometry<double>& g) {
+    const bool sound = g.gap > 0 && g.height > 0 && g.thickness > 0 && g.tip_thickness() > 0 &&
+                       g.base > 0 && g.length > 0 && g.fins >= 2;
+    if (!sound) throw std::domain_error("a sink needs two fins, and every dimension above zero");
+}
+
+Geometry<Dual<6>> widened(const Geometry<Dual<5>>& g) {
+    const auto widen = [](const Dual<5>& a) {
+        Dual<6> b(a.value);
+        for (std::size_t i = 0; i < 5; ++i) b.slope[i] = a.slope[i];
+        return b;
+    };
+    return {g.fins,         widen(g.height), widen(g.thickness), widen(g.gap),
+            widen(g.base), widen(g.length), g.draft_tangent};
+}
+
+/// f(x, rise) with rise = rise(x): total slopes.
+Dual<5> along(const Dual<6>& f, const Dual<5>& rise) {
+    Dual<5> out(f.value);
+    for (std::size_t i = 0; i < 5; ++i) out.slope[i] = f.slope[i] + f.slope[5] * rise.slope[i];
+    return out;
+}
+
+} // namespace
+
+template <class T>
+Geometry<double> plain(const Geometry<T>& g) {
+    using correlations::value_of;
+    return {g.fins,           value_of(g.height), value_of(g.thickness), value_of(g.gap),
+            value_of(g.base), value_of(g.length), g.draft_tangent};
+}
+template Geometry<double> plain(const Geometry<double>&);
+template Geometry<double> plain(const Geometry<Dual<5>>&);
+
+HeatPaths<double> shed(const Geometry<double>& g, const Duty& duty, double base_rise) {
+    require_room(g);
+    return with_model(g, duty, [&](const auto& model) { return model.shed(base_rise); });
+}
+
+Balance<double> balance(const Geometry<double>& g, const Duty& duty) {
+    require_room(g);
+    return with_model(g, duty, [&](const auto& model) {
+        const double rise = balanced_rise(model, duty.power());
+        return Balance<double>{rise, pressure_lost(model, rise)};
+    });
+}
+
+Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty) {
+    const double rise = balance(plain(g), duty).base_rise;
+    return with_model(widened(g), duty, [&](const auto& model) {
+        const auto rise6 = Dual<6>::variable(rise, 5);
+        const Dual<6> heat = model.shed(rise6).total();
+        Dual<5> implicit(rise);
+        for (std::size_t i = 0; i < 5; ++i) implicit.slope[i] = -heat.slope[i] / heat.slope[5];
+        return Balance<Dual<5>>{implicit, along(pressure_lost(model, rise6), implicit)};
+    });
+}
+
+} // namespace finwright::sink

@@ -1,0 +1,55 @@
+#pragma once
+// What the part is asked to do, and the air it does it in. Everything here is fixed while dimensions vary.
+
+#include "src/job/job.hpp"
+#include <optional>
+#include <string>
+#include <variant>
+#include <vector>
+
+namespace finwright::sink {
+
+/// Which published law gives the film coefficient inside still-air channels.
+/// The default is chosen by evidence: docs/validation.md.
+enum class ChannelLaw { u_channel, parallel_plates, elenbaas };
+
+/// Fins vertical, base vertical, room air at rest.
+struct StillAir {
+    ChannelLaw channel_law = ChannelLaw::u_channel;
+};
+
+/// The air stated for a duct that fits the fins closely: its velocity before the fins, or its volume flow.
+struct DuctVelocity {
+    double approach = 0.0; ///< over the duct section, width x fin height [m/s]
+};
+struct DuctFlow {
+    double volume = 0.0; ///< at inlet temperature and pressure [m3/s]
+};
+
+struct Surroundings {
+    double air_temperature = 298.15; ///< at the inlet; also what the surfaces radiate to [K]
+    double pressure = 101325.0;      ///< [Pa]
+    std::variant<StillAir, DuctVelocity, DuctFlow> air;
+
+    bool still() const { return std::holds_alternative<StillAir>(air); }
+};
+
+struct Material {
+    double conductivity = 0.0; ///< [W/(m K)]
+    double density = 0.0;      ///< [kg/m3]
+    double emissivity = 0.0;   ///< of every outer surface [-]
+};
+
+struct Duty {
+    Surroundings surroundings;
+    Material material;
+    std::vector<job::Part> parts;
+    double margin = 0.0; ///< kept below every junction limit [K]
+
+    double power() const;
+};
+
+/// The duty a job states. Pressure follows from the altitude.
+Duty duty_of(const job::Job& job);
+
+} // namespace finwright::sink

@@ -1,0 +1,61 @@
+#pragma once
+// How one sink does on one duty: every temperature from junction to air, where the heat goes, what the
+// air loses, and which laws say so.
+
+#include "correlations/numbers/dual.hpp"
+#include "src/sink/balance.hpp"
+#include "src/sink/ducted_air.hpp"
+#include "src/sink/law_use.hpp"
+#include "src/sink/still_air.hpp"
+#include <optional>
+#include <string>
+#include <variant>
+#include <vector>
+
+namespace finwright::sink {
+
+/// One part on the sink. Absolute temperatures in K.
+struct PartRating {
+    std::string name;
+    double power = 0.0;           ///< [W]
+    double pad_temperature = 0.0; ///< mean of the base surface under the pad [K]
+    double case_temperature = 0.0;
+    double junction_temperature = 0.0;
+    std::optional<double> junction_allowed; ///< limit less margin [K]
+
+    /// Kelvin left below what is allowed; negative when too hot; empty without a limit.
+    std::optional<double> headroom() const {
+        if (!junction_allowed) return std::nullopt;
+        return *junction_allowed - junction_temperature;
+    }
+};
+
+struct Rating {
+    Geometry<double> geometry;
+    double power = 0.0;           ///< [W]
+    double air_temperature = 0.0; ///< inlet [K]
+    double mass = 0.0;            ///< [kg]
+    double base_rise = 0.0;       ///< mean of the base over inlet air [K]
+    double hottest_pad_rise = 0.0;
+    double pressure_drop = 0.0; ///< [Pa]
+    HeatPaths<double> heat;     ///< [W]
+    std::variant<StillAirView<double>, DuctedAirView<double>> view;
+    std::vector<PartRating> parts;
+    std::vector<LawUse> laws;
+
+    /// Hottest pad's rise over inlet air per watt of total power [K/W].
+    double sink_resistance() const { return hottest_pad_rise / power; }
+    /// Mean base rise per watt [K/W].
+    double base_resistance() const { return base_rise / power; }
+    /// Mean temperature of the air leaving a ducted sink, the inlet's in still air [K].
+    double outlet_temperature() const;
+};
+
+/// Rise of the base under each pad over the inlet air, spreading included [K].
+template <class T>
+std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise);
+
+/// The whole rating. Throws std::domain_error for impossible geometry.
+Rating rate(const Geometry<double>& g, const Duty& duty);
+
+} // namespace finwright::sink
