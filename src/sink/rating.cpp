@@ -3,7 +3,6 @@
 #include "correlations/spreading.hpp"
 #include "src/sink/placing.hpp"
 #include <algorithm>
-#include <numeric>
 
 namespace finwright::sink {
 
@@ -42,6 +41,77 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
     return uses;
 }
 
+std::vector<LawUse> ducted_air_laws(const DuctedAirView<double>& v, const Geometry<double>& g) {
+    const double length_ratio = g.length / v.hydraulic_diameter;
+    return {{"air_conductivity", "air in the film", {v.film_temperature}},
+            {"air_viscosity", "air in the film", {v.film_temperature}},
+            {"duct_all_regimes", "channels", {v.reynolds, v.prandtl, v.aspect, length_ratio}},
+            {"fapp_all_regimes", "friction", {v.reynolds, v.aspect, length_ratio}},
+            {"entry_loss", "entry", {v.free_area_ratio}}};
+}
+
+/// Rates the flow side: what the films see, what the air loses, which laws say so.
+void rate_air(Rating& rating, const Duty& duty) {
+    const Geometry<double>& g = rating.geometry;
+    if (const auto* still = std::get_if<StillAir>(&duty.surroundings.air)) {
+        const StillAirSink<double> model(g, duty.surroundings, duty.material, still->channel_law);
+        const auto view = model.view(rating.base_rise);
+        rating.laws = still_air_laws(view, g, still->channel_law);
+        rating.view = view;
+        return;
+    }
+    const DuctedSink<double> model(g, duty.surroundings, duty.material);
+    const auto view = model.view(rating.base_rise);
+    rating.laws = ducted_air_laws(view, g);
+    rating.view = view;
+}
+
+void rate_parts(Rating& rating, const Duty& duty) {
+    const std::vector<double> rises = pad_rises(rating.geometry, duty, rating.base_rise);
+    for (std::size_t i = 0; i < duty.parts.size(); ++i)
+        rating.parts.push_back(
+            rate_part(duty.parts[i], rating.air_temperature + rises[i], duty.margin));
+    rating.hottest_pad_rise = *std::max_element(rises.begin(), rises.end());
+}
+
 } // namespace
+
+double Rating::outlet_temperature() const {
+    const auto* duct = std::get_if<DuctedAirView<double>>(&view);
+    return duct ? air_temperature + power / duct->capacity_flow : air_temperature;
+}
+
+template <class T>
+std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
+    const T film = duty.power() / (base_rise * g.footprint());
+    const correlations::Slab<T> slab{g.width(), g.length, g.base, T(duty.material.conductivity),
+                                     film};
+    const auto pads = pads_on_base(duty.parts, slab.width, slab.length);
+    const std::vector<T> influence = correlations::influence_matrix(slab, pads);
+    std::vector<T> rises(pads.size(), T(0.0));
+    for (std::size_t i = 0; i < pads.size(); ++i)
+        for (std::size_t j = 0; j < pads.size(); ++j)
+            rises[i] += influence[i * pads.size() + j] * duty.parts[j].power;
+    return rises;
+}
+
+template std::vector<double> pad_rises(const Geometry<double>&, const Duty&, const double&);
+template std::vector<correlations::Dual<5>>
+pad_rises(const Geometry<correlations::Dual<5>>&, const Duty&, const correlations::Dual<5>&);
+
+Rating rate(const Geometry<double>& g, const Duty& duty) {
+    const Balance<double> settled = balance(g, duty);
+    Rating rating;
+    rating.geometry = g;
+    rating.power = duty.power();
+    rating.air_temperature = duty.surroundings.air_temperature;
+    rating.mass = g.metal() * duty.material.density;
+    rating.base_rise = settled.base_rise;
+    rating.pressure_drop = settled.pressure_drop;
+    rating.heat = shed(g, duty, settled.base_rise);
+    rate_air(rating, duty);
+    rate_parts(rating, duty);
+    return rating;
+}
 
 } // namespace finwright::sink

@@ -1,0 +1,26 @@
+#include "src/cli/commands.hpp"
+#include "src/cli/exit_code.hpp"
+#include "src/cli/whole_file.hpp"
+#include "src/job/read_job.hpp"
+#include "src/sheets/page.hpp"
+#include "src/sheets/results_json.hpp"
+#include "src/sizing/sizing.hpp"
+#include <fmt/format.h>
+
+namespace finwright::cli {
+
+int size_command(const JobCommand& command) {
+    const job::Job job = job::read_job(command.job_file);
+    const sizing::Sizing sizing = sizing::size(job);
+    if (command.json_file)
+        write_whole(*command.json_file,
+                    std::visit([&](const auto& s) { return sheets::results_json(job, s); }, sizing));
+    if (const auto* refusal = std::get_if<sizing::Refusal>(&sizing)) {
+        fmt::print("{}", sheets::refusal_page(job, *refusal));
+        return impossible_job;
+    }
+    fmt::print("{}", sheets::size_page(job, std::get<sizing::Answer>(sizing)));
+    return done;
+}
+
+} // namespace finwright::cli

@@ -1,0 +1,112 @@
+#include "src/sheets/cautions.hpp"
+
+#include "src/sheets/numbers_text.hpp"
+#include <algorithm>
+#include <fmt/format.h>
+#include <limits>
+
+namespace finwright::sheets {
+
+using sink::Rating;
+
+namespace {
+
+constexpr double touch_long = 273.15 + 43.0, touch_guard = 273.15 + 70.0; // quoted bands, bare metal [K]
+constexpr double gap_that_clogs = 2e-3;                                   // unfiltered air [m]
+constexpr double heavy = 0.4;                                             // for leads to carry [kg]
+constexpr double sharp = 1e-3;                                            // fin edge [m]
+constexpr double worn_interface = 1.5;                                    // end of life, common practice [-]
+constexpr double clogged_flow = 0.7;                                      // filter loaded, common practice [-]
+
+double least_headroom(const Rating& rating) {
+    double least = std::numeric_limits<double>::infinity();
+    for (const auto& part : rating.parts)
+        if (part.headroom()) least = std::min(least, *part.headroom());
+    return least;
+}
+
+std::string hottest_junction(const Rating& rating) {
+    const auto hottest = std::max_element(
+        rating.parts.begin(), rating.parts.end(),
+        [](const auto& a, const auto& b) { return a.junction_temperature < b.junction_temperature; });
+    return fmt::format("{} at {} °C", hottest->name, celsius(hottest->junction_temperature, 0));
+}
+
+std::string touch(const Rating& rating) {
+    const double surface = rating.air_temperature + rating.hottest_pad_rise;
+    const std::string reach =
+        fmt::format("The metal reaches {} °C in {} °C air. ", celsius(surface, 0),
+                    celsius(rating.air_temperature, 0));
+    if (surface < touch_long) return {};
+    return reach + (surface < touch_guard
+                        ? "Bare-metal touch bands often quoted: 43 °C held long, 55 °C about 10 s, "
+                          "65 °C about 1 s; anodise counts as bare metal. Check ISO 13732-1 and "
+                          "the product's own standard."
+                        : "That is a hot surface: guard or mark it. ISO 13732-1 gives thresholds, "
+                          "the product's own standard the limits; anodise counts as bare metal.");
+}
+
+std::string worn(const job::Job& job, const Rating& rating) {
+    double least = std::numeric_limits<double>::infinity();
+    std::string name;
+    for (std::size_t i = 0; i < rating.parts.size(); ++i) {
+        const auto headroom = rating.parts[i].headroom();
+        if (!headroom || job.parts[i].interface == 0.0) continue;
+        const double left =
+            *headroom - (worn_interface - 1.0) * job.parts[i].interface * job.parts[i].power;
+        if (left < least) {
+            least = left;
+            name = job.parts[i].name;
+        }
+    }
+    if (name.empty()) return {};
+    return fmt::format("Grease pumps out and pads relax. With {} times its interface resistance {} "
+                       "{} what is allowed by {} K.",
+                       worn_interface, name, least < 0.0 ? "exceeds" : "stays below",
+                       fixed(std::abs(least), 1));
+}
+
+std::string fan_loss(const job::Job& job, const Rating& rating) {
+    sink::Duty clogged = sink::duty_of(job);
+    if (auto* velocity = std::get_if<sink::DuctVelocity>(&clogged.surroundings.air))
+        velocity->approach *= clogged_flow;
+    if (auto* flow = std::get_if<sink::DuctFlow>(&clogged.surroundings.air))
+        flow->volume *= clogged_flow;
+    sink::Duty stopped = clogged;
+    stopped.surroundings.air = sink::StillAir{};
+    const Rating at_clogged = sink::rate(rating.geometry, clogged);
+    const Rating at_stopped = sink::rate(rating.geometry, stopped);
+    return fmt::format(
+        "Fans fail and filters clog. At 70 % of the flow: {}{}. With the fan stopped, even free of "
+        "its duct with fins vertical: {}. Interlock or derate if that is too hot.",
+        hottest_junction(at_clogged), least_headroom(at_clogged) < 0.0 ? ", above what is allowed" : "",
+        hottest_junction(at_stopped));
+}
+
+} // namespace
+
+std::vector<std::string> cautions(const job::Job& job, const Rating& rating) {
+    std::vector<std::string> list;
+    const auto add = [&](std::string text) {
+        if (!text.empty()) list.push_back(std::move(text));
+    };
+    const bool still = std::holds_alternative<job::StillAir>(job.air.state);
+    add(touch(rating));
+    if (!still) add(fan_loss(job, rating));
+    add(worn(job, rating));
+    add("Tabs and leads may be live: check creepage and clearance for your voltage. A pad's thickness "
+        "is not creepage, and anodise is not safety insulation; an unearthed sink is live or radiates.");
+    if (still)
+        add("Still air: leave free space above and below, and take the air entering the fins, not the "
+            "room, as the ambient. °C/W falls as the rise grows, so it holds at the stated rise only.");
+    if (rating.geometry.gap < gap_that_clogs)
+        add("Gaps below 2 mm clog in unfiltered air.");
+    if (rating.mass > heavy)
+        add("Heavy for leads to carry: fix the sink to the chassis.");
+    if (rating.geometry.tip_thickness() < sharp) add("Thin fin edges cut: deburr and handle with gloves.");
+    add("The shop's own answer decides what can be made. These are estimates: build one, measure it, "
+        "then release, under your local codes and licensed practice.");
+    return list;
+}
+
+} // namespace finwright::sheets

@@ -1,0 +1,185 @@
+#include "src/sheets/results_json.hpp"
+
+#include "src/sheets/cautions.hpp"
+#include "src/sheets/plain_units.hpp"
+#include <cmath>
+#include <nlohmann/json.hpp>
+
+namespace finwright::sheets {
+
+using Json = nlohmann::ordered_json;
+
+namespace {
+
+constexpr int indent = 2;
+
+Json geometry_json(const sink::Geometry<double>& g) {
+    return {{"fins", g.fins},
+            {"fin_height_m", g.height},
+            {"fin_thickness_tip_m", g.tip_thickness()},
+            {"fin_thickness_root_m", g.thickness},
+            {"gap_root_m", g.gap},
+            {"pitch_m", g.pitch()},
+            {"base_thickness_m", g.base},
+            {"width_m", g.width()},
+            {"length_m", g.length},
+            {"overall_height_m", g.overall_height()},
+            {"circumscribing_circle_m", std::hypot(g.width(), g.overall_height())},
+            {"section_area_m2", g.section()}};
+}
+
+Json optional_json(const std::optional<double>& value) {
+    return value ? Json(*value) : Json(nullptr);
+}
+
+Json part_json(const sink::PartRating& part) {
+    return {{"name", part.name},
+            {"power_W", part.power},
+            {"junction_temperature_K", part.junction_temperature},
+            {"case_temperature_K", part.case_temperature},
+            {"pad_temperature_K", part.pad_temperature},
+            {"junction_allowed_K", optional_json(part.junction_allowed)},
+            {"headroom_K", optional_json(part.headroom())}};
+}
+
+Json view_json(const sink::StillAirView<double>& v) {
+    return {{"air", "still"},
+            {"channel_wall_rise_K", v.wall_rise},
+            {"film_temperature_K", v.film_temperature},
+            {"elenbaas_number", v.elenbaas},
+            {"channel_film_W_m2K", v.channel_film},
+            {"channel_radiation_W_m2K", v.channel_radiation},
+            {"outer_film_W_m2K", v.outer_film},
+            {"outer_radiation_W_m2K", v.outer_radiation},
+            {"inner_fin_efficiency", v.inner_efficiency},
+            {"outer_fin_efficiency", v.outer_efficiency}};
+}
+
+Json view_json(const sink::DuctedAirView<double>& v) {
+    return {{"air", "ducted"},
+            {"film_temperature_K", v.film_temperature},
+            {"approach_velocity_m_s", v.approach_velocity},
+            {"channel_velocity_m_s", v.channel_velocity},
+            {"volume_flow_m3_s", v.volume_flow},
+            {"hydraulic_diameter_m", v.hydraulic_diameter},
+            {"reynolds", v.reynolds},
+            {"film_W_m2K", v.film},
+            {"inner_fin_efficiency", v.inner_efficiency},
+            {"outer_fin_efficiency", v.outer_efficiency},
+            {"capacity_flow_W_K", v.capacity_flow},
+            {"transfer_units", v.transfer_units}};
+}
+
+Json laws_json(const std::vector<sink::LawUse>& laws) {
+    Json list = Json::array();
+    for (const auto& use : laws)
+        list.push_back({{"law", use.passport},
+                        {"role", use.role},
+                        {"inputs", use.inputs},
+                        {"outside_range", use.ranges_left()}});
+    return list;
+}
+
+Json rating_json(const sink::Rating& r) {
+    Json parts = Json::array();
+    for (const auto& part : r.parts) parts.push_back(part_json(part));
+    return {{"power_W", r.power},
+            {"air_temperature_K", r.air_temperature},
+            {"mass_kg", r.mass},
+            {"base_rise_K", r.base_rise},
+            {"hottest_pad_rise_K", r.hottest_pad_rise},
+            {"sink_resistance_K_W", r.sink_resistance()},
+            {"base_resistance_K_W", r.base_resistance()},
+            {"pressure_drop_Pa", r.pressure_drop},
+            {"outlet_temperature_K", r.outlet_temperature()},
+            {"heat_W",
+             {{"channels", r.heat.channels},
+              {"outer_faces", r.heat.outer_faces},
+              {"tips_edges", r.heat.tips_edges},
+              {"rim", r.heat.rim},
+              {"radiation", r.heat.radiation}}},
+            {"parts", parts},
+            {"films", std::visit([](const auto& v) { return view_json(v); }, r.view)},
+            {"laws", laws_json(r.laws)}};
+}
+
+Json job_json(const job::Job& job) {
+    return {{"title", job.title},
+            {"file", job.file},
+            {"air_temperature_K", job.air.temperature},
+            {"altitude_m", job.air.altitude},
+            {"pressure_Pa", sink::duty_of(job).surroundings.pressure},
+            {"power_W", job.total_power()},
+            {"margin_K", job.limits.margin},
+            {"process", job.sink.process.name},
+            {"alloy", job.sink.alloy.name},
+            {"conductivity_W_mK", job.sink.alloy.conductivity},
+            {"density_kg_m3", job.sink.alloy.density},
+            {"finish", job.sink.finish.name},
+            {"emissivity", job.sink.finish.emissivity},
+            {"aim", aim_name(job.sink.aim)}};
+}
+
+Json binding_json(const std::vector<sizing::BindingLimit>& binding, const char* worth_key) {
+    Json list = Json::array();
+    for (const auto& b : binding)
+        list.push_back({{"name", b.name},
+                        {"reason", b.reason},
+                        {"sense", b.sense == sizing::Sense::at_most ? "at most" : "at least"},
+                        {"bound_SI", b.bound},
+                        {worth_key, b.worth}});
+    return list;
+}
+
+Json design_json(const sizing::Design& d) {
+    return {{"rounded", geometry_json(d.rounded)},
+            {"rounded_aim_SI", d.rounded_aim},
+            {"before_rounding", geometry_json(d.optimum)},
+            {"before_rounding_aim_SI", d.optimum_aim}};
+}
+
+std::string finished(const Json& json) {
+    return json.dump(indent) + "\n";
+}
+
+} // namespace
+
+std::string results_json(const job::Job& job, const sizing::Answer& answer) {
+    Json alternatives = Json::array();
+    for (const auto& d : answer.alternatives) alternatives.push_back(design_json(d));
+    return finished({{"result", "sized"},
+                     {"job", job_json(job)},
+                     {"geometry", geometry_json(answer.rating.geometry)},
+                     {"rating", rating_json(answer.rating)},
+                     {"design", design_json(answer.design)},
+                     {"binding_limits",
+                      binding_json(answer.binding, "aim_saved_SI_per_SI_unit_eased")},
+                     {"alternatives", alternatives},
+                     {"fin_counts_tried", answer.fin_counts_tried},
+                     {"cautions", cautions(job, answer.rating)}});
+}
+
+std::string results_json(const job::Job& job, const sink::Rating& rating) {
+    return finished({{"result", "rated"},
+                     {"job", job_json(job)},
+                     {"geometry", geometry_json(rating.geometry)},
+                     {"rating", rating_json(rating)},
+                     {"cautions", cautions(job, rating)}});
+}
+
+std::string results_json(const job::Job& job, const sizing::Refusal& refusal) {
+    Json json{{"result", "impossible"},
+              {"job", job_json(job)},
+              {"reason", refusal.reason},
+              {"part", refusal.part},
+              {"shortfall_K", refusal.shortfall},
+              {"possible_power_W", refusal.possible_power},
+              {"binding_limits", binding_json(refusal.binding, "kelvin_gained_per_SI_unit_eased")}};
+    if (refusal.closest) {
+        json["closest_geometry"] = geometry_json(refusal.closest->geometry);
+        json["closest_rating"] = rating_json(*refusal.closest);
+    }
+    return finished(json);
+}
+
+} // namespace finwright::sheets

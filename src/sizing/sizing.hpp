@@ -1,0 +1,67 @@
+#pragma once
+// From a job to the sink that serves it best, or to the reason why none can.
+
+#include "src/job/job.hpp"
+#include "src/sink/rating.hpp"
+#include "src/sizing/design_space.hpp"
+#include <optional>
+#include <string>
+#include <variant>
+#include <vector>
+
+namespace finwright::sizing {
+
+enum class Sense { at_most, at_least };
+enum class Measure { length, ratio, mass, pressure, rise };
+
+/// A limit the design rests on, and what easing it would buy.
+struct BindingLimit {
+    std::string name;
+    std::string reason;
+    Sense sense = Sense::at_most;
+    Measure measure = Measure::length;
+    double bound = 0.0; ///< SI
+    /// What the aim falls by (SI: kg, m3, m, m2, K/W, Pa; kelvin in a refusal) per SI unit by which the
+    /// limit is eased; first order, at the unrounded optimum of this fin count.
+    double worth = 0.0;
+};
+
+/// One fin count, optimised and rounded.
+struct Design {
+    sink::Geometry<double> optimum; ///< before rounding
+    double optimum_aim = 0.0;       ///< SI
+    sink::Geometry<double> rounded;
+    double rounded_aim = 0.0;
+};
+
+struct Answer {
+    Design design;
+    sink::Rating rating; ///< of the rounded design
+    std::vector<BindingLimit> binding;
+    std::vector<Design> alternatives; ///< other fin counts, best first, at most five
+    int fin_counts_tried = 0;
+    int evaluations = 0;
+};
+
+/// Why no design exists, and what is left to try.
+struct Refusal {
+    std::string reason;
+    std::optional<sink::Rating> closest; ///< of the design that comes nearest
+    double shortfall = 0.0;              ///< the hottest part is that much too hot [K]
+    std::string part;                    ///< the part that falls short
+    double possible_power = 0.0;         ///< total power the closest design could serve [W]
+    std::vector<BindingLimit> binding;   ///< worth in kelvin of shortfall per SI unit
+};
+
+using Sizing = std::variant<Answer, Refusal>;
+
+struct SearchOptions {
+    int threads = 1;
+};
+
+Sizing size(const job::Job& job, const SearchOptions& options = {});
+
+/// The value of a job's aim for a rated sink, SI.
+double aim_value(job::Aim aim, const sink::Rating& rating);
+
+} // namespace finwright::sizing

@@ -1,0 +1,62 @@
+#pragma once
+// Random sinks and duties of the kind the program is for, the same on every run.
+
+#include "src/sink/duty.hpp"
+#include "src/sink/geometry.hpp"
+#include <cmath>
+#include <random>
+
+namespace finwright::tests {
+
+class RandomSinks {
+public:
+    explicit RandomSinks(unsigned seed) : engine_(seed) {}
+
+    double between(double low, double high) {
+        return std::uniform_real_distribution<double>(low, high)(engine_);
+    }
+    double log_between(double low, double high) {
+        return std::exp(between(std::log(low), std::log(high)));
+    }
+    int whole(int low, int high) { return std::uniform_int_distribution<int>(low, high)(engine_); }
+
+    sink::Geometry<double> geometry() {
+        sink::Geometry<double> g;
+        g.fins = whole(2, 30);
+        g.height = log_between(8e-3, 80e-3);
+        g.thickness = log_between(0.8e-3, 4e-3);
+        g.gap = log_between(2e-3, 15e-3);
+        g.base = log_between(2e-3, 12e-3);
+        g.length = log_between(40e-3, 300e-3);
+        g.draft_tangent = whole(0, 1) * between(0.0, 0.3) * g.thickness / (2.0 * g.height);
+        return g;
+    }
+
+    sink::Duty duty(const sink::Geometry<double>& g) {
+        sink::Duty duty;
+        duty.surroundings.air_temperature = between(263.0, 333.0);
+        duty.surroundings.pressure = between(60e3, 102e3);
+        duty.material = {between(90.0, 220.0), 2700.0, between(0.05, 0.95)};
+        const int parts = whole(1, 3);
+        for (int i = 0; i < parts; ++i) {
+            job::Part part;
+            part.name = "part " + std::to_string(i + 1);
+            part.power = log_between(3.0, 60.0);
+            part.pad_across = between(0.1, 0.9) * g.width() / parts;
+            part.pad_along = between(0.05, 0.8) * g.length;
+            duty.parts.push_back(part);
+        }
+        return duty;
+    }
+
+    sink::Duty ducted(const sink::Geometry<double>& g) {
+        sink::Duty d = duty(g);
+        d.surroundings.air = sink::DuctVelocity{log_between(0.5, 12.0)};
+        return d;
+    }
+
+private:
+    std::mt19937 engine_;
+};
+
+} // namespace finwright::tests
