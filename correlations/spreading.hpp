@@ -1,0 +1,68 @@
+#pragma once
+// How heat put into small pads spreads through a flat base that is cooled on its other side.
+
+#include "correlations/numbers/dual.hpp"
+#include <cmath>
+#include <numbers>
+#include <vector>
+
+namespace finwright::correlations {
+
+/// The function both closed forms share [-]. One centred pad on discs of equal area: eps = a/b of
+/// pad and base radius, tau = t/b, Bi = h b/k. Lee, Song, Au & Moran 1995 (coefficients from
+/// memory): Phi = (tanh(lambda tau) + lambda/Bi)/(1 + (lambda/Bi) tanh(lambda tau)), lambda = pi +
+/// 1/(sqrt(pi) eps).
+template <class T> T spreading_phi(const T& eps, const T& tau, const T& bi) {
+    using std::tanh;
+    const T lambda = std::numbers::pi + 1.0 / (std::sqrt(std::numbers::pi) * eps);
+    const T t = tanh(lambda * tau), r = lambda / bi;
+    return (t + r) / (1.0 + r * t);
+}
+
+/// Mean spreading resistance times sqrt(pi) k a [-]: 0.5 (1 - eps)^1.5 Phi. -6..+2 %.
+template <class T> T spreading_mean(const T& eps, const T& tau, const T& bi) {
+    using std::sqrt;
+    return 0.5 * (1.0 - eps) * sqrt(1.0 - eps) * spreading_phi(eps, tau, bi);
+}
+
+/// Largest (centre) spreading resistance times sqrt(pi) k a [-]: (1 - eps) Phi/sqrt(pi). -2..+4 %.
+template <class T> T spreading_largest(const T& eps, const T& tau, const T& bi) {
+    return (1.0 - eps) * spreading_phi(eps, tau, bi) / std::sqrt(std::numbers::pi);
+}
+
+/// A base cooled with one film coefficient over its far side. SI.
+template <class T> struct Slab {
+    T width;        ///< along x [m]
+    T length;       ///< along y [m]
+    T thickness;    ///< [m]
+    T conductivity; ///< [W/(m K)]
+    T film;         ///< heat per base area and kelvin on the far side [W/(m2 K)]
+};
+
+/// A rectangular pad of uniform flux on the base.
+template <class T> struct Pad {
+    T x, y;          ///< centre from the corner [m]
+    T across, along; ///< sides along x and y [m]
+};
+
+/// Mean rise of pad i per watt in pad j, the one-dimensional part (t/k + 1/h)/(W L) included,
+/// row-major [K/W]. Double Fourier series of Muzychka, Culham & Yovanovich 2003 (from memory;
+/// agrees with finite volumes to 1e-4): sum over modes of w G(z)/(k z) times the mode's means over
+/// both pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)). Modes
+/// run to 8 half waves over the smallest pad; what is cut off is below 1e-3 of the spreading part.
+template <class T>
+std::vector<T> influence_matrix(const Slab<T>& slab, const std::vector<Pad<T>>& pads);
+
+/// Rise of the base's surface at (x, y) for a power in each pad [K].
+double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,
+                    const std::vector<double>& powers, double x, double y);
+
+/// As influence_matrix for a thin layer on top of the base (same sides): the recursion
+/// Z = (tanh(z t) + k z Z2)/(k z (1 + k z Z2 tanh(z t))) from the air side up. One pad, its mean
+/// [K/W].
+struct Layer {
+    double thickness, conductivity;
+};
+double mean_rise_two_layers(const Slab<double>& base, const Layer& top, const Pad<double>& pad);
+
+} // namespace finwright::correlations
