@@ -1,0 +1,134 @@
+#include "optimizer/enumerate.hpp"
+
+#include <algorithm>
+#include <atomic>
+#include <exception>
+#include <limits>
+#include <mutex>
+#include <thread>
+
+namespace finwright::optimizer {
+
+namespace {
+
+constexpr double nearly_feasible = 0.05; // a violation the first model may be to blame for
+
+std::vector<std::vector<int>> combinations(std::span<const IntegerRange> ranges) {
+    std::vector<std::vector<int>> all{{}};
+    for (const IntegerRange& range : ranges) {
+        std::vector<std::vector<int>> longer;
+        for (const auto& head : all)
+            for (int value = range.from; value <= range.to; ++value) {
+                longer.push_back(head);
+                longer.back().push_back(value);
+            }
+        all = std::move(longer);
+    }
+    return all;
+}
+
+/// Runs work(i) for i < count on `threads` threads; the first exception comes back to the caller.
+template <class Work> void in_parallel(std::size_t count, int threads, Work&& work) {
+    std::atomic<std::size_t> next{0};
+    std::exception_ptr failure;
+    std::mutex failing;
+    const auto loop = [&] {
+        for (std::size_t i = next++; i < count; i = next++) {
+            try {
+                work(i);
+            } catch (...) {
+                const std::scoped_lock lock(failing);
+                if (!failure) failure = std::current_exception();
+                next = count;
+            }
+        }
+    };
+    {
+        std::vector<std::jthread> pool;
+        for (int t = 1; t < threads; ++t)
+            pool.emplace_back(loop);
+        loop();
+    }
+    if (failure) std::rethrow_exception(failure);
+}
+
+/// Starts a problem where an earlier solve of it ended.
+class Resumed final : public Problem {
+public:
+    Resumed(Problem& inner, std::vector<double> start) : inner_(inner), start_(std::move(start)) {}
+    const std::vector<Variable>& variables() const override { return inner_.variables(); }
+    std::size_t constraint_count() const override { return inner_.constraint_count(); }
+    void evaluate(std::span<const double> x, Evaluation& out) override { inner_.evaluate(x, out); }
+    void judge(std::span<const double> x, double& f, std::span<double> c) override {
+        inner_.judge(x, f, c);
+    }
+    bool recentre(std::span<const double> x) override { return inner_.recentre(x); }
+    std::vector<std::vector<double>> starts() const override { return {start_}; }
+
+private:
+    Problem& inner_;
+    std::vector<double> start_;
+};
+
+double best_objective(const std::vector<Candidate>& candidates) {
+    double best = std::numeric_limits<double>::infinity();
+    for (const Candidate& c : candidates)
+        if (c.outcome.keeps_limits()) best = std::min(best, c.outcome.objective);
+    return best;
+}
+
+std::vector<std::size_t> contenders(const std::vector<Candidate>& candidates, const Settings& s) {
+    const double limit = best_objective(candidates) + s.contender_margin;
+    std::vector<std::size_t> list;
+    for (std::size_t i = 0; i < candidates.size(); ++i) {
+        const Outcome& o = candidates[i].outcome;
+        const bool close = o.keeps_limits() || o.worst_violation < nearly_feasible;
+        if (!candidates[i].refined && close && o.objective <= limit) list.push_back(i);
+    }
+    return list;
+}
+
+} // namespace
+
+MixedOutcome enumerate(std::span<const IntegerRange> ranges, const Factory& factory,
+                       const Settings& settings, int threads) {
+    MixedOutcome mixed;
+    std::vector<std::unique_ptr<Problem>> problems;
+    for (auto& integers : combinations(ranges))
+        if (auto problem = factory(integers)) {
+            problems.push_back(std::move(problem));
+            mixed.candidates.push_back({std::move(integers), {}, false});
+        }
+
+    Settings once = settings;
+    once.recentres = 0;
+    in_parallel(problems.size(), threads,
+                [&](std::size_t i) { mixed.candidates[i].outcome = minimise(*problems[i], once); });
+
+    for (auto list = contenders(mixed.candidates, settings); !list.empty();
+         list = contenders(mixed.candidates, settings))
+        in_parallel(list.size(), threads, [&](std::size_t k) {
+            Candidate& c = mixed.candidates[list[k]];
+            Resumed resumed(*problems[list[k]], c.outcome.x);
+            const int before = c.outcome.evaluations;
+            c.outcome = minimise(resumed, settings);
+            c.outcome.evaluations += before;
+            c.refined = true;
+        });
+
+    for (std::size_t i = 0; i < mixed.candidates.size(); ++i) {
+        const Outcome& o = mixed.candidates[i].outcome;
+        if (!o.keeps_limits()) continue;
+        if (!mixed.best || o.objective < mixed.candidates[*mixed.best].outcome.objective)
+            mixed.best = i;
+    }
+    if (mixed.best)
+        mixed.verdict = mixed.candidates[*mixed.best].outcome.verdict;
+    else if (std::any_of(mixed.candidates.begin(), mixed.candidates.end(), [](const Candidate& c) {
+                 return c.outcome.verdict == Verdict::limit_reached;
+             }))
+        mixed.verdict = Verdict::limit_reached;
+    return mixed;
+}
+
+} // namespace finwright::optimizer
