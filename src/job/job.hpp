@@ -38,7 +38,6 @@ struct Part {
     double junction_to_case = 0.0;                ///< [K/W]
     std::optional<double> rated_power;            ///< the 25 degC rating R_jc was taken from, if it was [W]
     double interface = 0.0;                       ///< case to base, over the pad [K/W]
-    std::string interface_statement;              ///< the interface as the user wrote it
     double pad_across = 0.0;                      ///< pad side along the width [m]
     double pad_along = 0.0;                       ///< pad side along the length [m]
     std::optional<Coordinate> across;             ///< pad centre from the left edge; empty: placed by the program
@@ -125,7 +124,8 @@ struct Sink {
 
 struct Job {
     std::string title;
-    std::string file;
+    std::string file; ///< as named by the caller
+    std::string text; ///< the whole job file, for errors found later
     Air air;
     std::vector<Part> parts;
     Limits limits;

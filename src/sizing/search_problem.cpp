@@ -228,8 +228,8 @@ bool SearchProblem::recentre(std::span<const double> x) {
     SpreadingModel moved;
     moved.centre(g, duty_);
     const double base_rise = sink::balance(g, duty_).base_rise;
-    bool material = false;
-    for (std::size_t i = 0; i < duty_.parts.size(); ++i)
+    bool material = spreading_.pads() == 0; // never centred before
+    for (std::size_t i = 0; i < spreading_.pads(); ++i)
         material = material || std::abs(moved.rise(i, g) - spreading_.rise(i, g)) >
                                    stands_still * (base_rise + moved.rise(i, g));
     spreading_ = std::move(moved);

@@ -13,7 +13,7 @@ namespace {
 
 double stated(const Job& job, const Range& range, const char* key) {
     if (range.fixed()) return *range.from;
-    throw job::InputError(job.file, range.place,
+    throw job::InputError(job.file, job.text, range.place,
                           fmt::format("a rating needs every dimension, and {} is still open", key),
                           fmt::format("fix it under sink, for example {}: {}", key,
                                       std::string_view(key) == "fins" ? "12" : "40 mm"));

@@ -1,0 +1,349 @@
+#include "src/job/read_job.hpp"
+
+#include "src/job/catalogue.hpp"
+#include "src/job/check_job.hpp"
+#include "src/job/document.hpp"
+#include "src/job/nearest_word.hpp"
+#include <charconv>
+#include <cmath>
+#include <fmt/format.h>
+
+namespace finwright::job {
+
+namespace {
+
+constexpr double rating_case = 298.15; // case temperature data sheets rate power at [K]
+constexpr int most_parts = 64;
+
+int whole_number(const Document& d, const TreeNode& node, const std::string& what) {
+    int value = 0;
+    const auto* begin = node.text.data();
+    const auto* end = begin + node.text.size();
+    const auto [stop, error] = std::from_chars(begin, end, value);
+    if (node.kind != TreeNode::Kind::scalar || error != std::errc{} || stop != end)
+        d.fail(node.place, fmt::format("{} must be a whole number", what), fmt::format("write for example {}: 12", what));
+    return value;
+}
+
+double positive(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind) {
+    const double value = m.number(key, kind);
+    if (value <= 0.0)
+        d.fail(m.place_of(key), fmt::format("{} must be above zero", key), fmt::format("write for example {}: {}", key, kind.example));
+    return value;
+}
+
+std::optional<double> optional_positive(const Document& d, Mapping& m, std::string_view key,
+                                        const QuantityKind& kind) {
+    return m.has(key) ? std::optional(positive(d, m, key, kind)) : std::nullopt;
+}
+
+double not_negative(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind) {
+    const double value = m.number(key, kind);
+    if (value < 0.0)
+        d.fail(m.place_of(key), fmt::format("{} is negative", key), fmt::format("write for example {}: {}", key, kind.example));
+    return value;
+}
+
+// ---- air -----------------------------------------------------------------------------------------
+
+Air read_air(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "air");
+    m.only({"state", "temperature", "altitude", "velocity", "flow"});
+    Air air;
+    air.temperature = m.number("temperature", quantity::temperature);
+    if (air.temperature < 223.15 || air.temperature > 473.15)
+        m.fail("temperature", "the air temperature lies outside -50 to 200 degC", "check the unit: degC, degF or K");
+    air.altitude = m.optional_number("altitude", quantity::length).value_or(0.0);
+    if (air.altitude < -450.0 || air.altitude > 11000.0)
+        m.fail("altitude", "the altitude lies outside -450 to 11 000 m", "check the unit: m or ft");
+    const std::string state = m.text("state");
+    const bool velocity = m.has("velocity"), flow = m.has("flow");
+    if (state == "still") {
+        if (velocity || flow)
+            m.fail(velocity ? "velocity" : "flow",
+                   fmt::format("still air cannot have a {}; 'state: still' stands in line {}",
+                               velocity ? "velocity" : "flow", m.place_of("state").line),
+                   "write state: ducted, or leave this line out");
+        air.state = StillAir{};
+        return air;
+    }
+    if (state != "ducted")
+        m.fail("state", fmt::format("air state '{}' is not known", state), "write still or ducted");
+    if (velocity == flow)
+        m.fail(velocity ? "flow" : "state",
+               velocity ? "ducted air has a velocity and a flow; one follows from the other"
+                        : "ducted air needs its velocity or its flow",
+               velocity ? "keep one of them" : "add velocity: 3 m/s or flow: 40 m3/h");
+    DuctedAir duct;
+    duct.velocity = optional_positive(d, m, "velocity", quantity::velocity);
+    duct.flow = optional_positive(d, m, "flow", quantity::volume_flow);
+    if (duct.velocity && *duct.velocity > 60.0)
+        m.fail("velocity", fmt::format("{:.0f} m/s is beyond any fan", *duct.velocity), "is it ft/min (196.85 of them are 1 m/s)?");
+    air.state = duct;
+    return air;
+}
+
+// ---- parts ---------------------------------------------------------------------------------------
+
+double read_interface(const Document& d, const TreeNode& node, double pad_area) {
+    Mapping m(d, node, "interface");
+    m.only({"resistance", "area_resistance", "thickness", "conductivity", "contacts"});
+    const int forms = int(m.has("resistance")) + int(m.has("area_resistance")) +
+                      int(m.has("thickness") || m.has("conductivity"));
+    if (forms != 1)
+        d.fail(m.place(), "an interface is stated in exactly one form",
+               "give resistance (K/W), or area_resistance (K cm2/W), or thickness with conductivity");
+    if (m.has("contacts") && !m.has("thickness"))
+        m.fail("contacts", "contacts go with thickness and conductivity", "leave the line out");
+    if (m.has("resistance")) return not_negative(d, m, "resistance", quantity::resistance);
+    if (m.has("area_resistance"))
+        return not_negative(d, m, "area_resistance", quantity::area_resistance) / pad_area;
+    const double layer = not_negative(d, m, "thickness", quantity::length) /
+                         positive(d, m, "conductivity", quantity::conductivity);
+    const double contacts = m.has("contacts") ? not_negative(d, m, "contacts", quantity::area_resistance) : 0.0;
+    return (layer + contacts) / pad_area;
+}
+
+Coordinate read_coordinate(const Document& d, Mapping& m, std::string_view key) {
+    const TreeNode& node = m.required(key);
+    const bool share = node.kind == TreeNode::Kind::scalar && is_share(node.text);
+    const double value = share ? m.number(key, quantity::pure) : m.number(key, quantity::length);
+    if (value <= 0.0 || (share && value >= 1.0))
+        d.fail(node.place, fmt::format("{} puts the pad's centre on or over the edge of the base", key),
+               "measure from the left edge and from the air's inlet end, or write a share such as 50 %");
+    return {value, share};
+}
+
+void read_junction(const Document& d, Mapping& m, Part& part) {
+    part.junction_limit = m.optional_number("junction_limit", quantity::temperature);
+    const bool direct = m.has("junction_to_case"), rated = m.has("rated_power");
+    if (direct && rated)
+        m.fail("rated_power", "junction_to_case and rated_power say the same thing twice", "keep one of them");
+    if (part.junction_limit && !direct && !rated)
+        d.fail(m.place(), fmt::format("'{}' has a junction limit but nothing between junction and case", part.name),
+               "add junction_to_case: 0.8 K/W, or rated_power: 150 W (the data sheet's rating at 25 degC case)");
+    if (direct) part.junction_to_case = not_negative(d, m, "junction_to_case", quantity::resistance);
+    if (!rated) return;
+    if (!part.junction_limit)
+        m.fail("rated_power", "a 25 degC rating needs the junction limit it goes with", "add junction_limit: 150 degC");
+    part.rated_power = positive(d, m, "rated_power", quantity::power);
+    part.junction_to_case = (*part.junction_limit - rating_case) / *part.rated_power;
+}
+
+Part read_part(const Document& d, const TreeNode& node, int& count) {
+    Mapping m(d, node, "a part");
+    m.only({"name", "power", "junction_limit", "junction_to_case", "rated_power", "interface", "pad", "place", "count"});
+    Part part;
+    part.place = m.place();
+    part.name = m.text("name");
+    part.power = positive(d, m, "power", quantity::power);
+    Mapping pad(d, m.required("pad"), "pad");
+    pad.only({"across", "along"});
+    part.pad_across = positive(d, pad, "across", quantity::length);
+    part.pad_along = positive(d, pad, "along", quantity::length);
+    read_junction(d, m, part);
+    if (const TreeNode* interface = m.optional("interface"))
+        part.interface = read_interface(d, *interface, part.pad_across * part.pad_along);
+    if (const TreeNode* place = m.optional("place")) {
+        Mapping p(d, *place, "place");
+        p.only({"across", "along"});
+        part.across = read_coordinate(d, p, "across");
+        part.along = read_coordinate(d, p, "along");
+    }
+    count = 1;
+    if (const TreeNode* n = m.optional("count")) {
+        count = whole_number(d, *n, "count");
+        if (count < 1 || count > most_parts) m.fail("count", fmt::format("count must be 1 to {}", most_parts), "");
+        if (count > 1 && m.has("place"))
+            m.fail("place", "several equal parts cannot stand in one place", "list them one by one, or leave place out");
+    }
+    return part;
+}
+
+std::vector<Part> read_parts(const Document& d, const TreeNode& node) {
+    if (node.kind != TreeNode::Kind::sequence || node.items.empty())
+        d.fail(node.place, "parts must be a list of at least one part", "write '- name: ...' lines below it");
+    std::vector<Part> parts;
+    for (const TreeNode& item : node.items) {
+        int count = 1;
+        const Part part = read_part(d, item, count);
+        for (const Part& other : parts)
+            if (other.name == part.name)
+                d.fail(part.place, fmt::format("there are two parts named '{}'", part.name), "give each its own name");
+        for (int i = 1; i <= count; ++i) {
+            parts.push_back(part);
+            if (count > 1) parts.back().name = fmt::format("{} {}", part.name, i);
+        }
+        if (parts.size() > most_parts) d.fail(part.place, fmt::format("more than {} parts", most_parts), "");
+    }
+    return parts;
+}
+
+// ---- limits --------------------------------------------------------------------------------------
+
+Limits read_limits(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "limits");
+    m.only({"margin", "sink_resistance", "mass", "pressure_drop", "space"});
+    Limits limits;
+    if (m.has("margin")) limits.margin = not_negative(d, m, "margin", quantity::difference);
+    limits.sink_resistance = optional_positive(d, m, "sink_resistance", quantity::resistance);
+    limits.mass = optional_positive(d, m, "mass", quantity::mass);
+    limits.pressure_drop = optional_positive(d, m, "pressure_drop", quantity::pressure);
+    if (const TreeNode* node_space = m.optional("space")) {
+        Mapping space(d, *node_space, "space");
+        space.only({"width", "height", "length"});
+        limits.space.width = optional_positive(d, space, "width", quantity::length);
+        limits.space.height = optional_positive(d, space, "height", quantity::length);
+        limits.space.length = optional_positive(d, space, "length", quantity::length);
+        for (const char* key : {"width", "height", "length"})
+            if (space.has(key) && space.number(key, quantity::length) > 2.0)
+                space.fail(key, "a space of more than 2 m is not for a plate-fin sink", "check the unit: mm, in or m");
+    }
+    return limits;
+}
+
+// ---- sink ----------------------------------------------------------------------------------------
+
+template <class Entry>
+Entry from_catalogue(const Document& d, Mapping& m, const char* key, const std::vector<Entry>& list) {
+    const std::string name = m.text(key);
+    std::vector<std::string> names;
+    std::string all;
+    for (const Entry& entry : list) {
+        if (entry.name == name) return entry;
+        names.push_back(entry.name);
+        all += (all.empty() ? "" : ", ") + entry.name;
+    }
+    const std::string meant = nearest_word(name, names);
+    d.fail(m.place_of(key), fmt::format("there is no {} '{}' in the catalogue", key, name),
+           meant.empty() ? "known: " + all : fmt::format("did you mean {}? Known: {}", meant, all));
+}
+
+Range read_range(const Document& d, Mapping& m, std::string_view key,
+                 const std::function<double(const TreeNode&, const std::string&)>& value) {
+    Range range;
+    range.place = m.place();
+    const TreeNode* node = m.optional(key);
+    if (!node) return range;
+    range.place = node->place;
+    if (node->kind == TreeNode::Kind::scalar) {
+        range.from = range.to = value(*node, std::string(key));
+    } else {
+        Mapping ends(d, *node, std::string(key));
+        ends.only({"from", "to"});
+        if (const TreeNode* from = ends.optional("from")) range.from = value(*from, "from");
+        if (const TreeNode* to = ends.optional("to")) range.to = value(*to, "to");
+        if (!range.from && !range.to)
+            d.fail(node->place, fmt::format("{} states neither from nor to", key), "leave the key out to free it");
+    }
+    if ((range.from && *range.from <= 0.0) || (range.to && *range.to <= 0.0))
+        d.fail(range.place, fmt::format("{} must be above zero", key), "");
+    if (range.from && range.to && *range.from > *range.to)
+        d.fail(range.place, fmt::format("{} runs from more to less", key), "swap from and to");
+    return range;
+}
+
+Range length_range(const Document& d, Mapping& m, std::string_view key) {
+    return read_range(d, m, key, [&](const TreeNode& node, const std::string& what) {
+        return quantity_of(d, node, what, quantity::length);
+    });
+}
+
+Aim read_aim(Mapping& m) {
+    static const std::vector<std::pair<std::string, Aim>> aims{
+        {"mass", Aim::mass},           {"volume", Aim::volume},         {"height", Aim::height},
+        {"footprint", Aim::footprint}, {"resistance", Aim::resistance}, {"pressure_drop", Aim::pressure_drop}};
+    const std::string text = m.optional_text("aim").value_or("mass");
+    for (const auto& [name, aim] : aims)
+        if (name == text) return aim;
+    m.fail("aim", fmt::format("there is no aim '{}'", text),
+           "write mass, volume, height, footprint, resistance or pressure_drop");
+}
+
+Sink read_sink(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "sink");
+    m.only({"process", "alloy", "finish", "emissivity", "aim", "fins", "fin_height", "fin_thickness",
+            "fin_draft", "gap", "base_thickness", "width", "length"});
+    Sink sink;
+    sink.process = from_catalogue(d, m, "process", processes());
+    sink.alloy = from_catalogue(d, m, "alloy", alloys());
+    sink.finish = from_catalogue(d, m, "finish", finishes());
+    if (const auto stated = m.optional_number("emissivity", quantity::pure)) {
+        if (*stated <= 0.0 || *stated > 1.0)
+            m.fail("emissivity", "an emissivity lies above 0 and up to 1", "bare aluminium 0.05 to 0.1, anodised 0.8 to 0.9");
+        sink.finish.emissivity = *stated;
+        sink.finish.source = "job";
+    }
+    sink.aim = read_aim(m);
+    sink.fins = read_range(d, m, "fins", [&](const TreeNode& n, const std::string& what) {
+        return double(whole_number(d, n, what));
+    });
+    if ((sink.fins.from && *sink.fins.from < 2.0) || (sink.fins.to && *sink.fins.to < 2.0))
+        d.fail(sink.fins.place, "a plate-fin sink has at least two fins", "");
+    sink.fin_height = length_range(d, m, "fin_height");
+    sink.fin_thickness = length_range(d, m, "fin_thickness");
+    sink.gap = length_range(d, m, "gap");
+    sink.base_thickness = length_range(d, m, "base_thickness");
+    sink.width = length_range(d, m, "width");
+    sink.length = length_range(d, m, "length");
+    if (const auto draft = m.optional_number("fin_draft", quantity::angle)) {
+        if (*draft < 0.0 || *draft > 0.0873)
+            m.fail("fin_draft", "the draft of a fin face lies between 0 and 5 deg", "write for example fin_draft: 0.5 deg");
+        sink.fin_draft = *draft;
+    }
+    return sink;
+}
+
+void read_shop(const Document& d, const TreeNode& node, Sink& sink) {
+    Mapping m(d, node, "shop");
+    m.only({"smallest_thickness", "smallest_gap", "largest_height_to_gap", "largest_height_to_thickness",
+            "largest_height", "smallest_base", "smallest_base_to_thickness", "largest_circle", "steps"});
+    Process& p = sink.process;
+    const auto length = [&](const char* key) { return optional_positive(d, m, key, quantity::length); };
+    const auto pure = [&](const char* key) { return optional_positive(d, m, key, quantity::pure); };
+    if (const auto v = length("smallest_thickness")) p.smallest_thickness = *v;
+    if (const auto v = length("smallest_gap")) p.smallest_gap = *v;
+    if (const auto v = pure("largest_height_to_gap")) p.largest_height_to_gap = *v;
+    if (const auto v = pure("largest_height_to_thickness")) p.largest_height_to_thickness = *v;
+    if (const auto v = length("largest_height")) p.largest_height = *v;
+    if (const auto v = length("smallest_base")) p.smallest_base = *v;
+    if (const auto v = pure("smallest_base_to_thickness")) p.smallest_base_to_thickness = *v;
+    if (const auto v = length("largest_circle")) p.largest_circle = *v;
+    const TreeNode* steps_node = m.optional("steps");
+    if (!steps_node) return;
+    Mapping steps(d, *steps_node, "steps");
+    steps.only({"fin_height", "fin_thickness", "gap", "base_thickness", "length"});
+    const auto step = [&](const char* key, double& target) {
+        if (const auto v = optional_positive(d, steps, key, quantity::length)) target = *v;
+    };
+    step("fin_height", sink.steps.fin_height);
+    step("fin_thickness", sink.steps.fin_thickness);
+    step("gap", sink.steps.gap);
+    step("base_thickness", sink.steps.base_thickness);
+    step("length", sink.steps.length);
+}
+
+} // namespace
+
+Job read_job_text(std::string text, std::string file_name) {
+    const Document d = parse_document(std::move(file_name), std::move(text));
+    Mapping m(d, d.root, "the job file");
+    m.only({"job", "air", "parts", "limits", "sink", "shop"});
+    Job job;
+    job.file = d.file;
+    job.text = d.text;
+    job.title = m.text("job");
+    job.air = read_air(d, m.required("air"));
+    job.parts = read_parts(d, m.required("parts"));
+    job.limits = read_limits(d, m.required("limits"));
+    job.sink = read_sink(d, m.required("sink"));
+    if (const TreeNode* shop = m.optional("shop")) read_shop(d, *shop, job.sink);
+    check_job(job, d);
+    return job;
+}
+
+Job read_job(const std::filesystem::path& path) {
+    return read_job_text(read_text_file(path), path.string());
+}
+
+} // namespace finwright::job

@@ -1,0 +1,15 @@
+#pragma once
+// From a job file to a Job: read strictly, completed from the catalogues, checked for contradictions.
+
+#include "src/job/input_error.hpp"
+#include "src/job/job.hpp"
+#include <filesystem>
+#include <string>
+
+namespace finwright::job {
+
+/// Throws InputError.
+Job read_job(const std::filesystem::path& path);
+Job read_job_text(std::string text, std::string file_name);
+
+} // namespace finwright::job
