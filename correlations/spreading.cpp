@@ -1,15 +1,15 @@
 #include "correlations/spreading.hpp"
 
 #include <algorithm>
-#include <functional>
 
 namespace finwright::correlations {
 
 namespace {
 
 constexpr double pi = std::numbers::pi;
-constexpr double half_waves_over_pad = 8.0;
-constexpr int most_modes = 240;
+// Half waves over the smallest pad, across times along, up to which a mode counts.
+constexpr double half_waves_for_means = 8.0, half_waves_at_a_point = 200.0;
+constexpr int most_modes = 400;
 
 /// Mean over a pad of cos(m pi x/side) for m = 0..last, by the recurrences of cos and sin.
 template <class T>
@@ -34,119 +34,175 @@ std::vector<T> mode_means(const T& centre, const T& size, const T& side, int las
     return means;
 }
 
-/// G(z)/(k z): rise per flux of one mode [m2 K/W].
-template <class T> T mode_resistance(const T& z, const Slab<T>& slab) {
-    using std::tanh;
-    const T t = tanh(z * slab.thickness);
-    const T kz = slab.conductivity * z;
-    const T r = kz / slab.film;
+/// One mode's rise per flux and how it changes.
+struct ModeResistance {
+    double value; ///< G(z)/(k z) [m2 K/W]
+    double by_z, by_thickness, by_film;
+};
+
+ModeResistance mode_resistance(double z, double thickness, double k, double film) {
+    const double t = std::tanh(z * thickness);
+    const double kz = k * z, r = kz / film;
+    const double d = 1.0 + r * t;
+    const double sech2 = 1.0 - t * t;
+    const double scale = 1.0 / (d * d * kz);
+    const double value = (t + r) / (d * kz);
+    const double by_tanh = (1.0 - r * r) * scale, by_ratio = sech2 * scale;
+    return {value, by_tanh * thickness * sech2 + by_ratio * k / film - value / z,
+            by_tanh * z * sech2, -by_ratio * r / film};
+}
+
+double resistance_of(double z_squared, const Slab<double>& slab) {
+    const double z = std::sqrt(z_squared);
+    const double t = std::tanh(z * slab.thickness);
+    const double kz = slab.conductivity * z, r = kz / slab.film;
     return (t + r) / ((1.0 + r * t) * kz);
 }
 
-struct Modes {
-    int across, along;
+template <std::size_t N>
+Dual<N> resistance_of(const Dual<N>& z_squared, const Slab<Dual<N>>& slab) {
+    const double z = std::sqrt(z_squared.value);
+    const ModeResistance mode =
+        mode_resistance(z, slab.thickness.value, slab.conductivity, slab.film.value);
+    Dual<N> out(mode.value);
+    const double by_z_squared = 0.5 * mode.by_z / z;
+    for (std::size_t i = 0; i < N; ++i)
+        out.slope[i] = by_z_squared * z_squared.slope[i] +
+                       mode.by_thickness * slab.thickness.slope[i] +
+                       mode.by_film * slab.film.slope[i];
+    return out;
+}
+
+/// Which modes count. A mode's share falls with the square of the half waves it makes over the
+/// smallest pad, across and along: (m, n) is kept while max(1, m c/W) max(1, n d/L) <= half_waves.
+class Modes {
+public:
+    template <class T>
+    static Modes of(const Slab<T>& slab, const std::vector<Pad<T>>& pads, double half_waves) {
+        Modes modes;
+        modes.half_waves_ = half_waves;
+        for (const Pad<T>& pad : pads) {
+            modes.share_across_ =
+                std::min(modes.share_across_, value_of(pad.across) / value_of(slab.width));
+            modes.share_along_ =
+                std::min(modes.share_along_, value_of(pad.along) / value_of(slab.length));
+        }
+        return modes;
+    }
+
+    int last_across() const { return last(half_waves_, share_across_); }
+    int last_along(int m) const {
+        return last(half_waves_ / std::max(1.0, m * share_across_), share_along_);
+    }
+
+private:
+    static int last(double half_waves, double share) {
+        return std::clamp(int(std::ceil(half_waves / share)), 4, most_modes);
+    }
+    double share_across_ = 1.0, share_along_ = 1.0, half_waves_ = 0.0;
 };
 
-int modes_for(double pad, double side) {
-    return std::clamp(int(std::ceil(half_waves_over_pad * side / pad)), 4, most_modes);
-}
-
-template <class T> Modes modes_of(const Slab<T>& slab, const std::vector<Pad<T>>& pads) {
-    Modes modes{4, 4};
-    for (const Pad<T>& pad : pads) {
-        modes.across =
-            std::max(modes.across, modes_for(value_of(pad.across), value_of(slab.width)));
-        modes.along = std::max(modes.along, modes_for(value_of(pad.along), value_of(slab.length)));
-    }
-    return modes;
-}
-
-/// Calls visit(m, n, weight * resistance) for every mode, the uniform one first.
-template <class T, class Resistance, class Visit>
-void for_each_mode(const Slab<T>& slab, const Modes& modes, Resistance&& resistance,
-                   Visit&& visit) {
-    using std::sqrt;
+/// Calls visit(m, n, weight, z^2) for every mode but the uniform one.
+template <class T, class Visit>
+void for_each_mode(const Slab<T>& slab, const Modes& modes, Visit&& visit) {
     const T across = pi / slab.width, along = pi / slab.length;
-    for (int m = 0; m <= modes.across; ++m) {
-        const T across_squared = double(m) * double(m) * across * across;
-        for (int n = 0; n <= modes.along; ++n) {
-            const double weight = (m > 0 ? 2.0 : 1.0) * (n > 0 ? 2.0 : 1.0);
-            if (m + n == 0)
-                visit(m, n, T(slab.thickness / slab.conductivity + 1.0 / slab.film));
-            else
-                visit(m, n,
-                      T(weight * resistance(T(sqrt(across_squared +
-                                                   double(n) * double(n) * along * along)))));
-        }
+    const T across2 = across * across, along2 = along * along;
+    for (int m = 0; m <= modes.last_across(); ++m) {
+        const T from_m = double(m) * double(m) * across2;
+        for (int n = m == 0 ? 1 : 0; n <= modes.last_along(m); ++n)
+            visit(m, n, m > 0 && n > 0 ? 4.0 : 2.0, T(from_m + double(n) * double(n) * along2));
     }
+}
+
+template <class T> struct PadModes { std::vector<T> across, along; };
+
+template <class T>
+std::vector<PadModes<T>> pad_modes(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
+                                   const Modes& modes) {
+    std::vector<PadModes<T>> list;
+    for (const Pad<T>& pad : pads)
+        list.push_back({mode_means(pad.x, pad.across, slab.width, modes.last_across()),
+                        mode_means(pad.y, pad.along, slab.length, modes.last_along(0))});
+    return list;
+}
+
+template <class T> T uniform_resistance(const Slab<T>& slab) {
+    return slab.thickness / slab.conductivity + 1.0 / slab.film;
 }
 
 } // namespace
 
 template <class T>
-std::vector<T> influence_matrix(const Slab<T>& slab, const std::vector<Pad<T>>& pads) {
+std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
+                              const std::vector<double>& powers) {
     const std::size_t count = pads.size();
-    const Modes modes = modes_of(slab, pads);
-    std::vector<std::vector<T>> across, along;
-    for (const Pad<T>& pad : pads) {
-        across.push_back(mode_means(pad.x, pad.across, slab.width, modes.across));
-        along.push_back(mode_means(pad.y, pad.along, slab.length, modes.along));
-    }
-    std::vector<T> influence(count * count, T(0.0));
-    std::vector<T> mean(count, T(0.0));
-    for_each_mode(
-        slab, modes, [&](const T& z) { return mode_resistance(z, slab); },
-        [&](int m, int n, const T& resistance) {
-            for (std::size_t i = 0; i < count; ++i)
-                mean[i] = across[i][std::size_t(m)] * along[i][std::size_t(n)];
+    const Modes modes = Modes::of(slab, pads, half_waves_for_means);
+    const auto means = pad_modes(slab, pads, modes);
+    double total = 0.0;
+    for (double power : powers)
+        total += power;
+
+    std::vector<T> rises(count, total * uniform_resistance(slab));
+    std::vector<T> row(count, T(0.0)), loaded(count, T(0.0));
+    int row_of = -1;
+    const auto close_row = [&] {
+        for (std::size_t i = 0; i < count && row_of >= 0; ++i)
+            rises[i] += means[i].across[std::size_t(row_of)] * row[i];
+    };
+    for_each_mode(slab, modes, [&](int m, int n, double weight, const T& z_squared) {
+        if (m != row_of) {
+            close_row();
+            row_of = m;
             for (std::size_t i = 0; i < count; ++i) {
-                const T scaled = resistance * mean[i];
-                for (std::size_t j = 0; j <= i; ++j)
-                    influence[i * count + j] += scaled * mean[j];
+                row[i] = T(0.0);
+                loaded[i] = powers[i] * means[i].across[std::size_t(m)];
             }
-        });
+        }
+        T flux(0.0);
+        for (std::size_t i = 0; i < count; ++i)
+            flux += loaded[i] * means[i].along[std::size_t(n)];
+        const T rise = weight * resistance_of(z_squared, slab) * flux;
+        for (std::size_t i = 0; i < count; ++i)
+            row[i] += rise * means[i].along[std::size_t(n)];
+    });
+    close_row();
     const T area = slab.width * slab.length;
-    for (std::size_t i = 0; i < count; ++i)
-        for (std::size_t j = 0; j <= i; ++j)
-            influence[j * count + i] = influence[i * count + j] = influence[i * count + j] / area;
-    return influence;
+    for (T& rise : rises)
+        rise /= area;
+    return rises;
 }
 
-template std::vector<double> influence_matrix(const Slab<double>&, const std::vector<Pad<double>>&);
-template std::vector<Dual<5>> influence_matrix(const Slab<Dual<5>>&,
-                                               const std::vector<Pad<Dual<5>>>&);
+template std::vector<double> pad_mean_rises(const Slab<double>&, const std::vector<Pad<double>>&,
+                                            const std::vector<double>&);
+template std::vector<Dual<5>> pad_mean_rises(const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&,
+                                             const std::vector<double>&);
 
 double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,
                     const std::vector<double>& powers, double x, double y) {
-    const Modes modes{most_modes, most_modes};
+    const Modes modes = Modes::of(slab, pads, half_waves_at_a_point);
+    const auto means = pad_modes(slab, pads, modes);
     double rise = 0.0;
-    for (std::size_t i = 0; i < pads.size(); ++i) {
-        const Pad<double>& pad = pads[i];
-        const auto across = mode_means(pad.x, pad.across, slab.width, modes.across);
-        const auto along = mode_means(pad.y, pad.along, slab.length, modes.along);
-        for_each_mode(
-            slab, modes, [&](double z) { return mode_resistance(z, slab); },
-            [&](int m, int n, double resistance) {
-                rise += powers[i] * resistance * across[std::size_t(m)] * along[std::size_t(n)] *
-                        std::cos(m * pi * x / slab.width) * std::cos(n * pi * y / slab.length);
-            });
-    }
+    for (double power : powers)
+        rise += power * uniform_resistance(slab);
+    for_each_mode(slab, modes, [&](int m, int n, double weight, double z_squared) {
+        double flux = 0.0;
+        for (std::size_t i = 0; i < pads.size(); ++i)
+            flux += powers[i] * means[i].across[std::size_t(m)] * means[i].along[std::size_t(n)];
+        rise += weight * resistance_of(z_squared, slab) * flux * std::cos(m * pi * x / slab.width) *
+                std::cos(n * pi * y / slab.length);
+    });
     return rise / (slab.width * slab.length);
 }
 
 double mean_rise_two_layers(const Slab<double>& base, const Layer& top, const Pad<double>& pad) {
-    const Modes modes{most_modes, most_modes};
-    const auto across = mode_means(pad.x, pad.across, base.width, modes.across);
-    const auto along = mode_means(pad.y, pad.along, base.length, modes.along);
-    const auto stacked = [&](double z) {
-        const double below = mode_resistance(z, base);
+    const Modes modes = Modes::of(base, {pad}, half_waves_at_a_point);
+    const auto means = pad_modes(base, {pad}, modes).front();
+    double rise = top.thickness / top.conductivity + uniform_resistance(base);
+    for_each_mode(base, modes, [&](int m, int n, double weight, double z_squared) {
+        const double z = std::sqrt(z_squared), below = resistance_of(z_squared, base);
         const double t = std::tanh(z * top.thickness), kz = top.conductivity * z;
-        return (t + kz * below) / (kz * (1.0 + kz * below * t));
-    };
-    double rise = top.thickness / top.conductivity;
-    for_each_mode(base, modes, stacked, [&](int m, int n, double resistance) {
-        const double mean = across[std::size_t(m)] * along[std::size_t(n)];
-        rise += resistance * mean * mean;
+        const double mean = means.across[std::size_t(m)] * means.along[std::size_t(n)];
+        rise += weight * (t + kz * below) / (kz * (1.0 + kz * below * t)) * mean * mean;
     });
     return rise / (base.width * base.length);
 }

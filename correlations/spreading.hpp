@@ -32,11 +32,11 @@ template <class T> T spreading_largest(const T& eps, const T& tau, const T& bi) 
 
 /// A base cooled with one film coefficient over its far side. SI.
 template <class T> struct Slab {
-    T width;        ///< along x [m]
-    T length;       ///< along y [m]
-    T thickness;    ///< [m]
-    T conductivity; ///< [W/(m K)]
-    T film;         ///< heat per base area and kelvin on the far side [W/(m2 K)]
+    T width;             ///< along x [m]
+    T length;            ///< along y [m]
+    T thickness;         ///< [m]
+    double conductivity; ///< [W/(m K)]
+    T film;              ///< heat per base area and kelvin on the far side [W/(m2 K)]
 };
 
 /// A rectangular pad of uniform flux on the base.
@@ -45,23 +45,26 @@ template <class T> struct Pad {
     T across, along; ///< sides along x and y [m]
 };
 
-/// Mean rise of pad i per watt in pad j, the one-dimensional part (t/k + 1/h)/(W L) included,
-/// row-major [K/W]. Double Fourier series of Muzychka, Culham & Yovanovich 2003 (from memory;
-/// agrees with finite volumes to 1e-4): sum over modes of w G(z)/(k z) times the mode's means over
-/// both pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)). Modes
-/// run to 8 half waves over the smallest pad; what is cut off is below 1e-3 of the spreading part.
+/// Mean rise of each pad for a power in every pad, the one-dimensional part (t/k + 1/h)/(W L)
+/// included [K]. Double Fourier series of Muzychka, Culham & Yovanovich 2003 (from memory; agrees
+/// with finite volumes to 1e-4): sum over modes of w G(z)/(k z) times the mode's means over the
+/// pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)). Modes are
+/// kept by the half waves they make over the smallest pad (a hyperbolic cross, spreading.cpp); what
+/// is cut off is about 1e-3 of the spreading part.
 template <class T>
-std::vector<T> influence_matrix(const Slab<T>& slab, const std::vector<Pad<T>>& pads);
+std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
+                              const std::vector<double>& powers);
 
 /// Rise of the base's surface at (x, y) for a power in each pad [K].
 double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,
                     const std::vector<double>& powers, double x, double y);
 
-/// As influence_matrix for a thin layer on top of the base (same sides): the recursion
-/// Z = (tanh(z t) + k z Z2)/(k z (1 + k z Z2 tanh(z t))) from the air side up. One pad, its mean
-/// [K/W].
+/// Mean rise of one pad per watt when a thin layer of the same sides lies on the base [K/W]: the
+/// recursion Z = (tanh(z t) + k z Z2)/(k z (1 + k z Z2 tanh(z t))) from the air side up (Yovanovich
+/// and co-workers, from memory).
 struct Layer {
-    double thickness, conductivity;
+    double thickness;    ///< [m]
+    double conductivity; ///< [W/(m K)]
 };
 double mean_rise_two_layers(const Slab<double>& base, const Layer& top, const Pad<double>& pad);
 

@@ -77,14 +77,23 @@ double best_objective(const std::vector<Candidate>& candidates) {
     return best;
 }
 
+/// What may still be best: close to the best by its first solve, or next to a refined one that is
+/// close. The second rule walks along the integers as far as refined values stay close, however far
+/// off first ones are.
 std::vector<std::size_t> contenders(const std::vector<Candidate>& candidates, const Settings& s) {
     const double limit = best_objective(candidates) + s.contender_margin;
+    const auto close = [&](const Candidate& c) {
+        const Outcome& o = c.outcome;
+        return (o.keeps_limits() || o.worst_violation < nearly_feasible) && o.objective <= limit;
+    };
+    const auto refined_and_close = [&](std::size_t i) {
+        return i < candidates.size() && candidates[i].refined && close(candidates[i]);
+    };
     std::vector<std::size_t> list;
-    for (std::size_t i = 0; i < candidates.size(); ++i) {
-        const Outcome& o = candidates[i].outcome;
-        const bool close = o.keeps_limits() || o.worst_violation < nearly_feasible;
-        if (!candidates[i].refined && close && o.objective <= limit) list.push_back(i);
-    }
+    for (std::size_t i = 0; i < candidates.size(); ++i)
+        if (!candidates[i].refined &&
+            (close(candidates[i]) || refined_and_close(i - 1) || refined_and_close(i + 1)))
+            list.push_back(i);
     return list;
 }
 

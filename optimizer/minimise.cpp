@@ -190,15 +190,23 @@ struct Judged {
     bool holds(const Settings& s) const { return violation <= s.constraint_tolerance; }
 };
 
-Judged judged(Problem& problem, const Point& x) {
-    Judged j;
-    j.x = x;
-    j.constraints.resize(problem.constraint_count());
-    problem.judge(x, j.objective, j.constraints);
-    j.violation = std::isfinite(j.objective) ? largest(j.constraints) : not_a_number_constraint;
+/// By the model as it is centred: what the solver itself works on.
+Judged by_model(Problem& problem, const Point& x) {
     Evaluation at(problem.variables().size(), problem.constraint_count());
     problem.evaluate(x, at);
+    Judged j;
+    j.x = x;
+    j.objective = at.objective;
+    j.violation = std::isfinite(at.objective) ? largest(at.constraints) : not_a_number_constraint;
     j.multipliers = multipliers_at(problem.variables(), x, at);
+    j.constraints = std::move(at.constraints);
+    return j;
+}
+
+/// As exactly as the problem can be judged.
+Judged exactly(Problem& problem, Judged j) {
+    problem.judge(j.x, j.objective, j.constraints);
+    j.violation = std::isfinite(j.objective) ? largest(j.constraints) : not_a_number_constraint;
     return j;
 }
 
@@ -230,11 +238,11 @@ private:
     Judged settled(const Point& start) {
         Point x = solve_.run(nlopt::LD_SLSQP, start);
         if (x.empty()) x = start;
-        Judged best = judged(problem_, x);
+        Judged best = by_model(problem_, x);
         for (int again = 0; again < restarts && !budget_.spent() && !stationary(best); ++again) {
             const Point next = solve_.run(nlopt::LD_SLSQP, best.x);
             if (next.empty()) break;
-            Judged j = judged(problem_, next);
+            Judged j = by_model(problem_, next);
             const bool gained =
                 better(j, best, settings_) || j.multipliers.residual < best.multipliers.residual;
             if (better(j, best, settings_)) best = std::move(j);
@@ -335,9 +343,6 @@ Judged best_of_starts(Problem& problem, Descent& descent, const Budget& budget,
         if (best.x.empty() || better(j, best, settings)) best = std::move(j);
         if (budget.spent()) break;
     }
-    // With a moving model the last centre belongs to the last start: judge the winner about its
-    // own.
-    if (problem.recentre(best.x)) best = judged(problem, best.x);
     return best;
 }
 
@@ -374,7 +379,7 @@ Judged repaired(Problem& problem, Descent& descent, Judged best, const Settings&
     const Outcome least = least_violation(problem, settings);
     if (least.x.empty()) return best;
     const Point x(least.x.begin(), least.x.end());
-    Judged at = judged(problem, x);
+    Judged at = by_model(problem, x);
     if (better(at, best, settings)) best = at;
     if (!at.holds(settings)) return best;
     Judged again = descent.from(x);
@@ -385,7 +390,7 @@ Judged repaired(Problem& problem, Descent& descent, Judged best, const Settings&
 Judged without_derivatives(Problem& problem, Solve& solve, Judged best, const Settings& settings) {
     const Point x = solve.run(nlopt::LN_COBYLA, best.x);
     if (x.empty()) return best;
-    Judged j = judged(problem, x);
+    Judged j = by_model(problem, x);
     return better(j, best, settings) ? j : best;
 }
 
@@ -395,7 +400,7 @@ Outcome minimise(Problem& problem, const Settings& settings) {
     const Budget budget{settings};
     if (problem.variables().empty()) {
         Solve unused(problem, settings, budget);
-        return outcome_of(judged(problem, {}), budget, unused);
+        return outcome_of(exactly(problem, by_model(problem, {})), budget, unused);
     }
     Descent descent(problem, settings, budget);
     Judged best = best_of_starts(problem, descent, budget, settings);
@@ -406,7 +411,7 @@ Outcome minimise(Problem& problem, const Settings& settings) {
         Solve fallback(problem, settings, budget);
         best = without_derivatives(problem, fallback, std::move(best), settings);
     }
-    return outcome_of(std::move(best), budget, descent.solve());
+    return outcome_of(exactly(problem, std::move(best)), budget, descent.solve());
 }
 
 Outcome least_violation(Problem& problem, const Settings& settings) {

@@ -22,7 +22,7 @@ struct Settings {
     std::uint64_t seed = 1;             ///< of the random starts
     /// Enumeration: how far (in the objective) above the best a candidate may lie and still be
     /// refined.
-    double contender_margin = 0.05;
+    double contender_margin = 0.03;
     std::optional<std::chrono::duration<double>> time;
     std::stop_token stop;
 };

@@ -13,8 +13,9 @@ int size_command(const JobCommand& command) {
     const job::Job job = job::read_job(command.job_file);
     const sizing::Sizing sizing = sizing::size(job);
     if (command.json_file)
-        write_whole(*command.json_file,
-                    std::visit([&](const auto& s) { return sheets::results_json(job, s); }, sizing));
+        write_whole(
+            *command.json_file,
+            std::visit([&](const auto& s) { return sheets::results_json(job, s); }, sizing));
     if (const auto* refusal = std::get_if<sizing::Refusal>(&sizing)) {
         fmt::print("{}", sheets::refusal_page(job, *refusal));
         return impossible_job;

@@ -1,6 +1,6 @@
 #pragma once
-// What the program knows without being told: alloys, finishes and shop processes, each value with its source.
-// The files stand in configs/ and are built into the program.
+// What the program knows without being told: alloys, finishes and shop processes, each value with
+// its source. The files stand in configs/ and are built into the program.
 
 #include "src/job/job.hpp"
 #include <vector>

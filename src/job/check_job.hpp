@@ -1,6 +1,6 @@
 #pragma once
-// Contradictions no single line shows: budgets spent before the sink, dimensions outside the space or the shop,
-// pads that overlap or hang over the edge.
+// Contradictions no single line shows: budgets spent before the sink, dimensions outside the space
+// or the shop, pads that overlap or hang over the edge.
 
 #include "src/job/document.hpp"
 #include "src/job/job.hpp"

@@ -71,14 +71,17 @@ private:
 
     void refuse_anchor(const YAML::Mark& mark, YAML::anchor_t anchor) const {
         if (anchor != 0)
-            document_.fail(place(mark), "anchors (&name) are not accepted", "write the value where it is needed");
+            document_.fail(place(mark), "anchors (&name) are not accepted",
+                           "write the value where it is needed");
     }
     void refuse_tag(const YAML::Mark& mark, const std::string& tag) const {
         if (!tag.empty() && tag != "?" && tag != "!")
-            document_.fail(place(mark), fmt::format("tags ({}) are not accepted", tag), "leave the tag out");
+            document_.fail(place(mark), fmt::format("tags ({}) are not accepted", tag),
+                           "leave the tag out");
     }
 
-    void open(const YAML::Mark& mark, const std::string& tag, YAML::anchor_t anchor, TreeNode::Kind kind) {
+    void open(const YAML::Mark& mark, const std::string& tag, YAML::anchor_t anchor,
+              TreeNode::Kind kind) {
         refuse_anchor(mark, anchor);
         refuse_tag(mark, tag);
         if (stack_.size() >= deepest)
@@ -96,7 +99,8 @@ private:
     }
 
     void add(TreeNode node) {
-        if (++count_ > most_nodes) document_.fail(node.place, fmt::format("more than {} entries", most_nodes), "");
+        if (++count_ > most_nodes)
+            document_.fail(node.place, fmt::format("more than {} entries", most_nodes), "");
         if (stack_.empty()) {
             root_ = std::move(node);
             found_ = true;
@@ -119,10 +123,11 @@ private:
             document_.fail(key.place, "a key must be plain text", "write for example power: 18 W");
         for (const TreeNode::Entry& entry : parent.node.entries)
             if (entry.key == key.text)
-                document_.fail(key.place,
-                               fmt::format("'{}' stands here a second time; the first is in line {}", key.text,
-                                           entry.place.line),
-                               "keep one of them");
+                document_.fail(
+                    key.place,
+                    fmt::format("'{}' stands here a second time; the first is in line {}", key.text,
+                                entry.place.line),
+                    "keep one of them");
         parent.pending = TreeNode::Entry{key.text, key.place, {}};
     }
 
@@ -135,16 +140,20 @@ private:
 
 std::string kind_name(TreeNode::Kind kind) {
     switch (kind) {
-    case TreeNode::Kind::scalar: return "a single value";
-    case TreeNode::Kind::sequence: return "a list";
-    case TreeNode::Kind::mapping: return "a group of keys";
+    case TreeNode::Kind::scalar:
+        return "a single value";
+    case TreeNode::Kind::sequence:
+        return "a list";
+    case TreeNode::Kind::mapping:
+        return "a group of keys";
     }
     return {};
 }
 
 std::string listed(const std::vector<std::string>& words) {
     std::string text;
-    for (const std::string& word : words) text += (text.empty() ? "" : ", ") + word;
+    for (const std::string& word : words)
+        text += (text.empty() ? "" : ", ") + word;
     return text;
 }
 
@@ -165,7 +174,8 @@ std::string read_text_file(const std::filesystem::path& path) {
         throw InputError(name, {}, {}, "the file cannot be read", "check its permissions");
     text.resize(std::size_t(file.gcount()));
     if (text.size() > largest_file)
-        throw InputError(name, {}, {}, "the file is larger than 1 MB", "a job file is a few dozen lines");
+        throw InputError(name, {}, {}, "the file is larger than 1 MB",
+                         "a job file is a few dozen lines");
     return text;
 }
 
@@ -182,7 +192,8 @@ Document parse_document(std::string file, std::string text) {
         document.root = builder.take();
         TreeBuilder second(document);
         if (parser.HandleNextDocument(second))
-            document.fail({}, "the file holds more than one document ('---')", "keep one job a file");
+            document.fail({}, "the file holds more than one document ('---')",
+                          "keep one job a file");
     } catch (const YAML::Exception& error) {
         const bool known = !error.mark.is_null();
         document.fail(known ? Place{error.mark.line + 1, error.mark.column + 1} : Place{},
@@ -195,8 +206,10 @@ Document parse_document(std::string file, std::string text) {
 Mapping::Mapping(const Document& document, const TreeNode& node, std::string what)
     : document_(document), node_(node), what_(std::move(what)) {
     if (node.kind != TreeNode::Kind::mapping)
-        document.fail(node.place, fmt::format("{} must be a group of keys, not {}", what_, kind_name(node.kind)),
-                      "write key: value lines below it");
+        document.fail(
+            node.place,
+            fmt::format("{} must be a group of keys, not {}", what_, kind_name(node.kind)),
+            "write key: value lines below it");
 }
 
 const TreeNode::Entry* Mapping::find(std::string_view key) const {
@@ -214,19 +227,23 @@ const TreeNode* Mapping::optional(std::string_view key) {
     const TreeNode::Entry* entry = find(key);
     if (!entry) return nullptr;
     if (!entry->value.given)
-        document_.fail(entry->place, fmt::format("{} has no value", key), "give it one or leave the key out");
+        document_.fail(entry->place, fmt::format("{} has no value", key),
+                       "give it one or leave the key out");
     return &entry->value;
 }
 
 const TreeNode& Mapping::required(std::string_view key) {
     if (const TreeNode* node = optional(key)) return *node;
-    document_.fail(node_.place, fmt::format("{} lacks '{}'", what_, key), fmt::format("add a line {}: ...", key));
+    document_.fail(node_.place, fmt::format("{} lacks '{}'", what_, key),
+                   fmt::format("add a line {}: ...", key));
 }
 
 std::string Mapping::text(std::string_view key) {
     const TreeNode& node = required(key);
     if (node.kind != TreeNode::Kind::scalar)
-        document_.fail(node.place, fmt::format("{} must be a single value, not {}", key, kind_name(node.kind)), "");
+        document_.fail(node.place,
+                       fmt::format("{} must be a single value, not {}", key, kind_name(node.kind)),
+                       "");
     if (node.text.empty()) document_.fail(node.place, fmt::format("{} is empty", key), "");
     return node.text;
 }
@@ -248,18 +265,21 @@ void Mapping::only(const std::vector<std::string>& keys) const {
         if (std::find(keys.begin(), keys.end(), entry.key) != keys.end()) continue;
         const std::string meant = nearest_word(entry.key, keys);
         document_.fail(entry.place, fmt::format("{} has no key '{}'", what_, entry.key),
-                       meant.empty() ? "its keys are: " + listed(keys) : fmt::format("did you mean '{}'?", meant));
+                       meant.empty() ? "its keys are: " + listed(keys)
+                                     : fmt::format("did you mean '{}'?", meant));
     }
 }
 
-void Mapping::fail(std::string_view key, const std::string& reason, const std::string& suggestion) const {
+void Mapping::fail(std::string_view key, const std::string& reason,
+                   const std::string& suggestion) const {
     document_.fail(place_of(key), reason, suggestion);
 }
 
 double quantity_of(const Document& document, const TreeNode& node, const std::string& what,
                    const QuantityKind& kind) {
     if (node.kind != TreeNode::Kind::scalar)
-        document.fail(node.place, fmt::format("{} must be a single value, not {}", what, kind_name(node.kind)),
+        document.fail(node.place,
+                      fmt::format("{} must be a single value, not {}", what, kind_name(node.kind)),
                       fmt::format("write for example {}: {}", what, kind.example));
     try {
         return read_quantity(node.text, kind);

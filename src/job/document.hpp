@@ -1,7 +1,7 @@
 #pragma once
 // A strict reading of a YAML file into a plain tree: scalars stay text, every node knows its place.
-// Refused with place and reason: duplicate keys, anchors, aliases, tags, more than one document, deep or huge
-// trees, files over 1 MB, folders.
+// Refused with place and reason: duplicate keys, anchors, aliases, tags, more than one document,
+// deep or huge trees, files over 1 MB, folders.
 
 #include "src/job/input_error.hpp"
 #include "src/job/units.hpp"
@@ -20,10 +20,10 @@ struct TreeNode {
 
     Kind kind = Kind::scalar;
     Place place;
-    std::string text;             ///< of a scalar
-    bool given = true;             ///< false for an empty value ("key:")
-    std::vector<TreeNode> items;  ///< of a sequence
-    std::vector<Entry> entries;   ///< of a mapping, in order
+    std::string text;            ///< of a scalar
+    bool given = true;           ///< false for an empty value ("key:")
+    std::vector<TreeNode> items; ///< of a sequence
+    std::vector<Entry> entries;  ///< of a mapping, in order
 };
 
 struct TreeNode::Entry {
@@ -38,7 +38,8 @@ struct Document {
     std::string text;
     TreeNode root;
 
-    [[noreturn]] void fail(Place place, const std::string& reason, const std::string& suggestion) const {
+    [[noreturn]] void fail(Place place, const std::string& reason,
+                           const std::string& suggestion) const {
         throw InputError(file, text, place, reason, suggestion);
     }
 };

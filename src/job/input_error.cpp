@@ -37,7 +37,8 @@ std::string message(const std::string& file, std::string_view text, Place place,
     if (!excerpt.empty()) {
         out += "\n    " + excerpt;
         if (std::size_t(place.column) <= longest_excerpt)
-            out += "\n    " + std::string(std::size_t(place.column > 0 ? place.column - 1 : 0), ' ') + "^";
+            out += "\n    " +
+                   std::string(std::size_t(place.column > 0 ? place.column - 1 : 0), ' ') + "^";
     }
     if (!suggestion.empty()) out += "\n  " + suggestion;
     return out;

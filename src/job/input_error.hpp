@@ -15,7 +15,8 @@ namespace finwright::job {
 
 class InputError : public std::runtime_error {
 public:
-    /// `text` is the whole file; the excerpt is taken from it. A place with line 0 gives no excerpt.
+    /// `text` is the whole file; the excerpt is taken from it. A place with line 0 gives no
+    /// excerpt.
     InputError(std::string file, std::string_view text, Place place, std::string reason,
                std::string suggestion);
 

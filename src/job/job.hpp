@@ -15,7 +15,8 @@ struct Place {
     int column = 0;
 };
 
-/// A sink dimension as the job leaves it: fixed, bounded on either side, or free. [m, or 1 for the fin count]
+/// A sink dimension as the job leaves it: fixed, bounded on either side, or free. [m, or 1 for the
+/// fin count]
 struct Range {
     std::optional<double> from;
     std::optional<double> to;
@@ -33,15 +34,17 @@ struct Coordinate {
 /// One power part bolted to the base.
 struct Part {
     std::string name;
-    double power = 0.0;                           ///< dissipated [W]
-    std::optional<double> junction_limit;         ///< absolute maximum [K]
-    double junction_to_case = 0.0;                ///< [K/W]
-    std::optional<double> rated_power;            ///< the 25 degC rating R_jc was taken from, if it was [W]
-    double interface = 0.0;                       ///< case to base, over the pad [K/W]
-    double pad_across = 0.0;                      ///< pad side along the width [m]
-    double pad_along = 0.0;                       ///< pad side along the length [m]
-    std::optional<Coordinate> across;             ///< pad centre from the left edge; empty: placed by the program
-    std::optional<Coordinate> along;              ///< pad centre from the inlet (lower) end; empty: placed by the program
+    double power = 0.0;                   ///< dissipated [W]
+    std::optional<double> junction_limit; ///< absolute maximum [K]
+    double junction_to_case = 0.0;        ///< [K/W]
+    std::optional<double> rated_power;    ///< the 25 degC rating R_jc was taken from, if it was [W]
+    double interface = 0.0;               ///< case to base, over the pad [K/W]
+    double pad_across = 0.0;              ///< pad side along the width [m]
+    double pad_along = 0.0;               ///< pad side along the length [m]
+    std::optional<Coordinate>
+        across; ///< pad centre from the left edge; empty: placed by the program
+    std::optional<Coordinate>
+        along; ///< pad centre from the inlet (lower) end; empty: placed by the program
     Place place;
 };
 
@@ -49,8 +52,9 @@ struct StillAir {};
 
 /// Air led through the fins by a duct that fits them closely. Exactly one is given.
 struct DuctedAir {
-    std::optional<double> velocity; ///< approach velocity in the duct section, width x fin height [m/s]
-    std::optional<double> flow;     ///< volume flow at inlet conditions [m3/s]
+    std::optional<double>
+        velocity;               ///< approach velocity in the duct section, width x fin height [m/s]
+    std::optional<double> flow; ///< volume flow at inlet conditions [m3/s]
 };
 
 struct Air {
@@ -60,14 +64,16 @@ struct Air {
 };
 
 struct Space {
-    std::optional<double> width, height, length; ///< overall, across the fins / off the mounting face / along the flow [m]
+    std::optional<double> width, height,
+        length; ///< overall, across the fins / off the mounting face / along the flow [m]
 };
 
 struct Limits {
-    double margin = 0.0;                   ///< kept below every junction limit [K]
-    std::optional<double> sink_resistance; ///< hottest pad's rise over inlet air / total power [K/W]
-    std::optional<double> mass;            ///< [kg]
-    std::optional<double> pressure_drop;   ///< [Pa]
+    double margin = 0.0; ///< kept below every junction limit [K]
+    std::optional<double>
+        sink_resistance;                 ///< hottest pad's rise over inlet air / total power [K/W]
+    std::optional<double> mass;          ///< [kg]
+    std::optional<double> pressure_drop; ///< [Pa]
     Space space;
 };
 
@@ -94,8 +100,9 @@ struct Process {
     std::optional<double> largest_height_to_thickness; ///< [-]
     std::optional<double> largest_height;              ///< fin height [m]
     double smallest_base = 0.0;                        ///< base thickness [m]
-    double smallest_base_to_thickness = 0.0;           ///< base thickness / fin thickness, 0 = no such rule [-]
-    std::optional<double> largest_circle;              ///< circumscribing circle of the section [m]
+    double smallest_base_to_thickness =
+        0.0;                              ///< base thickness / fin thickness, 0 = no such rule [-]
+    std::optional<double> largest_circle; ///< circumscribing circle of the section [m]
     std::string source;
 };
 
@@ -133,7 +140,8 @@ struct Job {
 
     double total_power() const {
         double sum = 0.0;
-        for (const Part& part : parts) sum += part.power;
+        for (const Part& part : parts)
+            sum += part.power;
         return sum;
     }
 };

@@ -35,7 +35,8 @@ std::string nearest_word(std::string_view typed, const std::vector<std::string>&
     std::size_t least = std::string_view::npos;
     for (const std::string& word : words) {
         const std::size_t distance = edits(typed, word);
-        const std::size_t allowed = std::max<std::size_t>(1, std::max(word.size(), typed.size()) / 3);
+        const std::size_t allowed =
+            std::max<std::size_t>(1, std::max(word.size(), typed.size()) / 3);
         if (distance <= allowed && distance < least) {
             least = distance;
             best = word;

@@ -21,14 +21,16 @@ int whole_number(const Document& d, const TreeNode& node, const std::string& wha
     const auto* end = begin + node.text.size();
     const auto [stop, error] = std::from_chars(begin, end, value);
     if (node.kind != TreeNode::Kind::scalar || error != std::errc{} || stop != end)
-        d.fail(node.place, fmt::format("{} must be a whole number", what), fmt::format("write for example {}: 12", what));
+        d.fail(node.place, fmt::format("{} must be a whole number", what),
+               fmt::format("write for example {}: 12", what));
     return value;
 }
 
 double positive(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind) {
     const double value = m.number(key, kind);
     if (value <= 0.0)
-        d.fail(m.place_of(key), fmt::format("{} must be above zero", key), fmt::format("write for example {}: {}", key, kind.example));
+        d.fail(m.place_of(key), fmt::format("{} must be above zero", key),
+               fmt::format("write for example {}: {}", key, kind.example));
     return value;
 }
 
@@ -40,11 +42,13 @@ std::optional<double> optional_positive(const Document& d, Mapping& m, std::stri
 double not_negative(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind) {
     const double value = m.number(key, kind);
     if (value < 0.0)
-        d.fail(m.place_of(key), fmt::format("{} is negative", key), fmt::format("write for example {}: {}", key, kind.example));
+        d.fail(m.place_of(key), fmt::format("{} is negative", key),
+               fmt::format("write for example {}: {}", key, kind.example));
     return value;
 }
 
-// ---- air -----------------------------------------------------------------------------------------
+// ---- air
+// -----------------------------------------------------------------------------------------
 
 Air read_air(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "air");
@@ -52,7 +56,8 @@ Air read_air(const Document& d, const TreeNode& node) {
     Air air;
     air.temperature = m.number("temperature", quantity::temperature);
     if (air.temperature < 223.15 || air.temperature > 473.15)
-        m.fail("temperature", "the air temperature lies outside -50 to 200 degC", "check the unit: degC, degF or K");
+        m.fail("temperature", "the air temperature lies outside -50 to 200 degC",
+               "check the unit: degC, degF or K");
     air.altitude = m.optional_number("altitude", quantity::length).value_or(0.0);
     if (air.altitude < -450.0 || air.altitude > 11000.0)
         m.fail("altitude", "the altitude lies outside -450 to 11 000 m", "check the unit: m or ft");
@@ -78,12 +83,14 @@ Air read_air(const Document& d, const TreeNode& node) {
     duct.velocity = optional_positive(d, m, "velocity", quantity::velocity);
     duct.flow = optional_positive(d, m, "flow", quantity::volume_flow);
     if (duct.velocity && *duct.velocity > 60.0)
-        m.fail("velocity", fmt::format("{:.0f} m/s is beyond any fan", *duct.velocity), "is it ft/min (196.85 of them are 1 m/s)?");
+        m.fail("velocity", fmt::format("{:.0f} m/s is beyond any fan", *duct.velocity),
+               "is it ft/min (196.85 of them are 1 m/s)?");
     air.state = duct;
     return air;
 }
 
-// ---- parts ---------------------------------------------------------------------------------------
+// ---- parts
+// ---------------------------------------------------------------------------------------
 
 double read_interface(const Document& d, const TreeNode& node, double pad_area) {
     Mapping m(d, node, "interface");
@@ -91,8 +98,9 @@ double read_interface(const Document& d, const TreeNode& node, double pad_area) 
     const int forms = int(m.has("resistance")) + int(m.has("area_resistance")) +
                       int(m.has("thickness") || m.has("conductivity"));
     if (forms != 1)
-        d.fail(m.place(), "an interface is stated in exactly one form",
-               "give resistance (K/W), or area_resistance (K cm2/W), or thickness with conductivity");
+        d.fail(
+            m.place(), "an interface is stated in exactly one form",
+            "give resistance (K/W), or area_resistance (K cm2/W), or thickness with conductivity");
     if (m.has("contacts") && !m.has("thickness"))
         m.fail("contacts", "contacts go with thickness and conductivity", "leave the line out");
     if (m.has("resistance")) return not_negative(d, m, "resistance", quantity::resistance);
@@ -100,7 +108,8 @@ double read_interface(const Document& d, const TreeNode& node, double pad_area) 
         return not_negative(d, m, "area_resistance", quantity::area_resistance) / pad_area;
     const double layer = not_negative(d, m, "thickness", quantity::length) /
                          positive(d, m, "conductivity", quantity::conductivity);
-    const double contacts = m.has("contacts") ? not_negative(d, m, "contacts", quantity::area_resistance) : 0.0;
+    const double contacts =
+        m.has("contacts") ? not_negative(d, m, "contacts", quantity::area_resistance) : 0.0;
     return (layer + contacts) / pad_area;
 }
 
@@ -109,8 +118,10 @@ Coordinate read_coordinate(const Document& d, Mapping& m, std::string_view key) 
     const bool share = node.kind == TreeNode::Kind::scalar && is_share(node.text);
     const double value = share ? m.number(key, quantity::pure) : m.number(key, quantity::length);
     if (value <= 0.0 || (share && value >= 1.0))
-        d.fail(node.place, fmt::format("{} puts the pad's centre on or over the edge of the base", key),
-               "measure from the left edge and from the air's inlet end, or write a share such as 50 %");
+        d.fail(node.place,
+               fmt::format("{} puts the pad's centre on or over the edge of the base", key),
+               "measure from the left edge and from the air's inlet end, or write a share such as "
+               "50 %");
     return {value, share};
 }
 
@@ -118,21 +129,28 @@ void read_junction(const Document& d, Mapping& m, Part& part) {
     part.junction_limit = m.optional_number("junction_limit", quantity::temperature);
     const bool direct = m.has("junction_to_case"), rated = m.has("rated_power");
     if (direct && rated)
-        m.fail("rated_power", "junction_to_case and rated_power say the same thing twice", "keep one of them");
+        m.fail("rated_power", "junction_to_case and rated_power say the same thing twice",
+               "keep one of them");
     if (part.junction_limit && !direct && !rated)
-        d.fail(m.place(), fmt::format("'{}' has a junction limit but nothing between junction and case", part.name),
-               "add junction_to_case: 0.8 K/W, or rated_power: 150 W (the data sheet's rating at 25 degC case)");
-    if (direct) part.junction_to_case = not_negative(d, m, "junction_to_case", quantity::resistance);
+        d.fail(m.place(),
+               fmt::format("'{}' has a junction limit but nothing between junction and case",
+                           part.name),
+               "add junction_to_case: 0.8 K/W, or rated_power: 150 W (the data sheet's rating at "
+               "25 degC case)");
+    if (direct)
+        part.junction_to_case = not_negative(d, m, "junction_to_case", quantity::resistance);
     if (!rated) return;
     if (!part.junction_limit)
-        m.fail("rated_power", "a 25 degC rating needs the junction limit it goes with", "add junction_limit: 150 degC");
+        m.fail("rated_power", "a 25 degC rating needs the junction limit it goes with",
+               "add junction_limit: 150 degC");
     part.rated_power = positive(d, m, "rated_power", quantity::power);
     part.junction_to_case = (*part.junction_limit - rating_case) / *part.rated_power;
 }
 
 Part read_part(const Document& d, const TreeNode& node, int& count) {
     Mapping m(d, node, "a part");
-    m.only({"name", "power", "junction_limit", "junction_to_case", "rated_power", "interface", "pad", "place", "count"});
+    m.only({"name", "power", "junction_limit", "junction_to_case", "rated_power", "interface",
+            "pad", "place", "count"});
     Part part;
     part.place = m.place();
     part.name = m.text("name");
@@ -153,33 +171,39 @@ Part read_part(const Document& d, const TreeNode& node, int& count) {
     count = 1;
     if (const TreeNode* n = m.optional("count")) {
         count = whole_number(d, *n, "count");
-        if (count < 1 || count > most_parts) m.fail("count", fmt::format("count must be 1 to {}", most_parts), "");
+        if (count < 1 || count > most_parts)
+            m.fail("count", fmt::format("count must be 1 to {}", most_parts), "");
         if (count > 1 && m.has("place"))
-            m.fail("place", "several equal parts cannot stand in one place", "list them one by one, or leave place out");
+            m.fail("place", "several equal parts cannot stand in one place",
+                   "list them one by one, or leave place out");
     }
     return part;
 }
 
 std::vector<Part> read_parts(const Document& d, const TreeNode& node) {
     if (node.kind != TreeNode::Kind::sequence || node.items.empty())
-        d.fail(node.place, "parts must be a list of at least one part", "write '- name: ...' lines below it");
+        d.fail(node.place, "parts must be a list of at least one part",
+               "write '- name: ...' lines below it");
     std::vector<Part> parts;
     for (const TreeNode& item : node.items) {
         int count = 1;
         const Part part = read_part(d, item, count);
         for (const Part& other : parts)
             if (other.name == part.name)
-                d.fail(part.place, fmt::format("there are two parts named '{}'", part.name), "give each its own name");
+                d.fail(part.place, fmt::format("there are two parts named '{}'", part.name),
+                       "give each its own name");
         for (int i = 1; i <= count; ++i) {
             parts.push_back(part);
             if (count > 1) parts.back().name = fmt::format("{} {}", part.name, i);
         }
-        if (parts.size() > most_parts) d.fail(part.place, fmt::format("more than {} parts", most_parts), "");
+        if (parts.size() > most_parts)
+            d.fail(part.place, fmt::format("more than {} parts", most_parts), "");
     }
     return parts;
 }
 
-// ---- limits --------------------------------------------------------------------------------------
+// ---- limits
+// --------------------------------------------------------------------------------------
 
 Limits read_limits(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "limits");
@@ -197,15 +221,18 @@ Limits read_limits(const Document& d, const TreeNode& node) {
         limits.space.length = optional_positive(d, space, "length", quantity::length);
         for (const char* key : {"width", "height", "length"})
             if (space.has(key) && space.number(key, quantity::length) > 2.0)
-                space.fail(key, "a space of more than 2 m is not for a plate-fin sink", "check the unit: mm, in or m");
+                space.fail(key, "a space of more than 2 m is not for a plate-fin sink",
+                           "check the unit: mm, in or m");
     }
     return limits;
 }
 
-// ---- sink ----------------------------------------------------------------------------------------
+// ---- sink
+// ----------------------------------------------------------------------------------------
 
 template <class Entry>
-Entry from_catalogue(const Document& d, Mapping& m, const char* key, const std::vector<Entry>& list) {
+Entry from_catalogue(const Document& d, Mapping& m, const char* key,
+                     const std::vector<Entry>& list) {
     const std::string name = m.text(key);
     std::vector<std::string> names;
     std::string all;
@@ -234,7 +261,8 @@ Range read_range(const Document& d, Mapping& m, std::string_view key,
         if (const TreeNode* from = ends.optional("from")) range.from = value(*from, "from");
         if (const TreeNode* to = ends.optional("to")) range.to = value(*to, "to");
         if (!range.from && !range.to)
-            d.fail(node->place, fmt::format("{} states neither from nor to", key), "leave the key out to free it");
+            d.fail(node->place, fmt::format("{} states neither from nor to", key),
+                   "leave the key out to free it");
     }
     if ((range.from && *range.from <= 0.0) || (range.to && *range.to <= 0.0))
         d.fail(range.place, fmt::format("{} must be above zero", key), "");
@@ -251,8 +279,12 @@ Range length_range(const Document& d, Mapping& m, std::string_view key) {
 
 Aim read_aim(Mapping& m) {
     static const std::vector<std::pair<std::string, Aim>> aims{
-        {"mass", Aim::mass},           {"volume", Aim::volume},         {"height", Aim::height},
-        {"footprint", Aim::footprint}, {"resistance", Aim::resistance}, {"pressure_drop", Aim::pressure_drop}};
+        {"mass", Aim::mass},
+        {"volume", Aim::volume},
+        {"height", Aim::height},
+        {"footprint", Aim::footprint},
+        {"resistance", Aim::resistance},
+        {"pressure_drop", Aim::pressure_drop}};
     const std::string text = m.optional_text("aim").value_or("mass");
     for (const auto& [name, aim] : aims)
         if (name == text) return aim;
@@ -262,15 +294,16 @@ Aim read_aim(Mapping& m) {
 
 Sink read_sink(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "sink");
-    m.only({"process", "alloy", "finish", "emissivity", "aim", "fins", "fin_height", "fin_thickness",
-            "fin_draft", "gap", "base_thickness", "width", "length"});
+    m.only({"process", "alloy", "finish", "emissivity", "aim", "fins", "fin_height",
+            "fin_thickness", "fin_draft", "gap", "base_thickness", "width", "length"});
     Sink sink;
     sink.process = from_catalogue(d, m, "process", processes());
     sink.alloy = from_catalogue(d, m, "alloy", alloys());
     sink.finish = from_catalogue(d, m, "finish", finishes());
     if (const auto stated = m.optional_number("emissivity", quantity::pure)) {
         if (*stated <= 0.0 || *stated > 1.0)
-            m.fail("emissivity", "an emissivity lies above 0 and up to 1", "bare aluminium 0.05 to 0.1, anodised 0.8 to 0.9");
+            m.fail("emissivity", "an emissivity lies above 0 and up to 1",
+                   "bare aluminium 0.05 to 0.1, anodised 0.8 to 0.9");
         sink.finish.emissivity = *stated;
         sink.finish.source = "job";
     }
@@ -288,7 +321,8 @@ Sink read_sink(const Document& d, const TreeNode& node) {
     sink.length = length_range(d, m, "length");
     if (const auto draft = m.optional_number("fin_draft", quantity::angle)) {
         if (*draft < 0.0 || *draft > 0.0873)
-            m.fail("fin_draft", "the draft of a fin face lies between 0 and 5 deg", "write for example fin_draft: 0.5 deg");
+            m.fail("fin_draft", "the draft of a fin face lies between 0 and 5 deg",
+                   "write for example fin_draft: 0.5 deg");
         sink.fin_draft = *draft;
     }
     return sink;
@@ -296,10 +330,13 @@ Sink read_sink(const Document& d, const TreeNode& node) {
 
 void read_shop(const Document& d, const TreeNode& node, Sink& sink) {
     Mapping m(d, node, "shop");
-    m.only({"smallest_thickness", "smallest_gap", "largest_height_to_gap", "largest_height_to_thickness",
-            "largest_height", "smallest_base", "smallest_base_to_thickness", "largest_circle", "steps"});
+    m.only({"smallest_thickness", "smallest_gap", "largest_height_to_gap",
+            "largest_height_to_thickness", "largest_height", "smallest_base",
+            "smallest_base_to_thickness", "largest_circle", "steps"});
     Process& p = sink.process;
-    const auto length = [&](const char* key) { return optional_positive(d, m, key, quantity::length); };
+    const auto length = [&](const char* key) {
+        return optional_positive(d, m, key, quantity::length);
+    };
     const auto pure = [&](const char* key) { return optional_positive(d, m, key, quantity::pure); };
     if (const auto v = length("smallest_thickness")) p.smallest_thickness = *v;
     if (const auto v = length("smallest_gap")) p.smallest_gap = *v;

@@ -1,5 +1,6 @@
 #pragma once
-// From a job file to a Job: read strictly, completed from the catalogues, checked for contradictions.
+// From a job file to a Job: read strictly, completed from the catalogues, checked for
+// contradictions.
 
 #include "src/job/input_error.hpp"
 #include "src/job/job.hpp"

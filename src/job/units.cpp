@@ -18,38 +18,68 @@ struct Unit {
     double offset = 0.0; ///< SI level of the unit's zero
 };
 
-constexpr double inch = 0.0254;              // exact, NIST SP 811 (2008) app. B
-constexpr double foot = 0.3048;              // exact, NIST SP 811
-constexpr double pound = 0.45359237;         // exact, NIST SP 811
-constexpr double gravity = 9.80665;          // exact, ISO 80000-3
-constexpr double inch_water = 249.08891;     // conventional, NIST SP 811 (1000 kg/m3 x g x 25.4 mm)
-constexpr double inch_mercury = 3386.389;    // conventional, NIST SP 811
+constexpr double inch = 0.0254;           // exact, NIST SP 811 (2008) app. B
+constexpr double foot = 0.3048;           // exact, NIST SP 811
+constexpr double pound = 0.45359237;      // exact, NIST SP 811
+constexpr double gravity = 9.80665;       // exact, ISO 80000-3
+constexpr double inch_water = 249.08891;  // conventional, NIST SP 811 (1000 kg/m3 x g x 25.4 mm)
+constexpr double inch_mercury = 3386.389; // conventional, NIST SP 811
 constexpr double degree = std::numbers::pi / 180.0;
-constexpr double rankine = 5.0 / 9.0;        // exact, NIST SP 811
-constexpr double ice_point = 273.15;         // exact, ISO 80000-5
+constexpr double rankine = 5.0 / 9.0; // exact, NIST SP 811
+constexpr double ice_point = 273.15;  // exact, ISO 80000-5
 constexpr double fahrenheit_zero = 459.67 * rankine;
 
 constexpr Exponents L{1, 0, 0, 0, 0}, M{0, 1, 0, 0, 0}, T{0, 0, 1, 0, 0}, K{0, 0, 0, 1, 0},
-    A{0, 0, 0, 0, 1}, W{2, 1, -3, 0, 0}, P{-1, 1, -2, 0, 0}, J{2, 1, -2, 0, 0},
-    V{3, 0, 0, 0, 0}, F{3, 0, -1, 0, 0}, N{1, 1, -2, 0, 0}, U{1, 0, -1, 0, 0}, none{};
+    A{0, 0, 0, 0, 1}, W{2, 1, -3, 0, 0}, P{-1, 1, -2, 0, 0}, J{2, 1, -2, 0, 0}, V{3, 0, 0, 0, 0},
+    F{3, 0, -1, 0, 0}, N{1, 1, -2, 0, 0}, U{1, 0, -1, 0, 0}, none{};
 
 const std::vector<Unit>& table() {
     static const std::vector<Unit> units{
-        {"m", L, 1.0}, {"mm", L, 1e-3}, {"cm", L, 1e-2}, {"dm", L, 0.1}, {"km", L, 1e3},
-        {"um", L, 1e-6}, {"µm", L, 1e-6}, {"in", L, inch}, {"inch", L, inch}, {"mil", L, 1e-3 * inch},
+        {"m", L, 1.0},
+        {"mm", L, 1e-3},
+        {"cm", L, 1e-2},
+        {"dm", L, 0.1},
+        {"km", L, 1e3},
+        {"um", L, 1e-6},
+        {"µm", L, 1e-6},
+        {"in", L, inch},
+        {"inch", L, inch},
+        {"mil", L, 1e-3 * inch},
         {"ft", L, foot},
-        {"kg", M, 1.0}, {"g", M, 1e-3}, {"mg", M, 1e-6}, {"lb", M, pound}, {"oz", M, pound / 16.0},
-        {"s", T, 1.0}, {"min", T, 60.0}, {"h", T, 3600.0},
-        {"K", K, 1.0}, {"degC", K, 1.0, ice_point}, {"°C", K, 1.0, ice_point},
-        {"degF", K, rankine, fahrenheit_zero}, {"°F", K, rankine, fahrenheit_zero},
-        {"W", W, 1.0}, {"mW", W, 1e-3}, {"kW", W, 1e3},
-        {"J", J, 1.0}, {"kJ", J, 1e3}, {"N", N, 1.0},
-        {"Pa", P, 1.0}, {"hPa", P, 1e2}, {"kPa", P, 1e3}, {"mbar", P, 1e2}, {"bar", P, 1e5},
-        {"psi", P, pound * gravity / (inch * inch)}, {"mmH2O", P, gravity}, {"inH2O", P, inch_water},
+        {"kg", M, 1.0},
+        {"g", M, 1e-3},
+        {"mg", M, 1e-6},
+        {"lb", M, pound},
+        {"oz", M, pound / 16.0},
+        {"s", T, 1.0},
+        {"min", T, 60.0},
+        {"h", T, 3600.0},
+        {"K", K, 1.0},
+        {"degC", K, 1.0, ice_point},
+        {"°C", K, 1.0, ice_point},
+        {"degF", K, rankine, fahrenheit_zero},
+        {"°F", K, rankine, fahrenheit_zero},
+        {"W", W, 1.0},
+        {"mW", W, 1e-3},
+        {"kW", W, 1e3},
+        {"J", J, 1.0},
+        {"kJ", J, 1e3},
+        {"N", N, 1.0},
+        {"Pa", P, 1.0},
+        {"hPa", P, 1e2},
+        {"kPa", P, 1e3},
+        {"mbar", P, 1e2},
+        {"bar", P, 1e5},
+        {"psi", P, pound * gravity / (inch * inch)},
+        {"mmH2O", P, gravity},
+        {"inH2O", P, inch_water},
         {"inHg", P, inch_mercury},
-        {"L", V, 1e-3}, {"l", V, 1e-3},
-        {"cfm", F, foot * foot * foot / 60.0}, {"lfm", U, foot / 60.0},
-        {"deg", A, degree}, {"rad", A, 1.0},
+        {"L", V, 1e-3},
+        {"l", V, 1e-3},
+        {"cfm", F, foot * foot * foot / 60.0},
+        {"lfm", U, foot / 60.0},
+        {"deg", A, degree},
+        {"rad", A, 1.0},
         {"%", none, 0.01},
     };
     return units;
@@ -61,7 +91,8 @@ const Unit* find(std::string_view name) {
     return nullptr;
 }
 
-/// A unit expression worked out: factor, exponents, and the one unit it consists of, if it is just that.
+/// A unit expression worked out: factor, exponents, and the one unit it consists of, if it is just
+/// that.
 struct Reading {
     double factor = 1.0;
     Exponents exponents{};
@@ -70,13 +101,15 @@ struct Reading {
 
 Reading power_of(const Reading& r, int exponent) {
     Reading out{std::pow(r.factor, exponent), r.exponents, exponent == 1 ? r.alone : nullptr};
-    for (int& e : out.exponents) e *= exponent;
+    for (int& e : out.exponents)
+        e *= exponent;
     return out;
 }
 
 Reading product(const Reading& a, const Reading& b) {
     Reading out{a.factor * b.factor, a.exponents, nullptr};
-    for (std::size_t i = 0; i < out.exponents.size(); ++i) out.exponents[i] += b.exponents[i];
+    for (std::size_t i = 0; i < out.exponents.size(); ++i)
+        out.exponents[i] += b.exponents[i];
     return out;
 }
 
@@ -87,7 +120,8 @@ bool is_digit(char c) {
     return c >= '0' && c <= '9';
 }
 
-/// product  = quotient of factors joined by a space, '*', '·' or '/';  factor = name [exponent] | '(' product ')'
+/// product  = quotient of factors joined by a space, '*', '·' or '/';  factor = name [exponent] |
+/// '(' product ')'
 class UnitParser {
 public:
     explicit UnitParser(std::string_view text) : text_(text) {}
@@ -96,13 +130,15 @@ public:
         Reading r = expression();
         skip_spaces();
         if (at_ < text_.size())
-            throw UnitError(fmt::format("'{}' is no unit", text_), "units look like mm, K/W, W/(m K), m3/h");
+            throw UnitError(fmt::format("'{}' is no unit", text_),
+                            "units look like mm, K/W, W/(m K), m3/h");
         return r;
     }
 
 private:
     void skip_spaces() {
-        while (at_ < text_.size() && text_[at_] == ' ') ++at_;
+        while (at_ < text_.size() && text_[at_] == ' ')
+            ++at_;
     }
     bool take(std::string_view what) {
         if (text_.substr(at_, what.size()) != what) return false;
@@ -111,7 +147,8 @@ private:
     }
 
     Reading expression() {
-        if (++depth_ > 8) throw UnitError("too many brackets in a unit", "write for example W/(m K)");
+        if (++depth_ > 8)
+            throw UnitError("too many brackets in a unit", "write for example W/(m K)");
         Reading r = factor();
         bool divided = false;
         for (;;) {
@@ -151,7 +188,8 @@ private:
             ++end;
         const std::string_view word = text_.substr(at_, end - at_);
         if (word.empty())
-            throw UnitError(fmt::format("'{}' is no unit", text_), "units look like mm, K/W, W/(m K), m3/h");
+            throw UnitError(fmt::format("'{}' is no unit", text_),
+                            "units look like mm, K/W, W/(m K), m3/h");
         if (const Unit* unit = find(word)) {
             at_ = end;
             return power_of({unit->factor, unit->exponents, unit}, exponent());
@@ -170,20 +208,25 @@ private:
         if (at_ < text_.size() && is_digit(text_[at_])) {
             const int digit = text_[at_++] - '0';
             if (digit == 0 || (at_ < text_.size() && is_digit(text_[at_])))
-                throw UnitError(fmt::format("'{}' has an odd exponent", text_), "write for example m2 or in2");
+                throw UnitError(fmt::format("'{}' has an odd exponent", text_),
+                                "write for example m2 or in2");
             return minus ? -digit : digit;
         }
-        if (caret || minus) throw UnitError(fmt::format("'{}' lacks an exponent", text_), "write for example m2");
+        if (caret || minus)
+            throw UnitError(fmt::format("'{}' lacks an exponent", text_), "write for example m2");
         return 1;
     }
 
     static UnitError unknown(std::string_view word) {
         if (word == "C" || word == "F")
-            return {fmt::format("the unit '{}' is not known", word), fmt::format("write deg{} for degrees", word)};
+            return {fmt::format("the unit '{}' is not known", word),
+                    fmt::format("write deg{} for degrees", word)};
         const std::string meant = nearest_word(word, unit_names());
-        return {fmt::format("the unit '{}' is not known", word),
-                meant.empty() ? "known units: mm, in, K/W, degC, W, m/s, ft/min, m3/h, cfm, Pa, inH2O, g, lb ..."
-                              : fmt::format("did you mean {}?", meant)};
+        return {
+            fmt::format("the unit '{}' is not known", word),
+            meant.empty()
+                ? "known units: mm, in, K/W, degC, W, m/s, ft/min, m3/h, cfm, Pa, inH2O, g, lb ..."
+                : fmt::format("did you mean {}?", meant)};
     }
 
     std::string_view text_;
@@ -192,8 +235,10 @@ private:
 };
 
 std::string_view trimmed(std::string_view text) {
-    while (!text.empty() && text.front() == ' ') text.remove_prefix(1);
-    while (!text.empty() && text.back() == ' ') text.remove_suffix(1);
+    while (!text.empty() && text.front() == ' ')
+        text.remove_prefix(1);
+    while (!text.empty() && text.back() == ' ')
+        text.remove_suffix(1);
     return text;
 }
 
@@ -211,12 +256,14 @@ Split split(std::string_view text, const QuantityKind& kind) {
     const std::string example = fmt::format("write for example {}", kind.example);
     if (error == std::errc::result_out_of_range)
         throw UnitError(fmt::format("'{}' is out of any range", whole), example);
-    if (error != std::errc{}) throw UnitError(fmt::format("'{}' is not a number with a unit", whole), example);
+    if (error != std::errc{})
+        throw UnitError(fmt::format("'{}' is not a number with a unit", whole), example);
     if (!std::isfinite(number)) throw UnitError(fmt::format("'{}' is not finite", whole), example);
     const std::string_view unit = trimmed(rest.substr(std::size_t(end - rest.data())));
     if (!unit.empty() && (is_digit(unit.front()) || unit.front() == ',' || unit.front() == '.'))
         throw UnitError(fmt::format("'{}' holds more than one number", whole),
-                        "write thousands without a separator and decimals with a point, " + example);
+                        "write thousands without a separator and decimals with a point, " +
+                            example);
     return {number, unit};
 }
 
@@ -239,7 +286,8 @@ bool is_share(std::string_view text) {
 
 std::vector<std::string> unit_names() {
     std::vector<std::string> names;
-    for (const Unit& unit : table()) names.emplace_back(unit.name);
+    for (const Unit& unit : table())
+        names.emplace_back(unit.name);
     return names;
 }
 
@@ -247,18 +295,21 @@ double read_quantity(std::string_view text, const QuantityKind& kind) {
     const Split parts = split(text, kind);
     if (parts.unit.empty()) {
         if (kind.exponents == Exponents{}) return parts.number;
-        throw UnitError(fmt::format("{} has no unit", trimmed(text)),
-                        fmt::format("write {} with its unit, for example {}", kind.name, kind.example));
+        throw UnitError(
+            fmt::format("{} has no unit", trimmed(text)),
+            fmt::format("write {} with its unit, for example {}", kind.name, kind.example));
     }
     const Reading unit = UnitParser(parts.unit).whole();
     if (unit.exponents != kind.exponents)
-        throw UnitError(fmt::format("{} is {}, expected {}", trimmed(text), kind_read(unit), kind.name),
-                        fmt::format("write for example {}", kind.example));
+        throw UnitError(
+            fmt::format("{} is {}, expected {}", trimmed(text), kind_read(unit), kind.name),
+            fmt::format("write for example {}", kind.example));
     const bool level = kind.level && unit.alone != nullptr;
     const double value = parts.number * unit.factor + (level ? unit.alone->offset : 0.0);
     if (level && value <= 0.0)
         throw UnitError(fmt::format("{} is below absolute zero", trimmed(text)), "");
-    if (!std::isfinite(value)) throw UnitError(fmt::format("'{}' is out of any range", trimmed(text)), "");
+    if (!std::isfinite(value))
+        throw UnitError(fmt::format("'{}' is out of any range", trimmed(text)), "");
     return value;
 }
 

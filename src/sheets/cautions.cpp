@@ -11,12 +11,13 @@ using sink::Rating;
 
 namespace {
 
-constexpr double touch_long = 273.15 + 43.0, touch_guard = 273.15 + 70.0; // quoted bands, bare metal [K]
-constexpr double gap_that_clogs = 2e-3;                                   // unfiltered air [m]
-constexpr double heavy = 0.4;                                             // for leads to carry [kg]
-constexpr double sharp = 1e-3;                                            // fin edge [m]
-constexpr double worn_interface = 1.5;                                    // end of life, common practice [-]
-constexpr double clogged_flow = 0.7;                                      // filter loaded, common practice [-]
+constexpr double touch_long = 273.15 + 43.0,
+                 touch_guard = 273.15 + 70.0; // quoted bands, bare metal [K]
+constexpr double gap_that_clogs = 2e-3;       // unfiltered air [m]
+constexpr double heavy = 0.4;                 // for leads to carry [kg]
+constexpr double sharp = 1e-3;                // fin edge [m]
+constexpr double worn_interface = 1.5;        // end of life, common practice [-]
+constexpr double clogged_flow = 0.7;          // filter loaded, common practice [-]
 
 double least_headroom(const Rating& rating) {
     double least = std::numeric_limits<double>::infinity();
@@ -27,16 +28,16 @@ double least_headroom(const Rating& rating) {
 
 std::string hottest_junction(const Rating& rating) {
     const auto hottest = std::max_element(
-        rating.parts.begin(), rating.parts.end(),
-        [](const auto& a, const auto& b) { return a.junction_temperature < b.junction_temperature; });
+        rating.parts.begin(), rating.parts.end(), [](const auto& a, const auto& b) {
+            return a.junction_temperature < b.junction_temperature;
+        });
     return fmt::format("{} at {} °C", hottest->name, celsius(hottest->junction_temperature, 0));
 }
 
 std::string touch(const Rating& rating) {
     const double surface = rating.air_temperature + rating.hottest_pad_rise;
-    const std::string reach =
-        fmt::format("The metal reaches {} °C in {} °C air. ", celsius(surface, 0),
-                    celsius(rating.air_temperature, 0));
+    const std::string reach = fmt::format("The metal reaches {} °C in {} °C air. ",
+                                          celsius(surface, 0), celsius(rating.air_temperature, 0));
     if (surface < touch_long) return {};
     return reach + (surface < touch_guard
                         ? "Bare-metal touch bands often quoted: 43 °C held long, 55 °C about 10 s, "
@@ -79,7 +80,8 @@ std::string fan_loss(const job::Job& job, const Rating& rating) {
     return fmt::format(
         "Fans fail and filters clog. At 70 % of the flow: {}{}. With the fan stopped, even free of "
         "its duct with fins vertical: {}. Interlock or derate if that is too hot.",
-        hottest_junction(at_clogged), least_headroom(at_clogged) < 0.0 ? ", above what is allowed" : "",
+        hottest_junction(at_clogged),
+        least_headroom(at_clogged) < 0.0 ? ", above what is allowed" : "",
         hottest_junction(at_stopped));
 }
 
@@ -94,17 +96,21 @@ std::vector<std::string> cautions(const job::Job& job, const Rating& rating) {
     add(touch(rating));
     if (!still) add(fan_loss(job, rating));
     add(worn(job, rating));
-    add("Tabs and leads may be live: check creepage and clearance for your voltage. A pad's thickness "
-        "is not creepage, and anodise is not safety insulation; an unearthed sink is live or radiates.");
+    add("Tabs and leads may be live: check creepage and clearance for your voltage. A pad's "
+        "thickness "
+        "is not creepage, and anodise is not safety insulation; an unearthed sink is live or "
+        "radiates.");
     if (still)
-        add("Still air: leave free space above and below, and take the air entering the fins, not the "
-            "room, as the ambient. °C/W falls as the rise grows, so it holds at the stated rise only.");
-    if (rating.geometry.gap < gap_that_clogs)
-        add("Gaps below 2 mm clog in unfiltered air.");
-    if (rating.mass > heavy)
-        add("Heavy for leads to carry: fix the sink to the chassis.");
-    if (rating.geometry.tip_thickness() < sharp) add("Thin fin edges cut: deburr and handle with gloves.");
-    add("The shop's own answer decides what can be made. These are estimates: build one, measure it, "
+        add("Still air: leave free space above and below, and take the air entering the fins, not "
+            "the "
+            "room, as the ambient. °C/W falls as the rise grows, so it holds at the stated rise "
+            "only.");
+    if (rating.geometry.gap < gap_that_clogs) add("Gaps below 2 mm clog in unfiltered air.");
+    if (rating.mass > heavy) add("Heavy for leads to carry: fix the sink to the chassis.");
+    if (rating.geometry.tip_thickness() < sharp)
+        add("Thin fin edges cut: deburr and handle with gloves.");
+    add("The shop's own answer decides what can be made. These are estimates: build one, measure "
+        "it, "
         "then release, under your local codes and licensed practice.");
     return list;
 }

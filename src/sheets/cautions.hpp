@@ -1,6 +1,6 @@
 #pragma once
-// What can hurt people or parts, said for the case at hand. Never a verdict on a standard: local codes and
-// licensed practice decide.
+// What can hurt people or parts, said for the case at hand. Never a verdict on a standard: local
+// codes and licensed practice decide.
 
 #include "src/job/job.hpp"
 #include "src/sink/rating.hpp"

@@ -19,7 +19,9 @@ namespace {
 constexpr std::size_t page_width = 100;
 
 std::string range_of(const Symbol& symbol) {
-    const auto end = [](double v) { return std::isfinite(v) ? fmt::format("{:g}", v) : "no bound"; };
+    const auto end = [](double v) {
+        return std::isfinite(v) ? fmt::format("{:g}", v) : "no bound";
+    };
     return fmt::format("{} to {}", end(symbol.lowest), end(symbol.highest));
 }
 
@@ -31,14 +33,15 @@ double number(const std::string& text, const std::string& whole) {
     double value = 0.0;
     const auto [end, error] = std::from_chars(text.data(), text.data() + text.size(), value);
     if (error != std::errc{} || end != text.data() + text.size() || !std::isfinite(value))
-        throw WrongLawInput(fmt::format("'{}': '{}' is not a number; write for example {}", whole, text,
-                                        whole.substr(0, whole.find('=')) + "=54.3"));
+        throw WrongLawInput(fmt::format("'{}': '{}' is not a number; write for example {}", whole,
+                                        text, whole.substr(0, whole.find('=')) + "=54.3"));
     return value;
 }
 
 std::string symbols_of(const Passport& law) {
     std::string text;
-    for (const Symbol& s : law.inputs) text += (text.empty() ? "" : " ") + std::string(s.symbol) + "=...";
+    for (const Symbol& s : law.inputs)
+        text += (text.empty() ? "" : " ") + std::string(s.symbol) + "=...";
     return text;
 }
 
@@ -48,9 +51,11 @@ std::vector<double> inputs_of(const Passport& law, const std::vector<std::string
         const auto equals = text.find('=');
         const std::string symbol = text.substr(0, equals);
         std::size_t i = 0;
-        while (i < law.inputs.size() && symbol != law.inputs[i].symbol) ++i;
+        while (i < law.inputs.size() && symbol != law.inputs[i].symbol)
+            ++i;
         if (equals == std::string::npos || i == law.inputs.size())
-            throw WrongLawInput(fmt::format("{} takes no '{}'; it takes {}", law.name, text, symbols_of(law)));
+            throw WrongLawInput(
+                fmt::format("{} takes no '{}'; it takes {}", law.name, text, symbols_of(law)));
         if (found[i]) throw WrongLawInput(fmt::format("'{}' is given twice", symbol));
         found[i] = number(text.substr(equals + 1), text);
     }
@@ -72,14 +77,16 @@ std::string laws_list() {
     table.left(2);
     for (const Passport& law : correlations::registry())
         table.row({std::string(law.name), std::string(law.title), std::string(law.source_key)});
-    return "Laws (finwright laws NAME shows the passport; finwright laws NAME symbol=value ... evaluates)\n" +
+    return "Laws (finwright laws NAME shows the passport; finwright laws NAME symbol=value ... "
+           "evaluates)\n" +
            table.text();
 }
 
 const Passport& law_named(const std::string& name) {
     if (const Passport* law = correlations::find_passport(name)) return *law;
     std::vector<std::string> names;
-    for (const Passport& law : correlations::registry()) names.emplace_back(law.name);
+    for (const Passport& law : correlations::registry())
+        names.emplace_back(law.name);
     const std::string meant = job::nearest_word(name, names);
     throw WrongLawInput(fmt::format("there is no law '{}'{}; finwright laws lists them", name,
                                     meant.empty() ? "" : ", did you mean '" + meant + "'?"));
@@ -91,14 +98,17 @@ std::string law_page(const Passport& law) {
     inputs.left(2);
     inputs.left(3);
     for (const Symbol& s : law.inputs)
-        inputs.row({std::string(s.symbol), std::string(s.unit), std::string(s.meaning), range_of(s)});
+        inputs.row(
+            {std::string(s.symbol), std::string(s.unit), std::string(s.meaning), range_of(s)});
     std::string out = fmt::format("{}: {}\n", law.name, law.title);
     const auto say = [&](const char* what, const std::string& text) {
-        if (!text.empty()) out += wrapped(text, page_width, fmt::format("  {:<10}", what), "            ");
+        if (!text.empty())
+            out += wrapped(text, page_width, fmt::format("  {:<10}", what), "            ");
     };
     say("source", std::string(law.source_key));
     say("equation", std::string(law.equation));
-    say("gives", fmt::format("{} [{}], {}", law.result.symbol, law.result.unit, law.result.meaning));
+    say("gives",
+        fmt::format("{} [{}], {}", law.result.symbol, law.result.unit, law.result.meaning));
     say("error", std::string(law.stated_error));
     say("outside", std::string(law.outside));
     say("note", memory_note(law));
@@ -114,7 +124,8 @@ std::string law_evaluated(const Passport& law, const std::vector<std::string>& v
         out += fmt::format("  {} = {} {}{}\n", s.symbol, inputs[i], s.unit,
                            outside ? "   ! outside " + range_of(s) : "");
     }
-    return out + fmt::format("  {} = {:.9g} {}\n", law.result.symbol, law.evaluate(inputs), law.result.unit);
+    return out + fmt::format("  {} = {:.9g} {}\n", law.result.symbol, law.evaluate(inputs),
+                             law.result.unit);
 }
 
 } // namespace finwright::sheets

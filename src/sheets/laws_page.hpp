@@ -18,6 +18,7 @@ const correlations::Passport& law_named(const std::string& name);
 std::string law_page(const correlations::Passport& law);
 
 /// Inputs as "symbol=number" in the passport's units (SI); all are needed, each once.
-std::string law_evaluated(const correlations::Passport& law, const std::vector<std::string>& values);
+std::string law_evaluated(const correlations::Passport& law,
+                          const std::vector<std::string>& values);
 
 } // namespace finwright::sheets

@@ -21,7 +21,8 @@ using sizing::Refusal;
 namespace {
 
 constexpr std::size_t page_width = 100;
-constexpr std::size_t parts_beside = 5; ///< columns of the budget before it wraps into another block
+constexpr std::size_t parts_beside =
+    5; ///< columns of the budget before it wraps into another block
 
 std::string heading(const std::string& text) {
     return "\n" + text + "\n";
@@ -37,7 +38,8 @@ std::string air_line(const Job& job) {
                                    fixed(sink::duty_of(job).surroundings.pressure / 1e3, 1));
     if (const auto* duct = std::get_if<job::DuctedAir>(&job.air.state)) {
         if (duct->velocity)
-            text += fmt::format(", ducted, {} m/s before the fins", significant(*duct->velocity, 3));
+            text +=
+                fmt::format(", ducted, {} m/s before the fins", significant(*duct->velocity, 3));
         if (duct->flow)
             text += fmt::format(", ducted, {} m³/h", significant(*duct->flow * 3600.0, 3));
     } else {
@@ -58,7 +60,8 @@ std::string budget_block(const Rating& rating, std::size_t from, std::size_t to)
     TextTable table;
     const auto row = [&](const std::string& name, const std::string& unit, auto&& cell) {
         std::vector<std::string> cells{name, unit};
-        for (std::size_t i = from; i < to; ++i) cells.push_back(cell(i));
+        for (std::size_t i = from; i < to; ++i)
+            cells.push_back(cell(i));
         table.row(cells);
     };
     const auto& parts = rating.parts;
@@ -74,10 +77,10 @@ std::string budget_block(const Rating& rating, std::size_t from, std::size_t to)
     row("  interface", "K", [&](std::size_t i) {
         return fixed(parts[i].case_temperature - parts[i].pad_temperature, 1);
     });
-    row("base under the pad", "°C", [&](std::size_t i) { return celsius(parts[i].pad_temperature); });
-    row("  spreading", "K", [&](std::size_t i) {
-        return fixed(parts[i].pad_temperature - air - rating.base_rise, 1);
-    });
+    row("base under the pad", "°C",
+        [&](std::size_t i) { return celsius(parts[i].pad_temperature); });
+    row("  spreading", "K",
+        [&](std::size_t i) { return fixed(parts[i].pad_temperature - air - rating.base_rise, 1); });
     row("base, mean", "°C", [&](std::size_t) { return celsius(air + rating.base_rise); });
     row("  base to air", "K", [&](std::size_t) { return fixed(rating.base_rise, 1); });
     row("inlet air", "°C", [&](std::size_t) { return celsius(air); });
@@ -91,9 +94,9 @@ std::string budget_block(const Rating& rating, std::size_t from, std::size_t to)
 }
 
 std::string budget(const Job& job, const Rating& rating) {
-    std::string out = heading(
-        fmt::format("From junction to air (junction allowed = limit less {} K margin)",
-                    significant(job.limits.margin, 3)));
+    std::string out =
+        heading(fmt::format("From junction to air (junction allowed = limit less {} K margin)",
+                            significant(job.limits.margin, 3)));
     for (std::size_t from = 0; from < rating.parts.size(); from += parts_beside)
         out += budget_block(rating, from, std::min(from + parts_beside, rating.parts.size()));
     return out;
@@ -107,7 +110,8 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     table.row({"fins", fmt::format("{}", g.fins), "", "N"});
     table.row({"fin height off the base", mm(g.height, steps.fin_height), "mm", "H"});
     if (g.draft_tangent > 0.0) {
-        table.row({"fin thickness at the tip", mm(g.tip_thickness(), steps.fin_thickness), "mm", "t tip"});
+        table.row({"fin thickness at the tip", mm(g.tip_thickness(), steps.fin_thickness), "mm",
+                   "t tip"});
         table.row({"fin thickness at the root", millimetres(g.thickness, 2), "mm", "t root"});
     } else {
         table.row({"fin thickness", mm(g.thickness, steps.fin_thickness), "mm", "t"});
@@ -115,33 +119,37 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     table.row({g.draft_tangent > 0.0 ? "gap at the root" : "gap",
                job.sink.width.fixed() ? millimetres(g.gap, 3) : mm(g.gap, steps.gap), "mm", "S"});
     table.row({"base thickness", mm(g.base, steps.base_thickness), "mm", "tb"});
-    table.row({"width across the fins", mm(g.width(), std::min(steps.gap, steps.width)), "mm", "W"});
+    table.row(
+        {"width across the fins", mm(g.width(), std::min(steps.gap, steps.width)), "mm", "W"});
     table.row({"length along the fins", mm(g.length, steps.length), "mm", "L"});
     table.row({"(pitch)", fmt::format("({})", millimetres(g.pitch(), 3)), "mm",
                fmt::format("{} x pitch = {} mm", g.fins - 1,
                            millimetres(double(g.fins - 1) * g.pitch(), 2))});
-    table.row({"(overall height)", fmt::format("({})", millimetres(g.overall_height(), 2)), "mm", ""});
+    table.row(
+        {"(overall height)", fmt::format("({})", millimetres(g.overall_height(), 2)), "mm", ""});
     table.row({"(fin height / gap)", fmt::format("({})", fixed(g.height / g.gap, 2)), "", ""});
-    table.row({"(fin height / thickness)", fmt::format("({})", fixed(g.height / g.tip_thickness(), 2)), "", ""});
+    table.row({"(fin height / thickness)",
+               fmt::format("({})", fixed(g.height / g.tip_thickness(), 2)), "", ""});
     table.row({"(circumscribing circle)",
-               fmt::format("({})", millimetres(std::hypot(g.width(), g.overall_height()), 1)), "mm", ""});
+               fmt::format("({})", millimetres(std::hypot(g.width(), g.overall_height()), 1)), "mm",
+               ""});
     table.row({"(mass per metre)",
-               fmt::format("({})", significant(g.section() * job.sink.alloy.density, 3)), "kg/m", ""});
+               fmt::format("({})", significant(g.section() * job.sink.alloy.density, 3)), "kg/m",
+               ""});
     return heading("Dimensions (derived values in brackets)") + table.text();
 }
 
 std::string key_line(const Rating& rating, const Job& job) {
-    std::string text =
-        fmt::format("{} g; {} °C/W at {} K rise of the hottest pad over inlet air (mean base {} °C/W)",
-                    grams(rating.mass), significant(rating.sink_resistance(), 3),
-                    fixed(rating.hottest_pad_rise, 1), significant(rating.base_resistance(), 3));
+    std::string text = fmt::format(
+        "{} g; {} °C/W at {} K rise of the hottest pad over inlet air (mean base {} °C/W)",
+        grams(rating.mass), significant(rating.sink_resistance(), 3),
+        fixed(rating.hottest_pad_rise, 1), significant(rating.base_resistance(), 3));
     if (!std::holds_alternative<job::StillAir>(job.air.state)) {
         const auto& view = std::get<sink::DuctedAirView<double>>(rating.view);
-        text += fmt::format("; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
-                            significant(rating.pressure_drop, 3),
-                            significant(view.channel_velocity, 3),
-                            significant(view.volume_flow * 3600.0, 3),
-                            celsius(rating.outlet_temperature()));
+        text += fmt::format(
+            "; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
+            significant(rating.pressure_drop, 3), significant(view.channel_velocity, 3),
+            significant(view.volume_flow * 3600.0, 3), celsius(rating.outlet_temperature()));
     }
     return paragraph(text);
 }
@@ -161,13 +169,15 @@ std::string heat_split(const Rating& rating) {
     std::string out = heading("The heat leaves by") + table.text();
     if (const auto* still = std::get_if<sink::StillAirView<double>>(&rating.view))
         out += paragraph(fmt::format(
-            "film {} W/(m² K) in the channels, {} outside; fin efficiency {}; radiation {} per wetted channel area",
+            "film {} W/(m² K) in the channels, {} outside; fin efficiency {}; radiation {} per "
+            "wetted channel area",
             significant(still->channel_film, 3), significant(still->outer_film, 3),
             fixed(still->inner_efficiency, 3), significant(still->channel_radiation, 3)));
     if (const auto* duct = std::get_if<sink::DuctedAirView<double>>(&rating.view))
-        out += paragraph(fmt::format("film {} W/(m² K); fin efficiency {}; Re {} on the hydraulic diameter",
-                                     significant(duct->film, 3), fixed(duct->inner_efficiency, 3),
-                                     significant(duct->reynolds, 3)));
+        out += paragraph(
+            fmt::format("film {} W/(m² K); fin efficiency {}; Re {} on the hydraulic diameter",
+                        significant(duct->film, 3), fixed(duct->inner_efficiency, 3),
+                        significant(duct->reynolds, 3)));
     return out;
 }
 
@@ -178,19 +188,22 @@ std::string binding_table(const Job& job, const std::vector<BindingLimit>& bindi
     table.left(2);
     for (const BindingLimit& limit : binding)
         table.row({limit.name, bound_text(limit), price_text(limit, job.sink.aim)});
-    return heading("Limits that bind, and what easing each would buy (first order, before rounding)") +
+    return heading(
+               "Limits that bind, and what easing each would buy (first order, before rounding)") +
            table.text();
 }
 
 std::string alternatives_table(const Job& job, const Answer& answer) {
     if (answer.alternatives.empty()) return {};
     TextTable table;
-    table.row({"fins", "H", "t", "S", "tb", "W", "L mm", aim_name(job.sink.aim), "against the answer"});
+    table.row(
+        {"fins", "H", "t", "S", "tb", "W", "L mm", aim_name(job.sink.aim), "against the answer"});
     const auto row = [&](const sizing::Design& d) {
         const auto& g = d.rounded;
         const job::Steps& s = job.sink.steps;
         const double more = d.rounded_aim / answer.design.rounded_aim - 1.0;
-        table.row({fmt::format("{}", g.fins), millimetres(g.height, decimals_for_step(s.fin_height)),
+        table.row({fmt::format("{}", g.fins),
+                   millimetres(g.height, decimals_for_step(s.fin_height)),
                    millimetres(g.tip_thickness(), decimals_for_step(s.fin_thickness)),
                    millimetres(g.gap, 2), millimetres(g.base, decimals_for_step(s.base_thickness)),
                    millimetres(g.width(), 1), millimetres(g.length, decimals_for_step(s.length)),
@@ -198,7 +211,8 @@ std::string alternatives_table(const Job& job, const Answer& answer) {
                    &d == &answer.design ? "the answer" : fmt::format("{:+.1f} %", more * 100.0)});
     };
     row(answer.design);
-    for (const auto& d : answer.alternatives) row(d);
+    for (const auto& d : answer.alternatives)
+        row(d);
     return heading("Nearest alternatives, each optimised and rounded") + table.text();
 }
 
@@ -206,8 +220,8 @@ std::string laws_used(const Rating& rating) {
     std::string lines, warnings;
     for (const sink::LawUse& use : rating.laws) {
         const auto* passport = correlations::find_passport(use.passport);
-        lines += wrapped(fmt::format("{}: {} [{}], {}", use.role, passport->title, passport->source_key,
-                                     passport->stated_error),
+        lines += wrapped(fmt::format("{}: {} [{}], {}", use.role, passport->title,
+                                     passport->source_key, passport->stated_error),
                          page_width, "  ", "      ");
         for (const std::string& left : use.ranges_left())
             warnings += wrapped(left, page_width, "  ! ", "    ");
@@ -219,21 +233,23 @@ std::string laws_used(const Rating& rating) {
 
 std::string caution_list(const Job& job, const Rating& rating) {
     std::string out = heading("Cautions");
-    for (const std::string& text : cautions(job, rating)) out += wrapped(text, page_width, "  - ", "    ");
+    for (const std::string& text : cautions(job, rating))
+        out += wrapped(text, page_width, "  - ", "    ");
     return out;
 }
 
 std::vector<std::string> levers(const Job& job, const Refusal& refusal) {
     std::vector<std::string> list;
-    list.push_back(fmt::format("Fewer watts: this sink serves {} W instead of {} W, all parts in proportion.",
-                               significant(refusal.possible_power, 3),
-                               significant(job.total_power(), 3)));
+    list.push_back(
+        fmt::format("Fewer watts: this sink serves {} W instead of {} W, all parts in proportion.",
+                    significant(refusal.possible_power, 3), significant(job.total_power(), 3)));
     for (std::size_t i = 0; i < job.parts.size(); ++i) {
         const job::Part& part = job.parts[i];
         if (part.name == refusal.part && part.interface > 0.0)
-            list.push_back(fmt::format("A better interface: {} loses {} K in it; halving it gains {} K.",
-                                       part.name, fixed(part.interface * part.power, 1),
-                                       fixed(0.5 * part.interface * part.power, 1)));
+            list.push_back(
+                fmt::format("A better interface: {} loses {} K in it; halving it gains {} K.",
+                            part.name, fixed(part.interface * part.power, 1),
+                            fixed(0.5 * part.interface * part.power, 1)));
     }
     for (const BindingLimit& limit : refusal.binding)
         list.push_back(fmt::format("More room: {} {}: {}.", limit.name, bound_text(limit),
@@ -248,8 +264,8 @@ std::vector<std::string> levers(const Job& job, const Refusal& refusal) {
 std::string interface_forms(const job::Part& part) {
     if (part.interface == 0.0) return "none";
     const double area_resistance = part.interface * part.pad_across * part.pad_along;
-    return fmt::format("{} K/W = {} K cm²/W = {} °C in²/W over the pad", significant(part.interface, 3),
-                       significant(area_resistance * 1e4, 3),
+    return fmt::format("{} K/W = {} K cm²/W = {} °C in²/W over the pad",
+                       significant(part.interface, 3), significant(area_resistance * 1e4, 3),
                        significant(area_resistance / 6.4516e-4, 3));
 }
 
@@ -258,17 +274,17 @@ std::string understood_parts(const Job& job) {
     table.left(5);
     table.row({"part", "W", "limit °C", "junction-case K/W", "pad mm", "interface"});
     for (const job::Part& part : job.parts)
-        table.row({part.name, significant(part.power, 3),
-                   part.junction_limit ? celsius(*part.junction_limit, 0) : "-",
-                   significant(part.junction_to_case, 3),
-                   fmt::format("{} x {}", millimetres(part.pad_across), millimetres(part.pad_along)),
-                   interface_forms(part)});
+        table.row(
+            {part.name, significant(part.power, 3),
+             part.junction_limit ? celsius(*part.junction_limit, 0) : "-",
+             significant(part.junction_to_case, 3),
+             fmt::format("{} x {}", millimetres(part.pad_across), millimetres(part.pad_along)),
+             interface_forms(part)});
     std::string out = heading("Parts") + table.text();
     const auto allowed = sizing::allowed_pad_rises(job);
     TextTable budget;
     for (std::size_t i = 0; i < job.parts.size(); ++i)
-        if (allowed[i])
-            budget.row({job.parts[i].name, fixed(*allowed[i], 1), "K"});
+        if (allowed[i]) budget.row({job.parts[i].name, fixed(*allowed[i], 1), "K"});
     return out + heading("Rise each pad may have over the inlet air") + budget.text();
 }
 
@@ -291,10 +307,14 @@ std::string understood_space(const Job& job) {
     row("base thickness", job.sink.base_thickness);
     row("width", job.sink.width);
     row("length", job.sink.length);
-    const auto side = [](const std::optional<double>& v) { return v ? millimetres(*v) : std::string("free"); };
+    const auto side = [](const std::optional<double>& v) {
+        return v ? millimetres(*v) : std::string("free");
+    };
     const job::Space& space = job.limits.space;
-    table.row({"space", fmt::format("{} wide, {} high, {} long", side(space.width), side(space.height),
-                                    side(space.length)), "mm"});
+    table.row({"space",
+               fmt::format("{} wide, {} high, {} long", side(space.width), side(space.height),
+                           side(space.length)),
+               "mm"});
     return heading("Dimensions left to the search") + table.text();
 }
 
@@ -323,14 +343,16 @@ std::string rate_page(const Job& job, const Rating& rating) {
 }
 
 std::string refusal_page(const Job& job, const Refusal& refusal) {
-    std::string out = title_lines(job) + heading("Not possible as stated") + paragraph(refusal.reason);
+    std::string out =
+        title_lines(job) + heading("Not possible as stated") + paragraph(refusal.reason);
     if (!refusal.closest) return out;
     const Rating& closest = *refusal.closest;
     out += paragraph(fmt::format("{} is {} K too hot on the sink that comes nearest:", refusal.part,
                                  fixed(refusal.shortfall, 1)));
     out += key_line(closest, job) + dimension_table(job, closest.geometry) + budget(job, closest);
     out += heading("What is left to try");
-    for (const std::string& lever : levers(job, refusal)) out += wrapped(lever, page_width, "  - ", "    ");
+    for (const std::string& lever : levers(job, refusal))
+        out += wrapped(lever, page_width, "  - ", "    ");
     return out;
 }
 

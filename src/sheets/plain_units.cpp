@@ -22,11 +22,16 @@ struct Shown {
 
 Shown shown(Measure measure) {
     switch (measure) {
-    case Measure::length: return {" mm", 1e3, 1e-3, 1};
-    case Measure::ratio: return {"", 1.0, 1.0, 1};
-    case Measure::mass: return {" g", 1e3, 10e-3, 0};
-    case Measure::pressure: return {" Pa", 1.0, 1.0, 1};
-    case Measure::rise: return {" K", 1.0, 1.0, 1};
+    case Measure::length:
+        return {" mm", 1e3, 1e-3, 1};
+    case Measure::ratio:
+        return {"", 1.0, 1.0, 1};
+    case Measure::mass:
+        return {" g", 1e3, 10e-3, 0};
+    case Measure::pressure:
+        return {" Pa", 1.0, 1.0, 1};
+    case Measure::rise:
+        return {" K", 1.0, 1.0, 1};
     }
     return {"", 1.0, 1.0, 1};
 }
@@ -39,12 +44,18 @@ std::string eased_by(const BindingLimit& limit) {
 
 std::string aim_change(Aim aim, double value) {
     switch (aim) {
-    case Aim::mass: return significant(value * 1e3, 2) + " g";
-    case Aim::volume: return significant(value * 1e6, 2) + " cm³";
-    case Aim::height: return significant(value * 1e3, 2) + " mm";
-    case Aim::footprint: return significant(value * 1e4, 2) + " cm²";
-    case Aim::resistance: return significant(value, 2) + " °C/W";
-    case Aim::pressure_drop: return significant(value, 2) + " Pa";
+    case Aim::mass:
+        return significant(value * 1e3, 2) + " g";
+    case Aim::volume:
+        return significant(value * 1e6, 2) + " cm³";
+    case Aim::height:
+        return significant(value * 1e3, 2) + " mm";
+    case Aim::footprint:
+        return significant(value * 1e4, 2) + " cm²";
+    case Aim::resistance:
+        return significant(value, 2) + " °C/W";
+    case Aim::pressure_drop:
+        return significant(value, 2) + " Pa";
     }
     return {};
 }
@@ -53,24 +64,36 @@ std::string aim_change(Aim aim, double value) {
 
 std::string aim_name(Aim aim) {
     switch (aim) {
-    case Aim::mass: return "mass";
-    case Aim::volume: return "volume";
-    case Aim::height: return "overall height";
-    case Aim::footprint: return "footprint";
-    case Aim::resistance: return "sink resistance";
-    case Aim::pressure_drop: return "pressure drop";
+    case Aim::mass:
+        return "mass";
+    case Aim::volume:
+        return "volume";
+    case Aim::height:
+        return "overall height";
+    case Aim::footprint:
+        return "footprint";
+    case Aim::resistance:
+        return "sink resistance";
+    case Aim::pressure_drop:
+        return "pressure drop";
     }
     return {};
 }
 
 std::string aim_text(Aim aim, double value) {
     switch (aim) {
-    case Aim::mass: return grams(value) + " g";
-    case Aim::volume: return significant(value * 1e6, 4) + " cm³";
-    case Aim::height: return millimetres(value) + " mm";
-    case Aim::footprint: return significant(value * 1e4, 4) + " cm²";
-    case Aim::resistance: return significant(value, 3) + " °C/W";
-    case Aim::pressure_drop: return significant(value, 3) + " Pa";
+    case Aim::mass:
+        return grams(value) + " g";
+    case Aim::volume:
+        return significant(value * 1e6, 4) + " cm³";
+    case Aim::height:
+        return millimetres(value) + " mm";
+    case Aim::footprint:
+        return significant(value * 1e4, 4) + " cm²";
+    case Aim::resistance:
+        return significant(value, 3) + " °C/W";
+    case Aim::pressure_drop:
+        return significant(value, 3) + " Pa";
     }
     return {};
 }

@@ -82,7 +82,8 @@ Json laws_json(const std::vector<sink::LawUse>& laws) {
 
 Json rating_json(const sink::Rating& r) {
     Json parts = Json::array();
-    for (const auto& part : r.parts) parts.push_back(part_json(part));
+    for (const auto& part : r.parts)
+        parts.push_back(part_json(part));
     return {{"power_W", r.power},
             {"air_temperature_K", r.air_temperature},
             {"mass_kg", r.mass},
@@ -146,17 +147,18 @@ std::string finished(const Json& json) {
 
 std::string results_json(const job::Job& job, const sizing::Answer& answer) {
     Json alternatives = Json::array();
-    for (const auto& d : answer.alternatives) alternatives.push_back(design_json(d));
-    return finished({{"result", "sized"},
-                     {"job", job_json(job)},
-                     {"geometry", geometry_json(answer.rating.geometry)},
-                     {"rating", rating_json(answer.rating)},
-                     {"design", design_json(answer.design)},
-                     {"binding_limits",
-                      binding_json(answer.binding, "aim_saved_SI_per_SI_unit_eased")},
-                     {"alternatives", alternatives},
-                     {"fin_counts_tried", answer.fin_counts_tried},
-                     {"cautions", cautions(job, answer.rating)}});
+    for (const auto& d : answer.alternatives)
+        alternatives.push_back(design_json(d));
+    return finished(
+        {{"result", "sized"},
+         {"job", job_json(job)},
+         {"geometry", geometry_json(answer.rating.geometry)},
+         {"rating", rating_json(answer.rating)},
+         {"design", design_json(answer.design)},
+         {"binding_limits", binding_json(answer.binding, "aim_saved_SI_per_SI_unit_eased")},
+         {"alternatives", alternatives},
+         {"fin_counts_tried", answer.fin_counts_tried},
+         {"cautions", cautions(job, answer.rating)}});
 }
 
 std::string results_json(const job::Job& job, const sink::Rating& rating) {

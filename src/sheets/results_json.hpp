@@ -1,5 +1,6 @@
 #pragma once
-// The whole result for other programs: SI, the unit in every key, the law behind every film coefficient.
+// The whole result for other programs: SI, the unit in every key, the law behind every film
+// coefficient.
 
 #include "src/job/job.hpp"
 #include "src/sink/rating.hpp"

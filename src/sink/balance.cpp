@@ -21,18 +21,15 @@ auto with_model(const Geometry<T>& g, const Duty& duty, Visitor&& visit) {
     return visit(DuctedSink<T>(g, duty.surroundings, duty.material));
 }
 
-template <class T>
-T pressure_lost(const StillAirSink<T>&, const T&) {
+template <class T> T pressure_lost(const StillAirSink<T>&, const T&) {
     return T(0.0);
 }
-template <class T>
-T pressure_lost(const DuctedSink<T>& sink, const T& base_rise) {
+template <class T> T pressure_lost(const DuctedSink<T>& sink, const T& base_rise) {
     return sink.pressure_drop(base_rise);
 }
 
 /// Secant in (log rise, log heat): the curve is almost a straight line there.
-template <class Model>
-double balanced_rise(const Model& model, double power) {
+template <class Model> double balanced_rise(const Model& model, double power) {
     const auto log_heat = [&](double log_rise) {
         return std::log(model.shed(std::exp(log_rise)).total() / power);
     };
@@ -60,24 +57,25 @@ void require_room(const Geometry<double>& g) {
 Geometry<Dual<6>> widened(const Geometry<Dual<5>>& g) {
     const auto widen = [](const Dual<5>& a) {
         Dual<6> b(a.value);
-        for (std::size_t i = 0; i < 5; ++i) b.slope[i] = a.slope[i];
+        for (std::size_t i = 0; i < 5; ++i)
+            b.slope[i] = a.slope[i];
         return b;
     };
-    return {g.fins,         widen(g.height), widen(g.thickness), widen(g.gap),
+    return {g.fins,        widen(g.height), widen(g.thickness), widen(g.gap),
             widen(g.base), widen(g.length), g.draft_tangent};
 }
 
 /// f(x, rise) with rise = rise(x): total slopes.
 Dual<5> along(const Dual<6>& f, const Dual<5>& rise) {
     Dual<5> out(f.value);
-    for (std::size_t i = 0; i < 5; ++i) out.slope[i] = f.slope[i] + f.slope[5] * rise.slope[i];
+    for (std::size_t i = 0; i < 5; ++i)
+        out.slope[i] = f.slope[i] + f.slope[5] * rise.slope[i];
     return out;
 }
 
 } // namespace
 
-template <class T>
-Geometry<double> plain(const Geometry<T>& g) {
+template <class T> Geometry<double> plain(const Geometry<T>& g) {
     using correlations::value_of;
     return {g.fins,           value_of(g.height), value_of(g.thickness), value_of(g.gap),
             value_of(g.base), value_of(g.length), g.draft_tangent};
@@ -104,7 +102,8 @@ Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty) {
         const auto rise6 = Dual<6>::variable(rise, 5);
         const Dual<6> heat = model.shed(rise6).total();
         Dual<5> implicit(rise);
-        for (std::size_t i = 0; i < 5; ++i) implicit.slope[i] = -heat.slope[i] / heat.slope[5];
+        for (std::size_t i = 0; i < 5; ++i)
+            implicit.slope[i] = -heat.slope[i] / heat.slope[5];
         return Balance<Dual<5>>{implicit, along(pressure_lost(model, rise6), implicit)};
     });
 }

@@ -9,15 +9,15 @@
 namespace finwright::sink {
 
 /// The sink in balance with its duty, before spreading.
-template <class T>
-struct Balance {
+template <class T> struct Balance {
     T base_rise = T(0.0);     ///< mean of the base over the inlet air [K]
     T pressure_drop = T(0.0); ///< 0 in still air [Pa]
 };
 
 /// Solves shed(base rise) = power. The heat grows with the rise without end, so there is one root;
-/// Newton in logarithms reaches |shed/power - 1| < 1e-12. Derivatives by the implicit function theorem.
-/// Throws std::domain_error if the geometry has no room for air (gap or fin tip not positive).
+/// Newton in logarithms reaches |shed/power - 1| < 1e-12. Derivatives by the implicit function
+/// theorem. Throws std::domain_error if the geometry has no room for air (gap or fin tip not
+/// positive).
 Balance<double> balance(const Geometry<double>& g, const Duty& duty);
 Balance<correlations::Dual<5>> balance(const Geometry<correlations::Dual<5>>& g, const Duty& duty);
 

@@ -10,8 +10,7 @@ namespace finwright::sink {
 
 namespace {
 
-template <class T>
-T stated_flow(const Geometry<T>& g, const Surroundings& s) {
+template <class T> T stated_flow(const Geometry<T>& g, const Surroundings& s) {
     if (const auto* flow = std::get_if<DuctFlow>(&s.air)) return T(flow->volume);
     return std::get<DuctVelocity>(s.air).approach * g.width() * g.height;
 }
@@ -24,11 +23,11 @@ DuctedSink<T>::DuctedSink(const Geometry<T>& geometry, const Surroundings& surro
     : g_(geometry), surroundings_(surroundings), material_(material),
       fin_shape_(fin_shape(geometry, material.conductivity)),
       volume_flow_(stated_flow(geometry, surroundings)),
-      mass_flow_(volume_flow_ *
-                 correlations::air_at(surroundings.air_temperature, surroundings.pressure).density) {}
+      mass_flow_(
+          volume_flow_ *
+          correlations::air_at(surroundings.air_temperature, surroundings.pressure).density) {}
 
-template <class T>
-DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
+template <class T> DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
     using std::max;
     using std::min;
     const T gap = g_.mean_gap();
@@ -59,34 +58,30 @@ DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
     return v;
 }
 
-template <class T>
-T DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
+template <class T> T DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
     using std::expm1;
     return -v.capacity_flow * expm1(-v.transfer_units) * base_rise;
 }
 
-template <class T>
-HeatPaths<T> DuctedSink<T>::shed(const T& base_rise) const {
+template <class T> HeatPaths<T> DuctedSink<T>::shed(const T& base_rise) const {
     HeatPaths<T> q;
     q.channels = heat(view(base_rise), base_rise);
     return q;
 }
 
-template <class T>
-T DuctedSink<T>::pressure_drop(const T& base_rise) const {
+template <class T> T DuctedSink<T>::pressure_drop(const T& base_rise) const {
     const DuctedAirView<T> v = view(base_rise);
-    const T bulk_mean =
-        surroundings_.air_temperature + 0.5 * heat(v, base_rise) / v.capacity_flow;
+    const T bulk_mean = surroundings_.air_temperature + 0.5 * heat(v, base_rise) / v.capacity_flow;
     const auto air = correlations::air_at(bulk_mean, surroundings_.pressure);
     const T free_area = double(g_.fins - 1) * g_.mean_gap() * g_.height;
     const T mass_flux = mass_flow_ / free_area;
     const T head = 0.5 * mass_flux * mass_flux / air.density;
     const T length_ratio = g_.length / v.hydraulic_diameter;
-    return head * (correlations::entry_loss(v.free_area_ratio) +
-                   4.0 * correlations::fapp_all_regimes(v.reynolds, v.aspect, length_ratio) *
-                       length_ratio +
-                   correlations::exit_loss(v.free_area_ratio,
-                                           correlations::momentum_factor(v.reynolds)));
+    return head *
+           (correlations::entry_loss(v.free_area_ratio) +
+            4.0 * correlations::fapp_all_regimes(v.reynolds, v.aspect, length_ratio) *
+                length_ratio +
+            correlations::exit_loss(v.free_area_ratio, correlations::momentum_factor(v.reynolds)));
 }
 
 template class DuctedSink<double>;

@@ -1,12 +1,12 @@
 #pragma once
 // Heat shed and pressure lost when a duct leads stated air through the fins.
 //
-// Model. The duct fits the fins closely: its section is width x fin height, its lid touches the tips, its
-// sides the outer faces, and the base lies outside it. Heat leaves through the channels only (fin faces
-// and base strips); radiation into the duct is left out, on the safe side. Film coefficients are on the
-// log-mean difference (all flow regimes joined continuously), so the air heats along L and
-// Q = m cp (1 - exp(-UA/(m cp))) theta_base. Gas properties for the film at inlet + half the base rise;
-// density for the pressure drop at the bulk mean.
+// Model. The duct fits the fins closely: its section is width x fin height, its lid touches the
+// tips, its sides the outer faces, and the base lies outside it. Heat leaves through the channels
+// only (fin faces and base strips); radiation into the duct is left out, on the safe side. Film
+// coefficients are on the log-mean difference (all flow regimes joined continuously), so the air
+// heats along L and Q = m cp (1 - exp(-UA/(m cp))) theta_base. Gas properties for the film at inlet
+// + half the base rise; density for the pressure drop at the bulk mean.
 
 #include "src/sink/duty.hpp"
 #include "src/sink/geometry.hpp"
@@ -14,8 +14,7 @@
 
 namespace finwright::sink {
 
-template <class T>
-struct DuctedAirView {
+template <class T> struct DuctedAirView {
     T film_temperature = T(0.0);   ///< [K]
     T approach_velocity = T(0.0);  ///< before the fins, inlet density [m/s]
     T channel_velocity = T(0.0);   ///< between the fins, inlet density [m/s]
@@ -32,8 +31,7 @@ struct DuctedAirView {
     T transfer_units = T(0.0);     ///< UA/(m cp) [-]
 };
 
-template <class T>
-class DuctedSink {
+template <class T> class DuctedSink {
 public:
     DuctedSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                const Material& material);

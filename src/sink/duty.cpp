@@ -6,7 +6,8 @@ namespace finwright::sink {
 
 double Duty::power() const {
     double sum = 0.0;
-    for (const job::Part& part : parts) sum += part.power;
+    for (const job::Part& part : parts)
+        sum += part.power;
     return sum;
 }
 

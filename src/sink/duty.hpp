@@ -1,5 +1,6 @@
 #pragma once
-// What the part is asked to do, and the air it does it in. Everything here is fixed while dimensions vary.
+// What the part is asked to do, and the air it does it in. Everything here is fixed while
+// dimensions vary.
 
 #include "src/job/job.hpp"
 #include <optional>
@@ -18,7 +19,8 @@ struct StillAir {
     ChannelLaw channel_law = ChannelLaw::u_channel;
 };
 
-/// The air stated for a duct that fits the fins closely: its velocity before the fins, or its volume flow.
+/// The air stated for a duct that fits the fins closely: its velocity before the fins, or its
+/// volume flow.
 struct DuctVelocity {
     double approach = 0.0; ///< over the duct section, width x fin height [m/s]
 };

@@ -9,14 +9,14 @@
 //    |__________________________|    base thickness tb
 //    <-------- width W -------->     the first and last fin stand on the edges of the base
 //
-// Thickness and gap are taken at the root; a draft makes fins thinner and gaps wider towards the tip.
+// Thickness and gap are taken at the root; a draft makes fins thinner and gaps wider towards the
+// tip.
 
 #include <string>
 
 namespace finwright::sink {
 
-template <class T>
-struct Geometry {
+template <class T> struct Geometry {
     int fins = 2;
     T height;                   ///< H, off the base [m]
     T thickness;                ///< t, at the root [m]
@@ -40,13 +40,11 @@ struct Geometry {
 };
 
 /// Width that N fins and their gaps take, solved for the gap [m].
-template <class T>
-T gap_for_width(int fins, const T& width, const T& thickness) {
+template <class T> T gap_for_width(int fins, const T& width, const T& thickness) {
     return (width - double(fins) * thickness) / double(fins - 1);
 }
 
 /// The same part with its dimensions as plain numbers.
-template <class T>
-Geometry<double> plain(const Geometry<T>& g);
+template <class T> Geometry<double> plain(const Geometry<T>& g);
 
 } // namespace finwright::sink

@@ -7,9 +7,10 @@
 
 namespace finwright::sink {
 
-/// Pad centres and sides on a base of width x length [m]. A coordinate the job gives as a share moves
-/// with the side. Parts without a place stand in one row across the width at mid length, each in a
-/// stretch of the width in proportion to its pad, so that they fit whenever their pads add up to less.
+/// Pad centres and sides on a base of width x length [m]. A coordinate the job gives as a share
+/// moves with the side. Parts without a place stand in one row across the width at mid length, each
+/// in a stretch of the width in proportion to its pad, so that they fit whenever their pads add up
+/// to less.
 template <class T>
 std::vector<correlations::Pad<T>> pads_on_base(const std::vector<job::Part>& parts, const T& width,
                                                const T& length);

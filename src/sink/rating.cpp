@@ -35,8 +35,8 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
         uses.push_back({"elenbaas", "channels", {v.elenbaas}});
         break;
     }
-    uses.push_back({"vertical_laminar", "outer faces, tips, edges, rim",
-                    {v.rayleigh_length, v.prandtl}});
+    uses.push_back(
+        {"vertical_laminar", "outer faces, tips, edges, rim", {v.rayleigh_length, v.prandtl}});
     uses.push_back({"channel_opening", "radiation of the channels", {gap, g.height, g.length}});
     return uses;
 }
@@ -84,20 +84,17 @@ double Rating::outlet_temperature() const {
 template <class T>
 std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
     const T film = duty.power() / (base_rise * g.footprint());
-    const correlations::Slab<T> slab{g.width(), g.length, g.base, T(duty.material.conductivity),
-                                     film};
-    const auto pads = pads_on_base(duty.parts, slab.width, slab.length);
-    const std::vector<T> influence = correlations::influence_matrix(slab, pads);
-    std::vector<T> rises(pads.size(), T(0.0));
-    for (std::size_t i = 0; i < pads.size(); ++i)
-        for (std::size_t j = 0; j < pads.size(); ++j)
-            rises[i] += influence[i * pads.size() + j] * duty.parts[j].power;
-    return rises;
+    const correlations::Slab<T> slab{g.width(), g.length, g.base, duty.material.conductivity, film};
+    std::vector<double> powers;
+    for (const job::Part& part : duty.parts)
+        powers.push_back(part.power);
+    return correlations::pad_mean_rises(slab, pads_on_base(duty.parts, slab.width, slab.length),
+                                        powers);
 }
 
 template std::vector<double> pad_rises(const Geometry<double>&, const Duty&, const double&);
-template std::vector<correlations::Dual<5>>
-pad_rises(const Geometry<correlations::Dual<5>>&, const Duty&, const correlations::Dual<5>&);
+template std::vector<correlations::Dual<5>> pad_rises(const Geometry<correlations::Dual<5>>&,
+                                                      const Duty&, const correlations::Dual<5>&);
 
 Rating rate(const Geometry<double>& g, const Duty& duty) {
     const Balance<double> settled = balance(g, duty);

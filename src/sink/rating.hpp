@@ -1,6 +1,6 @@
 #pragma once
-// How one sink does on one duty: every temperature from junction to air, where the heat goes, what the
-// air loses, and which laws say so.
+// How one sink does on one duty: every temperature from junction to air, where the heat goes, what
+// the air loses, and which laws say so.
 
 #include "correlations/numbers/dual.hpp"
 #include "src/sink/balance.hpp"

@@ -21,8 +21,7 @@ StillAirSink<T>::StillAirSink(const Geometry<T>& geometry, const Surroundings& s
     const T gap = g_.mean_gap();
     wetted_ = (2.0 * g_.height + g_.gap) * g_.length;
     exchange_ = correlations::channel_radiation_conductance(
-        material.emissivity, wetted_,
-        correlations::channel_opening(gap, g_.height, g_.length));
+        material.emissivity, wetted_, correlations::channel_opening(gap, g_.height, g_.length));
     fin_shape_ = fin_shape(g_, material.conductivity);
     edges_ = 2.0 * g_.mean_thickness() * g_.height;
     tip_ = g_.tip_thickness() * g_.length;
@@ -44,8 +43,7 @@ T StillAirSink<T>::channel_coefficient(const StillAirView<T>& v, const T& conduc
            correlations::hydraulic_radius(gap, g_.height);
 }
 
-template <class T>
-StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
+template <class T> StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
     const double ambient = surroundings_.air_temperature;
     const T gap = g_.mean_gap();
     StillAirView<T> v;
@@ -63,15 +61,13 @@ StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
     v.channel_film = channel_coefficient(v, air.conductivity);
     v.outer_film = correlations::nusselt_vertical_laminar(v.rayleigh_length, v.prandtl) *
                    air.conductivity / g_.length;
-    const T black =
-        correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(ambient));
+    const T black = correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(ambient));
     v.channel_radiation = black * exchange_ / wetted_;
     v.outer_radiation = material_.emissivity * black;
     return v;
 }
 
-template <class T>
-void StillAirSink<T>::efficiencies(StillAirView<T>& v) const {
+template <class T> void StillAirSink<T>::efficiencies(StillAirView<T>& v) const {
     const T face = g_.height * g_.length;
     const T inside = v.channel_film + v.channel_radiation;
     const T outside = v.outer_film + v.outer_radiation;
@@ -80,8 +76,7 @@ void StillAirSink<T>::efficiencies(StillAirView<T>& v) const {
     v.outer_efficiency = efficiency(T(face * (inside + outside) + ends), fin_shape_);
 }
 
-template <class T>
-StillAirView<T> StillAirSink<T>::view(const T& base_rise) const {
+template <class T> StillAirView<T> StillAirSink<T>::view(const T& base_rise) const {
     const T fin_share = 2.0 * g_.height / (2.0 * g_.height + g_.gap);
     StillAirView<T> v = films(base_rise);
     efficiencies(v);
@@ -96,7 +91,8 @@ template <class T>
 HeatPaths<T> StillAirSink<T>::paths(const StillAirView<T>& v, const T& base_rise) const {
     const double n = g_.fins;
     const T face = g_.height * g_.length;
-    // Effective areas: each fin face counts at its fin's mean rise, base strips and rim at the base's.
+    // Effective areas: each fin face counts at its fin's mean rise, base strips and rim at the
+    // base's.
     const T fins_mean = (n - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency;
     const T inside = face * (2.0 * (n - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency) +
                      (n - 1.0) * g_.gap * g_.length;
@@ -113,8 +109,7 @@ HeatPaths<T> StillAirSink<T>::paths(const StillAirView<T>& v, const T& base_rise
     return q;
 }
 
-template <class T>
-HeatPaths<T> StillAirSink<T>::shed(const T& base_rise) const {
+template <class T> HeatPaths<T> StillAirSink<T>::shed(const T& base_rise) const {
     return paths(view(base_rise), base_rise);
 }
 

@@ -17,6 +17,9 @@ namespace {
 constexpr double widest = 0.6, longest = 1.0, highest = 0.25, thickest_fin = 0.02,
                  thickest_base = 0.05, lowest_fin = 1e-3;
 constexpr int most_fins = 400;
+// The width limit itself is a constraint; rooms reach a little beyond it so as not to state it
+// twice. [-]
+constexpr double beyond_width = 1.1;
 
 Room room(double lower, std::string lower_reason, double upper, std::string upper_reason,
           double step) {
@@ -71,13 +74,14 @@ std::array<Room, dimension_count> rooms_of(const Job& job, int fins) {
 
     Room& thickness = rooms[std::size_t(Dimension::thickness)];
     thickness = room(thinnest, "process", thickest_fin, "search range", sink.steps.fin_thickness);
-    cap(thickness, (width.value - double(fins - 1) * narrowest) / double(fins), "width");
+    cap(thickness, beyond_width * (width.value - double(fins - 1) * narrowest) / double(fins),
+        "search range");
     narrow(thickness, sink.fin_thickness);
 
     Room& gap = rooms[std::size_t(Dimension::gap)];
     gap = room(narrowest, "process",
-               (width.value - double(fins) * thinnest) / double(fins - 1), "width",
-               sink.steps.gap);
+               beyond_width * (width.value - double(fins) * thinnest) / double(fins - 1),
+               "search range", sink.steps.gap);
     narrow(gap, sink.gap);
 
     Room& base = rooms[std::size_t(Dimension::base)];
@@ -108,8 +112,8 @@ void add_width_limits(DesignSpace& space, const Job& job) {
     }
     if (space.width_rule == WidthRule::sets_thickness) {
         const Room& thickness = space.rooms[std::size_t(Dimension::thickness)];
-        space.limits.push_back(
-            {LimitKind::thickness_at_least, thickness.lower, "fin thickness", thickness.lower_reason});
+        space.limits.push_back({LimitKind::thickness_at_least, thickness.lower, "fin thickness",
+                                thickness.lower_reason});
         return;
     }
     const Widest width = widest_of(job);
@@ -140,17 +144,15 @@ void add_shape_limits(DesignSpace& space, const Job& job) {
 }
 
 void add_duty_limits(DesignSpace& space, const Job& job) {
-    if (job.limits.mass)
-        space.limits.push_back({LimitKind::mass, *job.limits.mass, "mass", "job"});
+    if (job.limits.mass) space.limits.push_back({LimitKind::mass, *job.limits.mass, "mass", "job"});
     if (job.limits.pressure_drop)
         space.limits.push_back(
             {LimitKind::pressure_drop, *job.limits.pressure_drop, "pressure drop", "job"});
     const auto allowed = allowed_pad_rises(job);
     for (std::size_t i = 0; i < allowed.size(); ++i) {
         if (!allowed[i]) continue;
-        const bool by_target =
-            job.limits.sink_resistance &&
-            *allowed[i] == *job.limits.sink_resistance * job.total_power();
+        const bool by_target = job.limits.sink_resistance &&
+                               *allowed[i] == *job.limits.sink_resistance * job.total_power();
         space.limits.push_back({LimitKind::pad_rise, *allowed[i],
                                 fmt::format("pad rise of {}", job.parts[i].name),
                                 by_target ? "target" : "junction", i});
@@ -177,7 +179,8 @@ FinCounts fin_counts(const Job& job) {
     const double width = widest_of(job).value;
     const double thinnest =
         std::max(job.sink.process.smallest_thickness, job.sink.fin_thickness.from.value_or(0.0));
-    const double narrowest = std::max(job.sink.process.smallest_gap, job.sink.gap.from.value_or(0.0));
+    const double narrowest =
+        std::max(job.sink.process.smallest_gap, job.sink.gap.from.value_or(0.0));
     const int fit = int(std::floor((width + narrowest) / (thinnest + narrowest) + 1e-9));
     const int from = std::max(2, int(job.sink.fins.from.value_or(2.0)));
     const int to = std::min({fit, int(job.sink.fins.to.value_or(most_fins)), most_fins});

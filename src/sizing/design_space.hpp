@@ -1,6 +1,7 @@
 #pragma once
-// What a design may be: which dimensions the search may move between which bounds, and every limit it must
-// keep. Written for one fin count at a time; limits are data, so that the answer can name the ones that bind.
+// What a design may be: which dimensions the search may move between which bounds, and every limit
+// it must keep. Written for one fin count at a time; limits are data, so that the answer can name
+// the ones that bind.
 
 #include "src/job/job.hpp"
 #include "src/sink/duty.hpp"
@@ -11,8 +12,8 @@
 
 namespace finwright::sizing {
 
-/// The dimensions a search can move, in the order derivatives are carried. The thickness is the fin's at
-/// its tip, where it is thinnest; with a draft the root follows from it.
+/// The dimensions a search can move, in the order derivatives are carried. The thickness is the
+/// fin's at its tip, where it is thinnest; with a draft the root follows from it.
 enum class Dimension { height, thickness, gap, base, length };
 inline constexpr std::size_t dimension_count = 5;
 
@@ -22,7 +23,7 @@ struct Room {
     double upper = 0.0; ///< [m]
     std::string lower_reason;
     std::string upper_reason;
-    double step = 0.0;  ///< the shop's increment [m]
+    double step = 0.0; ///< the shop's increment [m]
     bool fixed() const { return lower == upper; }
 };
 
@@ -46,8 +47,9 @@ enum class LimitKind {
 struct Limit {
     LimitKind kind;
     double bound;
-    std::string name;     ///< for the reader: "fin height / gap"
-    std::string reason;   ///< where the bound comes from: "extruded-easy", "space", "junction of bridge"
+    std::string name; ///< for the reader: "fin height / gap"
+    std::string
+        reason; ///< where the bound comes from: "extruded-easy", "space", "junction of bridge"
     std::size_t part = 0; ///< for pad_rise
 };
 
@@ -72,7 +74,8 @@ FinCounts fin_counts(const job::Job& job);
 /// The space at one fin count; empty when some dimension has no room left.
 std::optional<DesignSpace> design_space(const job::Job& job, int fins);
 
-/// Rise each pad is allowed over the inlet air [K]; empty where neither a junction limit nor a target says.
+/// Rise each pad is allowed over the inlet air [K]; empty where neither a junction limit nor a
+/// target says.
 std::vector<std::optional<double>> allowed_pad_rises(const job::Job& job);
 
 } // namespace finwright::sizing

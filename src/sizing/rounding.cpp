@@ -50,7 +50,8 @@ std::optional<Rounded> round_design(SearchProblem& problem, std::span<const doub
     std::vector<std::vector<double>> points = combinations(axes);
 
     std::vector<double> aims(points.size());
-    for (std::size_t i = 0; i < points.size(); ++i) aims[i] = problem.quick_objective(points[i]);
+    for (std::size_t i = 0; i < points.size(); ++i)
+        aims[i] = problem.quick_objective(points[i]);
     std::vector<std::size_t> order(points.size());
     std::iota(order.begin(), order.end(), 0);
     std::stable_sort(order.begin(), order.end(),

@@ -13,19 +13,26 @@ using sink::Geometry;
 
 namespace {
 
-constexpr double tie_break = 1e-4;     // weight of ln(metal) beside the aim
-constexpr double stands_still = 1e-5;  // change of a pad's rise by re-centring that no longer matters [-]
-constexpr double rounding_slack = 2e-3; // what the centred spreading model may err near its centre [-]
+constexpr double tie_break = 1e-4; // weight of ln(metal) beside the aim
+// Change of a pad's rise by re-centring, over the whole rise, that no longer matters [-]
+constexpr double stands_still = 5e-7;
+constexpr double rounding_slack =
+    2e-3; // what the centred spreading model may err near its centre [-]
 constexpr double feasible_tolerance = 1e-9;
 constexpr double least_ratio = 1e-4, largest_ratio = 1e4; // worst pad over its reference [-]
 
 const char* dimension_name(Dimension d) {
     switch (d) {
-    case Dimension::height: return "fin height";
-    case Dimension::thickness: return "fin thickness";
-    case Dimension::gap: return "gap";
-    case Dimension::base: return "base thickness";
-    case Dimension::length: return "length";
+    case Dimension::height:
+        return "fin height";
+    case Dimension::thickness:
+        return "fin thickness";
+    case Dimension::gap:
+        return "gap";
+    case Dimension::base:
+        return "base thickness";
+    case Dimension::length:
+        return "length";
     }
     return "";
 }
@@ -33,16 +40,18 @@ const char* dimension_name(Dimension d) {
 /// The dimension a fixed width decides, which is then no variable.
 std::optional<Dimension> decided_by_width(WidthRule rule) {
     switch (rule) {
-    case WidthRule::follows: return std::nullopt;
-    case WidthRule::sets_gap: return Dimension::gap;
-    case WidthRule::sets_thickness: return Dimension::thickness;
+    case WidthRule::follows:
+        return std::nullopt;
+    case WidthRule::sets_gap:
+        return Dimension::gap;
+    case WidthRule::sets_thickness:
+        return Dimension::thickness;
     }
     return std::nullopt;
 }
 
 /// What a limit measures, once the sink is in balance. `worst` is the worst-pad variable.
-template <class T>
-struct Measured {
+template <class T> struct Measured {
     const Geometry<T>& g;
     const sink::Duty& duty;
     const sink::Balance<T>& balance;
@@ -51,48 +60,64 @@ struct Measured {
 };
 
 /// ln(quantity/bound), turned so that the limit holds when it is <= 0.
-template <class T>
-T constraint(const Limit& limit, const Measured<T>& m) {
+template <class T> T constraint(const Limit& limit, const Measured<T>& m) {
     using std::hypot;
     using std::log;
     const Geometry<T>& g = m.g;
     const auto at_most = [&](const T& quantity) { return T(log(T(quantity / limit.bound))); };
     const auto at_least = [&](const T& quantity) { return T(log(T(limit.bound / quantity))); };
     switch (limit.kind) {
-    case LimitKind::width_at_most: return at_most(g.width());
-    case LimitKind::width_at_least: return at_least(g.width());
-    case LimitKind::gap_at_least: return at_least(g.gap);
-    case LimitKind::thickness_at_least: return at_least(g.tip_thickness());
-    case LimitKind::overall_height: return at_most(g.overall_height());
-    case LimitKind::height_to_gap: return at_most(g.height / g.gap);
-    case LimitKind::height_to_thickness: return at_most(g.height / g.tip_thickness());
-    case LimitKind::base_to_thickness: return at_least(g.base / g.thickness);
-    case LimitKind::circle: return at_most(hypot(g.width(), g.overall_height()));
-    case LimitKind::mass: return at_most(m.duty.material.density * g.metal());
-    case LimitKind::pressure_drop: return at_most(m.balance.pressure_drop);
-    case LimitKind::pad_rise: return at_most(m.pad_rises[limit.part]);
-    case LimitKind::worst_pad: return at_most(m.pad_rises[limit.part] / m.worst);
+    case LimitKind::width_at_most:
+        return at_most(g.width());
+    case LimitKind::width_at_least:
+        return at_least(g.width());
+    case LimitKind::gap_at_least:
+        return at_least(g.gap);
+    case LimitKind::thickness_at_least:
+        return at_least(g.tip_thickness());
+    case LimitKind::overall_height:
+        return at_most(g.overall_height());
+    case LimitKind::height_to_gap:
+        return at_most(g.height / g.gap);
+    case LimitKind::height_to_thickness:
+        return at_most(g.height / g.tip_thickness());
+    case LimitKind::base_to_thickness:
+        return at_least(g.base / g.thickness);
+    case LimitKind::circle:
+        return at_most(hypot(g.width(), g.overall_height()));
+    case LimitKind::mass:
+        return at_most(m.duty.material.density * g.metal());
+    case LimitKind::pressure_drop:
+        return at_most(m.balance.pressure_drop);
+    case LimitKind::pad_rise:
+        return at_most(m.pad_rises[limit.part]);
+    case LimitKind::worst_pad:
+        return at_most(m.pad_rises[limit.part] / m.worst);
     }
     return T(0.0);
 }
 
-template <class T>
-T aim(Pursuit pursuit, const Measured<T>& m) {
+template <class T> T aim(Pursuit pursuit, const Measured<T>& m) {
     const Geometry<T>& g = m.g;
     switch (pursuit) {
-    case Pursuit::mass: return g.metal();
-    case Pursuit::volume: return g.envelope();
-    case Pursuit::height: return g.overall_height();
-    case Pursuit::footprint: return g.footprint();
-    case Pursuit::pressure_drop: return m.balance.pressure_drop;
+    case Pursuit::mass:
+        return g.metal();
+    case Pursuit::volume:
+        return g.envelope();
+    case Pursuit::height:
+        return g.overall_height();
+    case Pursuit::footprint:
+        return g.footprint();
+    case Pursuit::pressure_drop:
+        return m.balance.pressure_drop;
     case Pursuit::resistance:
-    case Pursuit::excess: return m.worst;
+    case Pursuit::excess:
+        return m.worst;
     }
     return T(0.0);
 }
 
-template <class T>
-T objective(Pursuit pursuit, const Measured<T>& m) {
+template <class T> T objective(Pursuit pursuit, const Measured<T>& m) {
     using std::log;
     const T main = log(aim(pursuit, m));
     return pursuit == Pursuit::mass ? main : T(main + tie_break * log(m.g.metal()));
@@ -109,8 +134,7 @@ bool needs_balance(Pursuit pursuit) {
 }
 
 /// Keeps a dimension that follows from a fixed width positive, far below what its limit allows.
-template <class T>
-T floored(const T& value, const T& smallest) {
+template <class T> T floored(const T& value, const T& smallest) {
     using std::max;
     return max(value, T(0.05 * smallest));
 }
@@ -135,12 +159,18 @@ void pursue_worst_pad(DesignSpace& space, const sink::Duty& duty, Pursuit pursui
 
 Pursuit pursuit_of(job::Aim aim) {
     switch (aim) {
-    case job::Aim::mass: return Pursuit::mass;
-    case job::Aim::volume: return Pursuit::volume;
-    case job::Aim::height: return Pursuit::height;
-    case job::Aim::footprint: return Pursuit::footprint;
-    case job::Aim::resistance: return Pursuit::resistance;
-    case job::Aim::pressure_drop: return Pursuit::pressure_drop;
+    case job::Aim::mass:
+        return Pursuit::mass;
+    case job::Aim::volume:
+        return Pursuit::volume;
+    case job::Aim::height:
+        return Pursuit::height;
+    case job::Aim::footprint:
+        return Pursuit::footprint;
+    case job::Aim::resistance:
+        return Pursuit::resistance;
+    case job::Aim::pressure_drop:
+        return Pursuit::pressure_drop;
     }
     return Pursuit::mass;
 }
@@ -165,11 +195,12 @@ bool SearchProblem::pursues_worst_pad() const {
     return pursuit_ == Pursuit::resistance || pursuit_ == Pursuit::excess;
 }
 
-template <class T, class Seed>
-Geometry<T> SearchProblem::build(Seed&& seed) const {
+template <class T, class Seed> Geometry<T> SearchProblem::build(Seed&& seed) const {
     std::array<T, dimension_count> d;
-    for (std::size_t k = 0; k < dimension_count; ++k) d[k] = T(space_.rooms[k].lower);
-    for (std::size_t i = 0; i < free_.size(); ++i) d[std::size_t(free_[i])] = seed(i);
+    for (std::size_t k = 0; k < dimension_count; ++k)
+        d[k] = T(space_.rooms[k].lower);
+    for (std::size_t i = 0; i < free_.size(); ++i)
+        d[std::size_t(free_[i])] = seed(i);
     const T root = d[1] + 2.0 * space_.draft_tangent * d[0];
     Geometry<T> g{space_.fins, d[0], root, d[2], d[3], d[4], space_.draft_tangent};
     if (space_.width_rule == WidthRule::sets_gap)

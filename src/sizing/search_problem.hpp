@@ -1,9 +1,10 @@
 #pragma once
 // One fin count of a sizing job as an optimisation problem over the dimensions left free.
 //
-// Variables are the free dimensions, searched in logarithms; constraints are ln(quantity/bound) <= 0;
-// the aim is ln(mass), ln(volume), ... plus a ten-thousandth of ln(metal), so that among designs equal in
-// the aim the lightest is taken. Temperatures come from the heat balance, with exact derivatives.
+// Variables are the free dimensions, searched in logarithms; constraints are ln(quantity/bound) <=
+// 0; the aim is ln(mass), ln(volume), ... plus a ten-thousandth of ln(metal), so that among designs
+// equal in the aim the lightest is taken. Temperatures come from the heat balance, with exact
+// derivatives.
 
 #include "optimizer/problem.hpp"
 #include "src/sink/balance.hpp"
@@ -14,8 +15,8 @@
 
 namespace finwright::sizing {
 
-/// What is made small: an aim of the job, or the hottest pad's excess over what is allowed (to tell how far
-/// an impossible job is from a possible one).
+/// What is made small: an aim of the job, or the hottest pad's excess over what is allowed (to tell
+/// how far an impossible job is from a possible one).
 enum class Pursuit { mass, volume, height, footprint, resistance, pressure_drop, excess };
 Pursuit pursuit_of(job::Aim aim);
 
@@ -27,7 +28,8 @@ public:
     const std::vector<optimizer::Variable>& variables() const override { return variables_; }
     std::size_t constraint_count() const override { return space_.limits.size(); }
     void evaluate(std::span<const double> x, optimizer::Evaluation& out) override;
-    void judge(std::span<const double> x, double& objective, std::span<double> constraints) override;
+    void judge(std::span<const double> x, double& objective,
+               std::span<double> constraints) override;
     bool recentre(std::span<const double> x) override;
     std::vector<std::vector<double>> starts() const override;
 
@@ -48,8 +50,7 @@ public:
     bool feasible(std::span<const double> dimensions) const;
 
 private:
-    template <class T, class Seed>
-    sink::Geometry<T> build(Seed&& seed) const;
+    template <class T, class Seed> sink::Geometry<T> build(Seed&& seed) const;
     std::vector<double> quick_pad_rises(const sink::Geometry<double>& g, double base_rise) const;
     sink::Geometry<Dual5> seeded(std::span<const double> x) const;
     bool pursues_worst_pad() const;
@@ -59,7 +60,8 @@ private:
     Pursuit pursuit_;
     SpreadingModel spreading_;
     std::vector<optimizer::Variable> variables_;
-    std::vector<Dimension> free_; ///< the dimension each variable moves; the worst pad comes after them
+    std::vector<Dimension>
+        free_; ///< the dimension each variable moves; the worst pad comes after them
 };
 
 } // namespace finwright::sizing

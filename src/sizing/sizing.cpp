@@ -24,6 +24,15 @@ namespace {
 constexpr std::size_t alternatives_shown = 5;
 constexpr double binds = 1e-4; // d ln(aim) / d ln(bound) below this is not worth a line [-]
 
+/// A limit counts as kept to a millionth: a tenth of a millikelvin in a hundred. Rounded designs
+/// are held to their limits more strictly still (SearchProblem::feasible).
+optimizer::Settings search_settings() {
+    optimizer::Settings settings;
+    settings.constraint_tolerance = 1e-6;
+    settings.recentres = 12;
+    return settings;
+}
+
 std::vector<int> middle_out(FinCounts counts) {
     std::vector<int> order(std::size_t(counts.to - counts.from + 1));
     std::iota(order.begin(), order.end(), counts.from);
@@ -36,7 +45,8 @@ std::vector<int> middle_out(FinCounts counts) {
 /// The whole search over fin counts for one pursuit.
 class Search {
 public:
-    Search(const job::Job& job, const sink::Duty& duty, Pursuit pursuit, const SearchOptions& options)
+    Search(const job::Job& job, const sink::Duty& duty, Pursuit pursuit,
+           const SearchOptions& options)
         : job_(job), duty_(duty), pursuit_(pursuit), counts_(fin_counts(job)) {
         if (counts_.from > counts_.to) return;
         spreading_ = first_spreading();
@@ -46,7 +56,7 @@ public:
             [this](std::span<const int> n) -> std::unique_ptr<optimizer::Problem> {
                 return problem(n[0]);
             },
-            {}, options.threads);
+            search_settings(), options.threads);
     }
 
     /// Candidates that keep every limit, best first.
@@ -70,8 +80,9 @@ public:
 
     int tried() const { return int(mixed_.candidates.size()); }
     int evaluations() const {
-        return std::accumulate(mixed_.candidates.begin(), mixed_.candidates.end(), 0,
-                               [](int sum, const Candidate& c) { return sum + c.outcome.evaluations; });
+        return std::accumulate(
+            mixed_.candidates.begin(), mixed_.candidates.end(), 0,
+            [](int sum, const Candidate& c) { return sum + c.outcome.evaluations; });
     }
 
 private:
@@ -81,13 +92,14 @@ private:
         return std::make_unique<SearchProblem>(std::move(*space), duty_, pursuit_, spreading_);
     }
 
-    /// The spreading model where a middle fin count has its optimum; every fin count starts from it.
+    /// The spreading model where a middle fin count has its optimum; every fin count starts from
+    /// it.
     SpreadingModel first_spreading() const {
         for (int fins : middle_out(counts_)) {
             auto p = problem(fins);
             if (!p) continue;
             p->recentre(p->starts().front());
-            optimizer::minimise(*p, {});
+            optimizer::minimise(*p, search_settings());
             return p->spreading();
         }
         return {};
@@ -112,12 +124,17 @@ Measure measure_of(LimitKind kind) {
     switch (kind) {
     case LimitKind::height_to_gap:
     case LimitKind::height_to_thickness:
-    case LimitKind::base_to_thickness: return Measure::ratio;
-    case LimitKind::mass: return Measure::mass;
-    case LimitKind::pressure_drop: return Measure::pressure;
+    case LimitKind::base_to_thickness:
+        return Measure::ratio;
+    case LimitKind::mass:
+        return Measure::mass;
+    case LimitKind::pressure_drop:
+        return Measure::pressure;
     case LimitKind::pad_rise:
-    case LimitKind::worst_pad: return Measure::rise;
-    default: return Measure::length;
+    case LimitKind::worst_pad:
+        return Measure::rise;
+    default:
+        return Measure::length;
     }
 }
 
@@ -126,8 +143,10 @@ Sense sense_of(LimitKind kind) {
     case LimitKind::width_at_least:
     case LimitKind::gap_at_least:
     case LimitKind::thickness_at_least:
-    case LimitKind::base_to_thickness: return Sense::at_least;
-    default: return Sense::at_most;
+    case LimitKind::base_to_thickness:
+        return Sense::at_least;
+    default:
+        return Sense::at_most;
     }
 }
 
@@ -183,20 +202,23 @@ std::vector<RoundedDesign> rounded_designs(const Search& search, const job::Job&
         const auto rounded = round_design(*problem, c->outcome.x, worst_kept());
         if (!rounded) continue;
         const Geometry<double> optimum = problem->geometry(c->outcome.x);
-        designs.push_back({{optimum, aim.of(optimum, duty), rounded->geometry, aim.of(rounded->geometry, duty)},
-                           c, rounded->objective});
-        std::stable_sort(designs.begin(), designs.end(), [](const auto& a, const auto& b) {
-            return a.objective < b.objective;
-        });
+        designs.push_back(
+            {{optimum, aim.of(optimum, duty), rounded->geometry, aim.of(rounded->geometry, duty)},
+             c,
+             rounded->objective});
+        std::stable_sort(designs.begin(), designs.end(),
+                         [](const auto& a, const auto& b) { return a.objective < b.objective; });
     }
     return designs;
 }
 
-/// Total power at which the hottest part of this sink just keeps what it is allowed, parts in proportion.
+/// Total power at which the hottest part of this sink just keeps what it is allowed, parts in
+/// proportion.
 double power_possible(const Geometry<double>& g, const job::Job& job) {
     const auto too_hot = [&](double share) {
         job::Job eased = job;
-        for (job::Part& part : eased.parts) part.power *= share;
+        for (job::Part& part : eased.parts)
+            part.power *= share;
         const Rating rating = sink::rate(g, sink::duty_of(eased));
         const auto allowed = allowed_pad_rises(eased);
         for (std::size_t i = 0; i < allowed.size(); ++i) {
@@ -216,7 +238,8 @@ double power_possible(const Geometry<double>& g, const job::Job& job) {
 Refusal no_room(const job::Job& job) {
     Refusal refusal;
     refusal.reason = fmt::format(
-        "No fin count fits: the space, the dimensions stated under sink and what {} can make leave no "
+        "No fin count fits: the space, the dimensions stated under sink and what {} can make leave "
+        "no "
         "geometry at all. Give more width, height or length, or choose another process.",
         job.sink.process.name);
     return refusal;
@@ -236,17 +259,17 @@ Refusal refusal_of(const job::Job& job, const sink::Duty& duty, const SearchOpti
     double allowed_rise = 1.0;
     for (std::size_t i = 0; i < allowed.size(); ++i) {
         if (!allowed[i]) continue;
-        const double over =
-            refusal.closest->parts[i].pad_temperature - refusal.closest->air_temperature - *allowed[i];
+        const double over = refusal.closest->parts[i].pad_temperature -
+                            refusal.closest->air_temperature - *allowed[i];
         if (over > refusal.shortfall) {
             refusal.shortfall = over;
             refusal.part = job.parts[i].name;
             allowed_rise = *allowed[i];
         }
     }
-    refusal.reason = fmt::format(
-        "No sink within these limits ({} fin counts searched) keeps every part within what it is allowed.",
-        search.tried());
+    refusal.reason = fmt::format("No sink within these limits ({} fin counts searched) keeps every "
+                                 "part within what it is allowed.",
+                                 search.tried());
     refusal.possible_power = power_possible(g, job);
     refusal.binding = binding_limits(*problem, outcome, allowed_rise + refusal.shortfall);
     return refusal;
@@ -256,12 +279,18 @@ Refusal refusal_of(const job::Job& job, const sink::Duty& duty, const SearchOpti
 
 double aim_value(job::Aim aim, const Rating& rating) {
     switch (aim) {
-    case job::Aim::mass: return rating.mass;
-    case job::Aim::volume: return rating.geometry.envelope();
-    case job::Aim::height: return rating.geometry.overall_height();
-    case job::Aim::footprint: return rating.geometry.footprint();
-    case job::Aim::resistance: return rating.sink_resistance();
-    case job::Aim::pressure_drop: return rating.pressure_drop;
+    case job::Aim::mass:
+        return rating.mass;
+    case job::Aim::volume:
+        return rating.geometry.envelope();
+    case job::Aim::height:
+        return rating.geometry.overall_height();
+    case job::Aim::footprint:
+        return rating.geometry.footprint();
+    case job::Aim::resistance:
+        return rating.sink_resistance();
+    case job::Aim::pressure_drop:
+        return rating.pressure_drop;
     }
     return 0.0;
 }
@@ -276,8 +305,8 @@ Sizing size(const job::Job& job, const SearchOptions& options) {
     answer.design = designs.front().design;
     answer.rating = sink::rate(answer.design.rounded, duty);
     const auto problem = search.settled(*designs.front().candidate);
-    answer.binding = binding_limits(*problem, designs.front().candidate->outcome,
-                                    answer.design.optimum_aim);
+    answer.binding =
+        binding_limits(*problem, designs.front().candidate->outcome, answer.design.optimum_aim);
     for (std::size_t i = 1; i < designs.size() && i <= alternatives_shown; ++i)
         answer.alternatives.push_back(designs[i].design);
     answer.fin_counts_tried = search.tried();

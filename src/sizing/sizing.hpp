@@ -21,8 +21,8 @@ struct BindingLimit {
     Sense sense = Sense::at_most;
     Measure measure = Measure::length;
     double bound = 0.0; ///< SI
-    /// What the aim falls by (SI: kg, m3, m, m2, K/W, Pa; kelvin in a refusal) per SI unit by which the
-    /// limit is eased; first order, at the unrounded optimum of this fin count.
+    /// What the aim falls by (SI: kg, m3, m, m2, K/W, Pa; kelvin in a refusal) per SI unit by which
+    /// the limit is eased; first order, at the unrounded optimum of this fin count.
     double worth = 0.0;
 };
 

@@ -8,15 +8,15 @@ namespace finwright::sizing {
 
 namespace {
 
-template <class T>
-std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {
+template <class T> std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {
     return {g.height, g.thickness, g.gap, g.base, g.length};
 }
 
 /// d f / d ln(dimension) with each dimension its own variable.
 std::array<double, 5> log_slopes(const Dual5& f, const std::array<double, 5>& values) {
     std::array<double, 5> out;
-    for (std::size_t k = 0; k < 5; ++k) out[k] = f.slope[k] * values[k];
+    for (std::size_t k = 0; k < 5; ++k)
+        out[k] = f.slope[k] * values[k];
     return out;
 }
 
@@ -37,19 +37,20 @@ void SpreadingModel::centre(const sink::Geometry<double>& plain, const sink::Dut
     const Dual5 base_rise = sink::balance(g, duty).base_rise;
     const std::vector<Dual5> rises = sink::pad_rises(g, duty, base_rise);
     const auto values = dimensions_of(plain);
-    for (std::size_t k = 0; k < 5; ++k) log_centre_[k] = std::log(values[k]);
+    for (std::size_t k = 0; k < 5; ++k)
+        log_centre_[k] = std::log(values[k]);
     pads_.clear();
     for (const Dual5& pad : rises) {
         const Dual5 rise = pad - base_rise;
         PadModel model{rise.value, log_slopes(rise, values), rise.value > 0.0};
         if (model.monomial)
-            for (double& e : model.exponents) e /= rise.value;
+            for (double& e : model.exponents)
+                e /= rise.value;
         pads_.push_back(model);
     }
 }
 
-template <class T>
-T SpreadingModel::rise(std::size_t pad, const sink::Geometry<T>& g) const {
+template <class T> T SpreadingModel::rise(std::size_t pad, const sink::Geometry<T>& g) const {
     using std::exp;
     using std::log;
     const PadModel& model = pads_[pad];

@@ -6,8 +6,8 @@
 
 namespace finwright::sizing {
 
-/// The geometry, when fins, fin height, fin thickness, base thickness, length and either gap or width are
-/// fixed. Throws job::InputError naming what is still open.
+/// The geometry, when fins, fin height, fin thickness, base thickness, length and either gap or
+/// width are fixed. Throws job::InputError naming what is still open.
 sink::Geometry<double> stated_sink(const job::Job& job);
 
 } // namespace finwright::sizing
