@@ -83,15 +83,21 @@ T nusselt_rectangular_duct(const T& re, const T& pr, const T& aspect, const T& l
     return dh_over_root_area * exp(log(exp(m * log(entry)) + exp(m * long_duct)) / m);
 }
 
-/// Turbulent flow in a duct with entry factor [-]; Re 2300..1e6. Gnielinski 1976, f after Petukhov
-/// (Darcy): Nu = (f/8)(Re - 1000) Pr/(1 + 12.7 (f/8)^0.5 (Pr^(2/3) - 1)) [1 + (Dh/L)^(2/3)]; 10 %.
-template <class T> T gnielinski(const T& re, const T& pr, const T& dh_over_length) {
+/// Turbulent developed flow in a duct for a given Darcy friction factor f [-]. Gnielinski 1976:
+/// Nu = (f/8)(Re - 1000) Pr/(1 + 12.7 (f/8)^0.5 (Pr^(2/3) - 1)); Re 2300..1e6, 10 %.
+template <class T> T gnielinski_developed(const T& re, const T& pr, const T& darcy) {
     using std::cbrt, std::sqrt;
-    const T eighth = petukhov_darcy(re) / 8.0;
+    const T eighth = darcy / 8.0;
     const T pr_third = cbrt(pr);
+    return eighth * (re - 1000.0) * pr / (1.0 + 12.7 * sqrt(eighth) * (pr_third * pr_third - 1.0));
+}
+
+/// The same for a smooth duct (Petukhov's f) with its entry, factor 1 + (Dh/L)^(2/3) [-].
+/// Gnielinski 1976.
+template <class T> T gnielinski(const T& re, const T& pr, const T& dh_over_length) {
+    using std::cbrt;
     const T entry = cbrt(dh_over_length);
-    return eighth * (re - 1000.0) * pr / (1.0 + 12.7 * sqrt(eighth) * (pr_third * pr_third - 1.0)) *
-           (1.0 + entry * entry);
+    return gnielinski_developed(re, pr, petukhov_darcy(re)) * (1.0 + entry * entry);
 }
 
 /// Rectangular duct in any regime, mean [-]: Muzychka & Yovanovich 2004 up to Re 2300, Gnielinski

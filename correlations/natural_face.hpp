@@ -1,7 +1,6 @@
 #pragma once
 // Natural convection on single isothermal faces, and how it joins forced flow. Film properties.
 
-#include <algorithm>
 #include <cmath>
 
 namespace finwright::correlations {
@@ -35,12 +34,18 @@ template <class T> T nusselt_facing_up(const T& ra, const T& pr) {
     return pow(pow(laminar, 10.0) + pow(turbulent, 10.0), 0.1);
 }
 
-/// Hot face up, on area/perimeter, the textbook pair [-]: 0.54 Ra^0.25 (1e4..1e7) and 0.15 Ra^(1/3)
-/// (1e7..1e11), here the larger of the two. McAdams 1954 as given by Cengel & Ghajar 2015, table
-/// 9-1. The two meet at Ra = 4.6e6, a kink.
-template <class T> T nusselt_facing_up_textbook(const T& ra) {
-    using std::cbrt, std::max, std::sqrt;
-    return max(T(0.54 * sqrt(sqrt(ra))), T(0.15 * cbrt(ra)));
+/// Hot face up, laminar, on area/perimeter [-]: 0.54 Ra^0.25; Ra 1e4..1e7. McAdams 1954 as given by
+/// Cengel & Ghajar 2015, table 9-1.
+template <class T> T nusselt_facing_up_laminar_textbook(const T& ra) {
+    using std::sqrt;
+    return 0.54 * sqrt(sqrt(ra));
+}
+
+/// Hot face up, turbulent, on area/perimeter [-]: 0.15 Ra^(1/3); Ra 1e7..1e11. McAdams 1954 as
+/// given by Cengel & Ghajar 2015, table 9-1. The two are 7 % apart where they meet, at Ra 1e7.
+template <class T> T nusselt_facing_up_turbulent_textbook(const T& ra) {
+    using std::cbrt;
+    return 0.15 * cbrt(ra);
 }
 
 /// Hot face down, on area/perimeter, the textbook law [-]: 0.27 Ra^0.25, 1e5..1e10. McAdams 1954 as

@@ -26,11 +26,16 @@ sink::Geometry<D5> seeded(const sink::Geometry<double>& g) {
 
 double& dimension(sink::Geometry<double>& g, int i) {
     switch (i) {
-    case 0: return g.height;
-    case 1: return g.thickness;
-    case 2: return g.gap;
-    case 3: return g.base;
-    default: return g.length;
+    case 0:
+        return g.height;
+    case 1:
+        return g.thickness;
+    case 2:
+        return g.gap;
+    case 3:
+        return g.base;
+    default:
+        return g.length;
     }
 }
 
@@ -62,7 +67,8 @@ void check_slopes(const sink::Geometry<double>& g, const sink::Duty& duty) {
         CHECK(agrees(balance.base_rise.slope[std::size_t(i)], up.rise - down.rise, at.rise));
         CHECK(agrees(pads[0].slope[std::size_t(i)], up.pad - down.pad, at.pad));
         if (!duty.surroundings.still())
-            CHECK(agrees(balance.pressure_drop.slope[std::size_t(i)], up.drop - down.drop, at.drop));
+            CHECK(
+                agrees(balance.pressure_drop.slope[std::size_t(i)], up.drop - down.drop, at.drop));
     }
 }
 

@@ -1,5 +1,5 @@
-// Tapered fins against the exact Bessel solution: check values FN-20a and FN-21a, "Bessel form derived
-// here; boundary value solution agrees 1e-12" (computed from Gardner 1945's equation).
+// Tapered fins against the exact Bessel solution: check values FN-20a and FN-21a, "Bessel form
+// derived here; boundary value solution agrees 1e-12" (computed from Gardner 1945's equation).
 #include "src/sink/fin_conduction.hpp"
 #include "tests/near.hpp"
 

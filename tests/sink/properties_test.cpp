@@ -50,14 +50,16 @@ TEST_CASE("more power is never cooler, and less than in proportion hotter in sti
         const auto g = random.geometry();
         const auto duty = random.duty(g);
         auto doubled = duty;
-        for (auto& part : doubled.parts) part.power *= 2.0;
+        for (auto& part : doubled.parts)
+            part.power *= 2.0;
         const double ratio = sink::rate(g, doubled).base_rise / sink::rate(g, duty).base_rise;
         CHECK(ratio > 1.0);
         CHECK(ratio < 2.0);
     }
 }
 
-// A single centred pad: with several pads the share of one may rise as heat crosses over from another.
+// A single centred pad: with several pads the share of one may rise as heat crosses over from
+// another.
 TEST_CASE("a thicker base never raises the spreading share beyond its own thickness") {
     RandomSinks random(24);
     for (int n = 0; n < trials; ++n) {
