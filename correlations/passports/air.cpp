@@ -37,7 +37,7 @@ std::vector<Passport> air_passports() {
          {"cp", "J/(kg K)", "specific heat at constant pressure"},
          {{"T", "K", "temperature", 250.0, 1050.0}},
          "the formula is continued",
-         "0.1 %",
+         "0.25 % against the reference equation of state",
          false,
          [](In x) { return air_specific_heat(x[0]); }},
         {"air_density",

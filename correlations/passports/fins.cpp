@@ -42,7 +42,7 @@ std::vector<Passport> fin_passports() {
          "incropera2007",
          "q/theta = M (tanh mH + h/(mk))/(1 + h/(mk) tanh mH), M = (h P k A)^0.5",
          {"q/theta", "W/K", "heat per kelvin of base rise"},
-         {{"h", "W/(m2 K)", "film coefficient", 0.0, 1e4},
+         {{"h", "W/(m2 K)", "film coefficient", 0.01, 1e4},
           {"k", "W/(m K)", "conductivity", 1.0, 500.0},
           {"perimeter", "m", "of the section", 1e-4, 4.0},
           {"section", "m2", "area of the section", 1e-8, 0.1},

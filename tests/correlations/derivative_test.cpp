@@ -123,6 +123,7 @@ TEST_CASE("fins, radiation, spreading") {
                  [](const auto& x) { return spreading_mean(x[0], x[1], x[2]); });
 }
 
+// Sides away from round multiples of the pads: where the number of modes changes the value steps by some 1e-8.
 TEST_CASE("the series' slopes by all five dimensions it sees") {
     using D = Dual<5>;
     const auto rises = [](auto w, auto l, auto t, auto h, auto x) {
@@ -133,7 +134,7 @@ TEST_CASE("the series' slopes by all five dimensions it sees") {
             {Pad<T>{x, 0.4 * l, T(0.02), T(0.03)}, Pad<T>{0.7 * w, 0.6 * l, T(0.01), T(0.01)}},
             {10.0, 4.0});
     };
-    const std::array<double, 5> at{0.12, 0.09, 0.004, 60.0, 0.035};
+    const std::array<double, 5> at{0.1213, 0.0917, 0.004, 60.0, 0.035};
     const auto dual = rises(D::variable(at[0], 0), D::variable(at[1], 1), D::variable(at[2], 2),
                             D::variable(at[3], 3), D::variable(at[4], 4));
     for (std::size_t i = 0; i < 5; ++i) {

@@ -72,8 +72,9 @@ TEST_CASE("two-dimensional limit of long channels, RD-6 one-zone rows") {
           near(check_value("RD-6-1-0.9-1").value(), 1e-3));
 }
 
+// The library values use sigma of CODATA 2014, 1.3e-6 below today's exact constant.
 TEST_CASE("coefficient and emissive power, RD-70, RD-73, RD-74") {
     CHECK(radiation_coefficient(1.0, 350.0, 300.0) == near(check_value("RD-70").value(), 1e-7));
-    CHECK(radiated(400.0, 0.0) == near(check_value("RD-73").value(), 1e-6));
-    CHECK(0.85 * radiated(400.0, 305.0) == near(check_value("RD-74").value(), 1e-6));
+    CHECK(radiated(400.0, 0.0) == near(check_value("RD-73").value(), 2e-6));
+    CHECK(0.85 * radiated(400.0, 305.0) == near(check_value("RD-74").value(), 2e-6));
 }

@@ -1,6 +1,8 @@
 // The registry: every law findable, sourced, and evaluable over its stated range.
 #include "correlations/registry.hpp"
 #include "tests/near.hpp"
+#include <algorithm>
+#include <cmath>
 #include <fstream>
 #include <set>
 #include <sstream>
@@ -46,7 +48,7 @@ TEST_CASE("every law is complete, and its source stands in docs/references.bib")
         CHECK_FALSE(law.outside.empty());
         CHECK_FALSE(law.stated_error.empty());
         CHECK_FALSE(law.result.unit.empty());
-        CHECK(law.evaluate != nullptr);
+        CHECK(bool(law.evaluate));
         if (law.source_key == "none")
             CHECK(law.title.find("common practice") != std::string_view::npos);
         else
