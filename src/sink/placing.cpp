@@ -2,6 +2,8 @@
 
 #include "correlations/numbers/dual.hpp"
 #include <algorithm>
+#include <limits>
+#include <utility>
 
 namespace finwright::sink {
 
@@ -33,20 +35,43 @@ double side_needed(const job::Coordinate& coordinate, double pad) {
     return 0.5 * pad / nearer_edge;
 }
 
+/// Side at which two centres stand `apart` from each other; 0 if they always do, infinite if they
+/// never can.
+double side_for_distance(const job::Coordinate& a, const job::Coordinate& b, double apart) {
+    constexpr double never = std::numeric_limits<double>::infinity();
+    if (a.share_of_side != b.share_of_side) {
+        const auto& [share, place] = a.share_of_side ? std::pair(a, b) : std::pair(b, a);
+        return (place.value + apart) / share.value;
+    }
+    const double difference = std::abs(a.value - b.value);
+    if (a.share_of_side) return difference > 0.0 ? apart / difference : never;
+    return difference >= apart * (1.0 - 1e-9) ? 0.0 : never;
+}
+
+struct Centre {
+    job::Coordinate across, along;
+};
+
+std::vector<Centre> centres_of(const std::vector<job::Part>& parts) {
+    const std::vector<double> shares = row_shares(parts);
+    std::vector<Centre> centres;
+    for (std::size_t i = 0; i < parts.size(); ++i)
+        centres.push_back({parts[i].across.value_or(job::Coordinate{shares[i], true}),
+                           parts[i].along.value_or(job::Coordinate{})});
+    return centres;
+}
+
 } // namespace
 
 template <class T>
 std::vector<correlations::Pad<T>> pads_on_base(const std::vector<job::Part>& parts, const T& width,
                                                const T& length) {
-    const std::vector<double> shares = row_shares(parts);
+    const std::vector<Centre> centres = centres_of(parts);
     std::vector<correlations::Pad<T>> pads;
     pads.reserve(parts.size());
-    for (std::size_t i = 0; i < parts.size(); ++i) {
-        const job::Coordinate across = parts[i].across.value_or(job::Coordinate{shares[i], true});
-        const job::Coordinate along = parts[i].along.value_or(job::Coordinate{});
-        pads.push_back({on_side(across, width), on_side(along, length), T(parts[i].pad_across),
-                        T(parts[i].pad_along)});
-    }
+    for (std::size_t i = 0; i < parts.size(); ++i)
+        pads.push_back({on_side(centres[i].across, width), on_side(centres[i].along, length),
+                        T(parts[i].pad_across), T(parts[i].pad_along)});
     return pads;
 }
 
@@ -57,13 +82,23 @@ pads_on_base(const std::vector<job::Part>&, const correlations::Dual<5>&,
              const correlations::Dual<5>&);
 
 SmallestBase smallest_base(const std::vector<job::Part>& parts) {
-    const std::vector<double> shares = row_shares(parts);
+    const std::vector<Centre> centres = centres_of(parts);
     SmallestBase base;
     for (std::size_t i = 0; i < parts.size(); ++i) {
-        const job::Coordinate across = parts[i].across.value_or(job::Coordinate{shares[i], true});
-        const job::Coordinate along = parts[i].along.value_or(job::Coordinate{});
-        base.width = std::max(base.width, side_needed(across, parts[i].pad_across));
-        base.length = std::max(base.length, side_needed(along, parts[i].pad_along));
+        base.width = std::max(base.width, side_needed(centres[i].across, parts[i].pad_across));
+        base.length = std::max(base.length, side_needed(centres[i].along, parts[i].pad_along));
+        for (std::size_t j = 0; j < i; ++j) {
+            const double width =
+                side_for_distance(centres[i].across, centres[j].across,
+                                  0.5 * (parts[i].pad_across + parts[j].pad_across));
+            const double length =
+                side_for_distance(centres[i].along, centres[j].along,
+                                  0.5 * (parts[i].pad_along + parts[j].pad_along));
+            if (width <= length)
+                base.width = std::max(base.width, width);
+            else
+                base.length = std::max(base.length, length);
+        }
     }
     return base;
 }

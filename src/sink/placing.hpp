@@ -15,7 +15,8 @@ template <class T>
 std::vector<correlations::Pad<T>> pads_on_base(const std::vector<job::Part>& parts, const T& width,
                                                const T& length);
 
-/// Smallest base sides on which every pad lies whole [m].
+/// Base sides from which on every pad lies whole and clear of the others [m]. Two pads that could
+/// be parted by width or by length are parted by whichever asks for the shorter side.
 struct SmallestBase {
     double width = 0.0;
     double length = 0.0;

@@ -1,5 +1,6 @@
 #include "src/sizing/search_problem.hpp"
 
+#include "src/sink/placing.hpp"
 #include "src/sink/rating.hpp"
 #include <algorithm>
 #include <cmath>
@@ -303,6 +304,7 @@ bool SearchProblem::quickly_feasible(std::span<const double> dimensions) const {
 
 bool SearchProblem::feasible(std::span<const double> dimensions) const {
     const Geometry<double> g = geometry(dimensions);
+    if (sink::overlap_on(duty_.parts, g.width(), g.length)) return false;
     const sink::Balance<double> balance = sink::balance(g, duty_);
     const Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance.base_rise), 1.0};
     return std::none_of(space_.limits.begin(), space_.limits.end(), [&](const Limit& limit) {

@@ -245,6 +245,17 @@ Refusal no_room(const job::Job& job) {
     return refusal;
 }
 
+/// Designs exist, but none on the shop's steps near them.
+Refusal no_lattice_point(const Candidate* nearest) {
+    Refusal refusal;
+    refusal.reason =
+        fmt::format("Designs that keep every limit exist (with {} fins, for one), but none whose "
+                    "dimensions are multiples of "
+                    "the shop's steps. Ease a limit a little, or state finer steps under shop.",
+                    nearest->integers[0]);
+    return refusal;
+}
+
 /// The design that comes nearest to the thermal limits while keeping all others.
 Refusal refusal_of(const job::Job& job, const sink::Duty& duty, const SearchOptions& options) {
     const Search search(job, duty, Pursuit::excess, options);
@@ -299,6 +310,8 @@ Sizing size(const job::Job& job, const SearchOptions& options) {
     const sink::Duty duty = sink::duty_of(job);
     const Search search(job, duty, pursuit_of(job.sink.aim), options);
     const auto designs = rounded_designs(search, job, duty);
+    if (designs.empty() && !search.feasible().empty())
+        return no_lattice_point(search.feasible().front());
     if (designs.empty()) return refusal_of(job, duty, options);
 
     Answer answer;
