@@ -19,6 +19,17 @@ Place place_in(const Document& d, std::string_view group, std::string_view key) 
     return {};
 }
 
+/// Where a key of this part stands, or the part.
+Place place_in(const Document& d, const Part& part, std::string_view key) {
+    for (const TreeNode::Entry& entry : d.root.entries)
+        if (entry.key == "parts")
+            for (const TreeNode& item : entry.value.items)
+                if (item.place.line == part.place.line && item.place.column == part.place.column)
+                    for (const TreeNode::Entry& inner : item.entries)
+                        if (inner.key == key) return inner.value.place;
+    return part.place;
+}
+
 void check_goals(const Job& job, const Document& d) {
     const bool any_junction = std::any_of(job.parts.begin(), job.parts.end(), [](const Part& p) {
         return p.junction_limit.has_value();
@@ -29,10 +40,10 @@ void check_goals(const Job& job, const Document& d) {
     const bool still = std::holds_alternative<StillAir>(job.air.state);
     if (still && job.limits.pressure_drop)
         d.fail(place_in(d, "limits", "pressure_drop"), "still air has no pressure drop to limit",
-               "write air state: ducted, or leave the line out");
+               "write air state: ducted, or leave the line out", place_in(d, "air", "state"));
     if (still && job.sink.aim == Aim::pressure_drop)
         d.fail(place_in(d, "sink", "aim"), "still air has no pressure drop to make small",
-               "choose another aim");
+               "choose another aim", place_in(d, "air", "state"));
 }
 
 void check_budgets(const Job& job, const Document& d) {
@@ -41,14 +52,15 @@ void check_budgets(const Job& job, const Document& d) {
         const double over_air = *part.junction_limit - job.limits.margin - job.air.temperature;
         if (over_air <= 0.0)
             d.fail(
-                part.place,
+                place_in(d, part, "junction_limit"),
                 fmt::format("'{}': the junction limit less the margin lies {:.1f} K below the air",
                             part.name, -over_air),
                 "no sink cools below its air: raise the limit, lower the margin, or bring cooler "
-                "air");
+                "air",
+                place_in(d, "air", "temperature"));
         const double path = part.power * (part.junction_to_case + part.interface);
         if (path >= over_air)
-            d.fail(part.place,
+            d.fail(place_in(d, part, "power"),
                    fmt::format("'{}' spends its whole budget before the sink: {:.1f} K from "
                                "junction to base, {:.1f} K allowed, "
                                "{:.1f} K short even on a perfect sink",
@@ -70,8 +82,9 @@ void below(const Document& d, const Stated& s, double bound, const std::string& 
            const char* suggestion) {
     if (s.range.from && *s.range.from > bound * (1.0 + 1e-9))
         d.fail(s.range.place,
-               fmt::format("{} of {:.4g} mm or more does not go with {} of {:.4g} mm", s.key,
-                           *s.range.from * 1e3, what, bound * 1e3),
+               fmt::format("{} of {:.4g} mm{} does not go with {} of {:.4g} mm", s.key,
+                           *s.range.from * 1e3, s.range.fixed() ? "" : " or more", what,
+                           bound * 1e3),
                suggestion);
 }
 
@@ -79,9 +92,37 @@ void above(const Document& d, const Stated& s, double bound, const std::string& 
            const char* suggestion) {
     if (s.range.to && *s.range.to < bound * (1.0 - 1e-9))
         d.fail(s.range.place,
-               fmt::format("{} of {:.4g} mm or less does not go with {} of {:.4g} mm", s.key,
-                           *s.range.to * 1e3, what, bound * 1e3),
+               fmt::format("{} of {:.4g} mm{} does not go with {} of {:.4g} mm", s.key,
+                           *s.range.to * 1e3, s.range.fixed() ? "" : " or less", what, bound * 1e3),
                suggestion);
+}
+
+/// The least proportion two stated ranges leave against what the process allows.
+void at_most(const Document& d, const Stated& over, const Stated& under, double bound,
+             const std::string& process) {
+    if (!over.range.from || !under.range.to) return;
+    const double least = *over.range.from / *under.range.to;
+    if (least > bound * (1.0 + 1e-9))
+        d.fail(over.range.place,
+               fmt::format("{} / {} is at least {:.3g}, and {} reaches {:.3g}", over.key, under.key,
+                           least, process, bound),
+               "change one of the two, choose another process, or overrule the process under shop",
+               under.range.place);
+}
+
+void check_proportions(const Job& job, const Document& d) {
+    const Sink& s = job.sink;
+    const Process& p = s.process;
+    at_most(d, {"fin_height", s.fin_height}, {"gap", s.gap}, p.largest_height_to_gap, p.name);
+    if (p.largest_height_to_thickness && s.fin_draft == 0.0)
+        at_most(d, {"fin_height", s.fin_height}, {"fin_thickness", s.fin_thickness},
+                *p.largest_height_to_thickness, p.name);
+    if (p.smallest_base_to_thickness > 0.0)
+        at_most(d, {"fin_thickness", s.fin_thickness}, {"base_thickness", s.base_thickness},
+                1.0 / p.smallest_base_to_thickness, p.name);
+    if (p.largest_circle)
+        below(d, {"width", s.width}, *p.largest_circle, p.name + "'s largest circumscribing circle",
+              "change it, choose another process, or overrule the process under shop");
 }
 
 void check_dimensions(const Job& job, const Document& d) {
@@ -97,9 +138,10 @@ void check_dimensions(const Job& job, const Document& d) {
         const double base = std::max(p.smallest_base, s.base_thickness.from.value_or(0.0));
         if (base >= *job.limits.space.height)
             d.fail(place_in(d, "limits", "space"),
-                   fmt::format("a base of {:.4g} mm fills the whole height", base * 1e3), room);
+                   fmt::format("a base of {:.4g} mm fills the whole height", base * 1e3), room,
+                   s.base_thickness.place);
         below(d, {"fin_height", s.fin_height}, *job.limits.space.height - base,
-              fmt::format("{} base under it and room", "the"), room);
+              "a height above the base", room);
     }
     above(d, {"fin_thickness", s.fin_thickness}, p.smallest_thickness,
           p.name + "'s smallest thickness", overrule);
@@ -109,15 +151,16 @@ void check_dimensions(const Job& job, const Document& d) {
     if (p.largest_height)
         below(d, {"fin_height", s.fin_height}, *p.largest_height, p.name + "'s largest height",
               overrule);
+    check_proportions(job, d);
 }
 
 void check_width_sum(const Job& job, const Document& d) {
     const Sink& s = job.sink;
     if (!s.fins.fixed() || !s.fin_thickness.fixed() || !s.gap.fixed() || !s.width.fixed()) return;
+    if (s.fin_draft > 0.0 && !s.fin_height.fixed()) return;
     const double n = *s.fins.from;
-    const double root =
-        *s.fin_thickness.from +
-        2.0 * std::tan(s.fin_draft) * (s.fin_height.fixed() ? *s.fin_height.from : 0.0);
+    const double taper = s.fin_draft > 0.0 ? 2.0 * std::tan(s.fin_draft) * *s.fin_height.from : 0.0;
+    const double root = *s.fin_thickness.from + taper;
     const double sum = n * root + (n - 1.0) * *s.gap.from;
     if (std::abs(sum - *s.width.from) > 5e-6)
         d.fail(s.width.place,
@@ -132,47 +175,54 @@ std::optional<double> widest(const Range& range, const std::optional<double>& sp
     return range.to ? range.to : space;
 }
 
-void check_edge(const Document& d, const Part& part, const std::optional<Coordinate>& at,
-                double pad, const std::optional<double>& side, const char* key, const char* which) {
-    if (side && pad > *side * (1.0 + 1e-9))
-        d.fail(part.place,
-               fmt::format("the pad of '{}' is {:.4g} mm {}, more than the {} of {:.4g} mm",
-                           part.name, pad * 1e3, key, which, *side * 1e3),
-               "check the pad, or give more space");
-    if (!at || at->share_of_side) return;
-    if (at->value < 0.5 * pad * (1.0 - 1e-9))
-        d.fail(part.place, fmt::format("the pad of '{}' hangs over the edge {}", part.name, key),
-               fmt::format("its centre must be at least {:.4g} mm from the edge", 0.5 * pad * 1e3));
-    if (side && at->value + 0.5 * pad > *side * (1.0 + 1e-9))
-        d.fail(part.place,
-               fmt::format(
-                   "the pad of '{}' hangs over the far edge {}: it ends at {:.4g} mm of {:.4g} mm",
-                   part.name, key, (at->value + 0.5 * pad) * 1e3, *side * 1e3),
-               "move it, or give more space");
-}
-
 double metres(const Coordinate& c, double side) {
     return c.share_of_side ? c.value * side : c.value;
 }
 
-/// Overlap on the largest base there can be, where shares of a side stand furthest apart.
+void check_edge(const Document& d, const Part& part, const std::optional<Coordinate>& at,
+                double pad, const std::optional<double>& side, const char* key, const char* which) {
+    if (side && pad > *side * (1.0 + 1e-9))
+        d.fail(place_in(d, part, "pad"),
+               fmt::format("the pad of '{}' is {:.4g} mm {}, more than the {} of {:.4g} mm",
+                           part.name, pad * 1e3, key, which, *side * 1e3),
+               "check the pad, or give more space");
+    if (!at || (at->share_of_side && !side)) return;
+    const double centre = metres(*at, side.value_or(0.0));
+    if (centre < 0.5 * pad * (1.0 - 1e-9))
+        d.fail(place_in(d, part, "place"),
+               fmt::format("the pad of '{}' hangs over the edge {}", part.name, key),
+               fmt::format("its centre must be at least {:.4g} mm from the edge", 0.5 * pad * 1e3));
+    if (side && centre + 0.5 * pad > *side * (1.0 + 1e-9))
+        d.fail(place_in(d, part, "place"),
+               fmt::format(
+                   "the pad of '{}' hangs over the far edge {}: it ends at {:.4g} mm of {:.4g} mm",
+                   part.name, key, (centre + 0.5 * pad) * 1e3, *side * 1e3),
+               "move it, or give more space");
+}
+
+/// Clear space between two pads along one side, negative where they overlap there. On the largest
+/// side there can be, where shares stand furthest apart; empty where a share against a length
+/// leaves it open. [m]
+std::optional<double> clear_space(const Coordinate& a, double pad_a, const Coordinate& b,
+                                  double pad_b, const Range& stated, double side) {
+    if (a.share_of_side != b.share_of_side && !stated.fixed()) return std::nullopt;
+    return std::abs(metres(a, side) - metres(b, side)) - 0.5 * (pad_a + pad_b);
+}
+
 void check_overlap(const Document& d, const Job& job, double width, double length) {
     for (std::size_t i = 0; i < job.parts.size(); ++i)
         for (std::size_t j = 0; j < i; ++j) {
             const Part &a = job.parts[i], &b = job.parts[j];
             if (!a.across || !b.across) continue;
-            const double apart_across =
-                std::abs(metres(*a.across, width) - metres(*b.across, width)) -
-                0.5 * (a.pad_across + b.pad_across);
-            const double apart_along =
-                std::abs(metres(*a.along, length) - metres(*b.along, length)) -
-                0.5 * (a.pad_along + b.pad_along);
-            if (std::max(apart_across, apart_along) < -1e-9)
-                d.fail(a.place,
-                       fmt::format("the pads of '{}' and '{}' (line {}) overlap by {:.3g} mm",
-                                   a.name, b.name, b.place.line,
-                                   -std::max(apart_across, apart_along) * 1e3),
-                       "move one of them");
+            const auto across = clear_space(*a.across, a.pad_across, *b.across, b.pad_across,
+                                            job.sink.width, width);
+            const auto along =
+                clear_space(*a.along, a.pad_along, *b.along, b.pad_along, job.sink.length, length);
+            if (!across || !along || std::max(*across, *along) >= -1e-9) continue;
+            d.fail(place_in(d, a, "place"),
+                   fmt::format("the pads of '{}' and '{}' (line {}) overlap by {:.3g} mm", a.name,
+                               b.name, b.place.line, -std::max(*across, *along) * 1e3),
+                   "move one of them", place_in(d, b, "place"));
         }
 }
 

@@ -16,15 +16,88 @@ constexpr std::size_t largest_file = 1024 * 1024;
 constexpr std::size_t deepest = 12;
 constexpr std::size_t most_nodes = 20000;
 
+/// The lines of a text, for looking up places without counting again.
+class Lines {
+public:
+    explicit Lines(std::string_view text) : text_(text) {
+        for (std::size_t at = 0; at < text.size(); ++at)
+            if (text[at] == '\n') begins_.push_back(at + 1);
+    }
+
+    /// The bytes from a place to the end of its line.
+    std::string_view rest(Place place) const {
+        const std::size_t line = std::size_t(place.line - 1);
+        if (line >= begins_.size()) return {};
+        const std::size_t begin =
+            std::min(text_.size(), begins_[line] + std::size_t(place.column - 1));
+        return text_.substr(begin, text_.find('\n', begin) - begin);
+    }
+
+private:
+    std::string_view text_;
+    std::vector<std::size_t> begins_{0};
+};
+
+Place place_at(std::string_view text, std::size_t byte) {
+    const std::string_view before = text.substr(0, byte);
+    const std::size_t last = before.rfind('\n');
+    return {int(std::count(before.begin(), before.end(), '\n')) + 1,
+            int(last == std::string_view::npos ? byte + 1 : byte - last)};
+}
+
+/// Length of the UTF-8 character that starts here (RFC 3629), 0 if none does.
+std::size_t character_length(std::string_view text, std::size_t at) {
+    const auto byte = [&](std::size_t i) {
+        return i < text.size() ? static_cast<unsigned char>(text[i]) : 0u;
+    };
+    const unsigned first = byte(at);
+    if (first < 0x80) return 1;
+    const std::size_t length = first >= 0xf0 ? 4 : first >= 0xe0 ? 3 : 2;
+    if (first < 0xc2 || first > 0xf4) return 0;
+    for (std::size_t i = 1; i < length; ++i)
+        if ((byte(at + i) & 0xc0) != 0x80) return 0;
+    const unsigned second = byte(at + 1);
+    const bool overlong = (first == 0xe0 && second < 0xa0) || (first == 0xf0 && second < 0x90);
+    const bool surrogate = first == 0xed && second > 0x9f;
+    const bool beyond = first == 0xf4 && second > 0x8f;
+    return overlong || surrogate || beyond ? 0 : length;
+}
+
+bool is_control(char c) {
+    return (static_cast<unsigned char>(c) < 0x20 && c != '\t' && c != '\n' && c != '\r') ||
+           c == 0x7f;
+}
+
+/// What YAML readers stumble over without saying so.
+void check_text(const Document& document) {
+    const std::string& text = document.text;
+    bool indentation = true;
+    for (std::size_t at = 0; at < text.size();) {
+        const std::size_t length = character_length(text, at);
+        if (length == 0 || is_control(text[at]))
+            document.fail(place_at(text, at), "the file holds a byte that is not UTF-8 text",
+                          "save it as plain UTF-8 text");
+        if (indentation && text[at] == '\t')
+            document.fail(place_at(text, at), "a tab stands in the indentation",
+                          "indent with spaces");
+        indentation = text[at] == '\n' || (indentation && text[at] == ' ');
+        at += length;
+    }
+}
+
 /// Builds the tree from yaml-cpp's events, which show what its node interface hides.
 class TreeBuilder final : public YAML::EventHandler {
 public:
-    explicit TreeBuilder(const Document& document) : document_(document) {}
+    explicit TreeBuilder(const Document& document) : document_(document), lines_(document.text) {}
 
     TreeNode take() { return std::move(root_); }
     bool found() const { return found_; }
 
-    void OnDocumentStart(const YAML::Mark&) override {}
+    void OnDocumentStart(const YAML::Mark& mark) override {
+        if (found_)
+            document_.fail(place(mark), "the file holds more than one document ('---')",
+                           "keep one job a file");
+    }
     void OnDocumentEnd() override {}
 
     void OnNull(const YAML::Mark& mark, YAML::anchor_t anchor) override {
@@ -43,6 +116,7 @@ public:
                   const std::string& value) override {
         refuse_anchor(mark, anchor);
         refuse_tag(mark, tag);
+        refuse_open_quote(place(mark));
         TreeNode node;
         node.place = place(mark);
         node.text = value;
@@ -80,12 +154,28 @@ private:
                            "leave the tag out");
     }
 
+    /// A quote without its partner would swallow the lines below it.
+    void refuse_open_quote(Place at) const {
+        const std::string_view rest = lines_.rest(at);
+        if (rest.empty() || (rest.front() != '"' && rest.front() != '\'')) return;
+        const char quote = rest.front();
+        for (std::size_t i = 1; i < rest.size(); ++i) {
+            if (quote == '"' && rest[i] == '\\')
+                ++i;
+            else if (rest[i] == quote)
+                return;
+        }
+        document_.fail(at, "the quote opened here is not closed in the same line",
+                       "close it, or leave the quotes out");
+    }
+
     void open(const YAML::Mark& mark, const std::string& tag, YAML::anchor_t anchor,
               TreeNode::Kind kind) {
         refuse_anchor(mark, anchor);
         refuse_tag(mark, tag);
         if (stack_.size() >= deepest)
-            document_.fail(place(mark), fmt::format("nested more than {} deep", deepest), "");
+            document_.fail(place(mark), fmt::format("nested more than {} deep", deepest),
+                           "a job needs no more than five levels");
         TreeNode node;
         node.kind = kind;
         node.place = place(mark);
@@ -100,7 +190,8 @@ private:
 
     void add(TreeNode node) {
         if (++count_ > most_nodes)
-            document_.fail(node.place, fmt::format("more than {} entries", most_nodes), "");
+            document_.fail(node.place, fmt::format("more than {} entries", most_nodes),
+                           "a job file is a few dozen lines");
         if (stack_.empty()) {
             root_ = std::move(node);
             found_ = true;
@@ -127,11 +218,12 @@ private:
                     key.place,
                     fmt::format("'{}' stands here a second time; the first is in line {}", key.text,
                                 entry.place.line),
-                    "keep one of them");
+                    "keep one of them", entry.place);
         parent.pending = TreeNode::Entry{key.text, key.place, {}};
     }
 
     const Document& document_;
+    Lines lines_;
     TreeNode root_;
     bool found_ = false;
     std::vector<Open> stack_;
@@ -180,23 +272,21 @@ std::string read_text_file(const std::filesystem::path& path) {
 }
 
 Document parse_document(std::string file, std::string text) {
+    if (text.starts_with("\xef\xbb\xbf")) text.erase(0, 3);
     Document document{std::move(file), std::move(text), {}};
-    if (const auto zero = document.text.find('\0'); zero != std::string::npos)
-        throw InputError(document.file, {}, {}, "the file is not text: it holds a zero byte", "");
+    check_text(document);
     std::istringstream stream(document.text);
     TreeBuilder builder(document);
     try {
         YAML::Parser parser(stream);
         if (!parser.HandleNextDocument(builder) || !builder.found())
-            document.fail({}, "the file is empty", "start from one of the files in configs/jobs");
+            document.fail({1, 1}, "the file is empty",
+                          "start from one of the files in configs/jobs");
+        parser.HandleNextDocument(builder);
         document.root = builder.take();
-        TreeBuilder second(document);
-        if (parser.HandleNextDocument(second))
-            document.fail({}, "the file holds more than one document ('---')",
-                          "keep one job a file");
     } catch (const YAML::Exception& error) {
         const bool known = !error.mark.is_null();
-        document.fail(known ? Place{error.mark.line + 1, error.mark.column + 1} : Place{},
+        document.fail(known ? Place{error.mark.line + 1, error.mark.column + 1} : Place{1, 1},
                       "this is not readable YAML: " + error.msg,
                       "check indentation (spaces, no tabs), colons and quotes around here");
     }
@@ -243,8 +333,13 @@ std::string Mapping::text(std::string_view key) {
     if (node.kind != TreeNode::Kind::scalar)
         document_.fail(node.place,
                        fmt::format("{} must be a single value, not {}", key, kind_name(node.kind)),
-                       "");
-    if (node.text.empty()) document_.fail(node.place, fmt::format("{} is empty", key), "");
+                       fmt::format("write the value behind {}:", key));
+    if (node.text.empty())
+        document_.fail(node.place, fmt::format("{} is empty", key), "write some text");
+    if (std::any_of(node.text.begin(), node.text.end(),
+                    [](char c) { return is_control(c) || c == '\n' || c == '\r' || c == '\t'; }))
+        document_.fail(node.place, fmt::format("{} must be plain text in one line", key),
+                       "leave out line ends, tabs and control characters");
     return node.text;
 }
 
@@ -270,9 +365,9 @@ void Mapping::only(const std::vector<std::string>& keys) const {
     }
 }
 
-void Mapping::fail(std::string_view key, const std::string& reason,
-                   const std::string& suggestion) const {
-    document_.fail(place_of(key), reason, suggestion);
+void Mapping::fail(std::string_view key, const std::string& reason, const std::string& suggestion,
+                   Place against) const {
+    document_.fail(place_of(key), reason, suggestion, against);
 }
 
 double quantity_of(const Document& document, const TreeNode& node, const std::string& what,

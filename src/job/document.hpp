@@ -1,7 +1,8 @@
 #pragma once
 // A strict reading of a YAML file into a plain tree: scalars stay text, every node knows its place.
 // Refused with place and reason: duplicate keys, anchors, aliases, tags, more than one document,
-// deep or huge trees, files over 1 MB, folders.
+// deep or huge trees, files over 1 MB, folders, bytes that are no UTF-8 text, tabs in the
+// indentation, quotes left open at the end of a line.
 
 #include "src/job/input_error.hpp"
 #include "src/job/units.hpp"
@@ -38,16 +39,16 @@ struct Document {
     std::string text;
     TreeNode root;
 
-    [[noreturn]] void fail(Place place, const std::string& reason,
-                           const std::string& suggestion) const {
-        throw InputError(file, text, place, reason, suggestion);
+    [[noreturn]] void fail(Place place, const std::string& reason, const std::string& suggestion,
+                           Place against = {}) const {
+        throw InputError(file, text, place, reason, suggestion, against);
     }
 };
 
 std::string read_text_file(const std::filesystem::path& path);
 Document parse_document(std::string file, std::string text);
 
-/// One mapping of a document, read key by key; done() refuses what was not asked for.
+/// One mapping of a document, read key by key; only() refuses every other key.
 class Mapping {
 public:
     Mapping(const Document& document, const TreeNode& node, std::string what);
@@ -68,7 +69,7 @@ public:
     void only(const std::vector<std::string>& keys) const;
 
     [[noreturn]] void fail(std::string_view key, const std::string& reason,
-                           const std::string& suggestion) const;
+                           const std::string& suggestion, Place against = {}) const;
 
 private:
     const TreeNode::Entry* find(std::string_view key) const;

@@ -28,6 +28,13 @@ std::size_t edits(std::string_view a, std::string_view b) {
     return row[b.size()];
 }
 
+/// One- and two-letter words say little: only capitals, or one letter of two, may be wrong.
+std::size_t allowed_edits(std::size_t a, std::size_t b) {
+    const std::size_t longer = std::max(a, b);
+    if (longer <= 2) return a == b ? longer - 1 : 0;
+    return (longer + 1) / 3;
+}
+
 } // namespace
 
 std::string nearest_word(std::string_view typed, const std::vector<std::string>& words) {
@@ -35,9 +42,8 @@ std::string nearest_word(std::string_view typed, const std::vector<std::string>&
     std::size_t least = std::string_view::npos;
     for (const std::string& word : words) {
         const std::size_t distance = edits(typed, word);
-        const std::size_t allowed =
-            std::max<std::size_t>(1, std::max(word.size(), typed.size()) / 3);
-        if (distance <= allowed && distance < least) {
+        if (distance > allowed_edits(typed.size(), word.size())) continue;
+        if (distance < least) {
             least = distance;
             best = word;
         }

@@ -7,8 +7,8 @@
 
 namespace finwright::job {
 
-/// The word of the list fewest edits away, if that is at most a third of its length; empty
-/// otherwise.
+/// The word of the list fewest edits away, capitals, '_' and '-' aside, if
+/// that is at most about a third of the longer; empty otherwise.
 std::string nearest_word(std::string_view typed, const std::vector<std::string>& words);
 
 } // namespace finwright::job

@@ -7,6 +7,7 @@
 #include <charconv>
 #include <cmath>
 #include <fmt/format.h>
+#include <numbers>
 
 namespace finwright::job {
 
@@ -14,6 +15,17 @@ namespace {
 
 constexpr double rating_case = 298.15; // case temperature data sheets rate power at [K]
 constexpr int most_parts = 64;
+constexpr int most_fins = 10000;
+
+// Beyond these a number is a slip of the unit, not a job (common practice, no source).
+constexpr double fastest_air = 100.0;                                             // [m/s]
+constexpr double largest_flow = 10.0;                                             // [m3/s]
+constexpr double longest_space = 2.0;                                             // [m]
+constexpr double longest_side = 2.0;                                              // [m]
+constexpr double highest_fin = 1.0;                                               // [m]
+constexpr double hottest_junction = 873.15;                                       // 600 degC [K]
+constexpr double steepest_draft = 5.0 * std::numbers::pi / 180.0 * (1.0 + 1e-12); // [rad]
+constexpr double largest_power = 2e4;                                             // of one part [W]
 
 int whole_number(const Document& d, const TreeNode& node, const std::string& what) {
     int value = 0;
@@ -47,8 +59,7 @@ double not_negative(const Document& d, Mapping& m, std::string_view key, const Q
     return value;
 }
 
-// ---- air
-// -----------------------------------------------------------------------------------------
+// ---- air ----
 
 Air read_air(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "air");
@@ -59,8 +70,8 @@ Air read_air(const Document& d, const TreeNode& node) {
         m.fail("temperature", "the air temperature lies outside -50 to 200 degC",
                "check the unit: degC, degF or K");
     air.altitude = m.optional_number("altitude", quantity::length).value_or(0.0);
-    if (air.altitude < -450.0 || air.altitude > 11000.0)
-        m.fail("altitude", "the altitude lies outside -450 to 11 000 m", "check the unit: m or ft");
+    if (air.altitude < -430.0 || air.altitude > 11000.0)
+        m.fail("altitude", "the altitude lies outside -430 to 11 000 m", "check the unit: m or ft");
     const std::string state = m.text("state");
     const bool velocity = m.has("velocity"), flow = m.has("flow");
     if (state == "still") {
@@ -68,29 +79,32 @@ Air read_air(const Document& d, const TreeNode& node) {
             m.fail(velocity ? "velocity" : "flow",
                    fmt::format("still air cannot have a {}; 'state: still' stands in line {}",
                                velocity ? "velocity" : "flow", m.place_of("state").line),
-                   "write state: ducted, or leave this line out");
+                   "write state: ducted, or leave this line out", m.place_of("state"));
         air.state = StillAir{};
         return air;
     }
     if (state != "ducted")
         m.fail("state", fmt::format("air state '{}' is not known", state), "write still or ducted");
-    if (velocity == flow)
-        m.fail(velocity ? "flow" : "state",
-               velocity ? "ducted air has a velocity and a flow; one follows from the other"
-                        : "ducted air needs its velocity or its flow",
-               velocity ? "keep one of them" : "add velocity: 3 m/s or flow: 40 m3/h");
+    if (velocity && flow)
+        m.fail("flow", "ducted air has a velocity and a flow; one follows from the other",
+               "keep one of them", m.place_of("velocity"));
+    if (!velocity && !flow)
+        m.fail("state", "ducted air needs its velocity or its flow",
+               "add velocity: 3 m/s or flow: 40 m3/h");
     DuctedAir duct;
     duct.velocity = optional_positive(d, m, "velocity", quantity::velocity);
     duct.flow = optional_positive(d, m, "flow", quantity::volume_flow);
-    if (duct.velocity && *duct.velocity > 60.0)
+    if (duct.velocity && *duct.velocity > fastest_air)
         m.fail("velocity", fmt::format("{:.0f} m/s is beyond any fan", *duct.velocity),
                "is it ft/min (196.85 of them are 1 m/s)?");
+    if (duct.flow && *duct.flow > largest_flow)
+        m.fail("flow", fmt::format("{:.4g} m3/s is beyond any sink's fan", *duct.flow),
+               "is it m3/h, L/s or cfm?");
     air.state = duct;
     return air;
 }
 
-// ---- parts
-// ---------------------------------------------------------------------------------------
+// ---- parts ----
 
 double read_interface(const Document& d, const TreeNode& node, double pad_area) {
     Mapping m(d, node, "interface");
@@ -127,10 +141,15 @@ Coordinate read_coordinate(const Document& d, Mapping& m, std::string_view key) 
 
 void read_junction(const Document& d, Mapping& m, Part& part) {
     part.junction_limit = m.optional_number("junction_limit", quantity::temperature);
+    if (part.junction_limit && *part.junction_limit > hottest_junction)
+        m.fail("junction_limit",
+               fmt::format("a junction at {:.0f} degC is no semiconductor's",
+                           *part.junction_limit - 273.15),
+               "check the unit: degC, degF or K");
     const bool direct = m.has("junction_to_case"), rated = m.has("rated_power");
     if (direct && rated)
         m.fail("rated_power", "junction_to_case and rated_power say the same thing twice",
-               "keep one of them");
+               "keep one of them", m.place_of("junction_to_case"));
     if (part.junction_limit && !direct && !rated)
         d.fail(m.place(),
                fmt::format("'{}' has a junction limit but nothing between junction and case",
@@ -143,6 +162,9 @@ void read_junction(const Document& d, Mapping& m, Part& part) {
     if (!part.junction_limit)
         m.fail("rated_power", "a 25 degC rating needs the junction limit it goes with",
                "add junction_limit: 150 degC");
+    if (*part.junction_limit <= rating_case)
+        m.fail("junction_limit", "a part rated at 25 degC case has its junction limit above that",
+               "check the unit: degC, degF or K");
     part.rated_power = positive(d, m, "rated_power", quantity::power);
     part.junction_to_case = (*part.junction_limit - rating_case) / *part.rated_power;
 }
@@ -155,6 +177,10 @@ Part read_part(const Document& d, const TreeNode& node, int& count) {
     part.place = m.place();
     part.name = m.text("name");
     part.power = positive(d, m, "power", quantity::power);
+    if (part.power > largest_power)
+        m.fail("power",
+               fmt::format("{:.4g} kW in one part is beyond air cooling", part.power * 1e-3),
+               "check the unit: mW, W or kW");
     Mapping pad(d, m.required("pad"), "pad");
     pad.only({"across", "along"});
     part.pad_across = positive(d, pad, "across", quantity::length);
@@ -172,12 +198,20 @@ Part read_part(const Document& d, const TreeNode& node, int& count) {
     if (const TreeNode* n = m.optional("count")) {
         count = whole_number(d, *n, "count");
         if (count < 1 || count > most_parts)
-            m.fail("count", fmt::format("count must be 1 to {}", most_parts), "");
+            m.fail("count", fmt::format("count must be 1 to {}", most_parts),
+                   "write for example count: 3");
         if (count > 1 && m.has("place"))
             m.fail("place", "several equal parts cannot stand in one place",
                    "list them one by one, or leave place out");
     }
     return part;
+}
+
+void refuse_second(const Document& d, const std::vector<Part>& parts, const Part& part) {
+    for (const Part& other : parts)
+        if (other.name == part.name)
+            d.fail(part.place, fmt::format("there are two parts named '{}'", part.name),
+                   "give each its own name", other.place);
 }
 
 std::vector<Part> read_parts(const Document& d, const TreeNode& node) {
@@ -188,22 +222,36 @@ std::vector<Part> read_parts(const Document& d, const TreeNode& node) {
     for (const TreeNode& item : node.items) {
         int count = 1;
         const Part part = read_part(d, item, count);
-        for (const Part& other : parts)
-            if (other.name == part.name)
-                d.fail(part.place, fmt::format("there are two parts named '{}'", part.name),
-                       "give each its own name");
         for (int i = 1; i <= count; ++i) {
-            parts.push_back(part);
-            if (count > 1) parts.back().name = fmt::format("{} {}", part.name, i);
+            Part one = part;
+            if (count > 1) one.name = fmt::format("{} {}", part.name, i);
+            refuse_second(d, parts, one);
+            parts.push_back(std::move(one));
         }
         if (parts.size() > most_parts)
-            d.fail(part.place, fmt::format("more than {} parts", most_parts), "");
+            d.fail(part.place, fmt::format("more than {} parts", most_parts),
+                   "put parts that share a pad area together");
     }
     return parts;
 }
 
-// ---- limits
-// --------------------------------------------------------------------------------------
+// ---- limits ----
+
+Space read_space(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "space");
+    m.only({"width", "height", "length"});
+    const auto side = [&](const char* key) {
+        const auto value = optional_positive(d, m, key, quantity::length);
+        if (value && *value > longest_space)
+            m.fail(key, "a space of more than 2 m is not for a plate-fin sink",
+                   "check the unit: mm, in or m");
+        return value;
+    };
+    if (node.entries.empty())
+        d.fail(node.place, "the space has no side",
+               "give at least one of width, height and length");
+    return {side("width"), side("height"), side("length")};
+}
 
 Limits read_limits(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "limits");
@@ -213,22 +261,11 @@ Limits read_limits(const Document& d, const TreeNode& node) {
     limits.sink_resistance = optional_positive(d, m, "sink_resistance", quantity::resistance);
     limits.mass = optional_positive(d, m, "mass", quantity::mass);
     limits.pressure_drop = optional_positive(d, m, "pressure_drop", quantity::pressure);
-    if (const TreeNode* node_space = m.optional("space")) {
-        Mapping space(d, *node_space, "space");
-        space.only({"width", "height", "length"});
-        limits.space.width = optional_positive(d, space, "width", quantity::length);
-        limits.space.height = optional_positive(d, space, "height", quantity::length);
-        limits.space.length = optional_positive(d, space, "length", quantity::length);
-        for (const char* key : {"width", "height", "length"})
-            if (space.has(key) && space.number(key, quantity::length) > 2.0)
-                space.fail(key, "a space of more than 2 m is not for a plate-fin sink",
-                           "check the unit: mm, in or m");
-    }
+    limits.space = read_space(d, m.required("space"));
     return limits;
 }
 
-// ---- sink
-// ----------------------------------------------------------------------------------------
+// ---- sink ----
 
 template <class Entry>
 Entry from_catalogue(const Document& d, Mapping& m, const char* key,
@@ -265,15 +302,21 @@ Range read_range(const Document& d, Mapping& m, std::string_view key,
                    "leave the key out to free it");
     }
     if ((range.from && *range.from <= 0.0) || (range.to && *range.to <= 0.0))
-        d.fail(range.place, fmt::format("{} must be above zero", key), "");
+        d.fail(range.place, fmt::format("{} must be above zero", key),
+               "leave the key out to free it");
     if (range.from && range.to && *range.from > *range.to)
         d.fail(range.place, fmt::format("{} runs from more to less", key), "swap from and to");
     return range;
 }
 
-Range length_range(const Document& d, Mapping& m, std::string_view key) {
+Range length_range(const Document& d, Mapping& m, std::string_view key, double longest) {
     return read_range(d, m, key, [&](const TreeNode& node, const std::string& what) {
-        return quantity_of(d, node, what, quantity::length);
+        const double value = quantity_of(d, node, what, quantity::length);
+        if (value > longest)
+            d.fail(node.place,
+                   fmt::format("{} of {:.4g} m is not for a plate-fin sink", key, value),
+                   "check the unit: mm, in or m");
+        return value;
     });
 }
 
@@ -312,15 +355,20 @@ Sink read_sink(const Document& d, const TreeNode& node) {
         return double(whole_number(d, n, what));
     });
     if ((sink.fins.from && *sink.fins.from < 2.0) || (sink.fins.to && *sink.fins.to < 2.0))
-        d.fail(sink.fins.place, "a plate-fin sink has at least two fins", "");
-    sink.fin_height = length_range(d, m, "fin_height");
-    sink.fin_thickness = length_range(d, m, "fin_thickness");
-    sink.gap = length_range(d, m, "gap");
-    sink.base_thickness = length_range(d, m, "base_thickness");
-    sink.width = length_range(d, m, "width");
-    sink.length = length_range(d, m, "length");
+        d.fail(sink.fins.place, "a plate-fin sink has at least two fins",
+               "write for example fins: 12, or leave the key out");
+    if ((sink.fins.from && *sink.fins.from > most_fins) ||
+        (sink.fins.to && *sink.fins.to > most_fins))
+        d.fail(sink.fins.place, fmt::format("more than {} fins", most_fins),
+               "write for example fins: 12, or leave the key out");
+    sink.fin_height = length_range(d, m, "fin_height", highest_fin);
+    sink.fin_thickness = length_range(d, m, "fin_thickness", highest_fin);
+    sink.gap = length_range(d, m, "gap", highest_fin);
+    sink.base_thickness = length_range(d, m, "base_thickness", highest_fin);
+    sink.width = length_range(d, m, "width", longest_side);
+    sink.length = length_range(d, m, "length", longest_side);
     if (const auto draft = m.optional_number("fin_draft", quantity::angle)) {
-        if (*draft < 0.0 || *draft > 0.0873)
+        if (*draft < 0.0 || *draft > steepest_draft)
             m.fail("fin_draft", "the draft of a fin face lies between 0 and 5 deg",
                    "write for example fin_draft: 0.5 deg");
         sink.fin_draft = *draft;

@@ -41,7 +41,8 @@ const std::vector<Unit>& table() {
         {"dm", L, 0.1},
         {"km", L, 1e3},
         {"um", L, 1e-6},
-        {"µm", L, 1e-6},
+        {"µm", L, 1e-6}, // micro sign U+00B5
+        {"μm", L, 1e-6}, // Greek mu U+03BC
         {"in", L, inch},
         {"inch", L, inch},
         {"mil", L, 1e-3 * inch},
@@ -99,10 +100,21 @@ struct Reading {
     const Unit* alone = nullptr;
 };
 
+constexpr std::size_t longest_text = 80;
+constexpr int largest_exponent = 12;
+
+void refuse_large(const Exponents& exponents) {
+    for (const int e : exponents)
+        if (std::abs(e) > largest_exponent)
+            throw UnitError("the exponents of the unit add up to more than any quantity has",
+                            "units look like mm, K/W, W/(m K), m3/h");
+}
+
 Reading power_of(const Reading& r, int exponent) {
     Reading out{std::pow(r.factor, exponent), r.exponents, exponent == 1 ? r.alone : nullptr};
     for (int& e : out.exponents)
         e *= exponent;
+    refuse_large(out.exponents);
     return out;
 }
 
@@ -110,6 +122,7 @@ Reading product(const Reading& a, const Reading& b) {
     Reading out{a.factor * b.factor, a.exponents, nullptr};
     for (std::size_t i = 0; i < out.exponents.size(); ++i)
         out.exponents[i] += b.exponents[i];
+    refuse_large(out.exponents);
     return out;
 }
 
@@ -159,11 +172,10 @@ private:
                 divided = true;
                 continue;
             }
-            const bool explicit_product = take("*") || take("·");
+            if (!take("*")) take("·");
             if (divided)
                 throw UnitError(fmt::format("'{}' can be read in two ways", text_),
                                 "bracket what stands below the line, for example W/(m K)");
-            (void)explicit_product;
             r = product(r, factor());
         }
         --depth_;
@@ -175,7 +187,9 @@ private:
         if (take("(")) {
             Reading r = expression();
             skip_spaces();
-            if (!take(")")) throw UnitError(fmt::format("'{}' lacks a closing bracket", text_), "");
+            if (!take(")"))
+                throw UnitError(fmt::format("'{}' lacks a closing bracket", text_),
+                                "write for example W/(m K)");
             return power_of(r, exponent());
         }
         return named();
@@ -184,7 +198,7 @@ private:
     Reading named() {
         std::size_t end = at_;
         while (end < text_.size() && (is_name_char(text_[end]) || is_digit(text_[end])) &&
-               text_.substr(end, 2) != "·")
+               !at_symbol(end))
             ++end;
         const std::string_view word = text_.substr(at_, end - at_);
         if (word.empty())
@@ -201,8 +215,16 @@ private:
         return power_of({unit->factor, unit->exponents, unit}, exponent());
     }
 
-    /// 2, ^2, -1, ^-1; 1 when nothing is there.
+    /// Whether one of · ² ³ stands there, which end a name though no ASCII does.
+    bool at_symbol(std::size_t at) const {
+        const std::string_view two = text_.substr(at, 2);
+        return two == "·" || two == "²" || two == "³";
+    }
+
+    /// 2, ^2, -1, ^-1, ², ³; 1 when nothing is there.
     int exponent() {
+        if (take("²")) return 2;
+        if (take("³")) return 3;
         const bool caret = take("^");
         const bool minus = take("-");
         if (at_ < text_.size() && is_digit(text_[at_])) {
@@ -221,6 +243,9 @@ private:
         if (word == "C" || word == "F")
             return {fmt::format("the unit '{}' is not known", word),
                     fmt::format("write deg{} for degrees", word)};
+        if (word == "mK")
+            return {"'mK' can be read as metre kelvin or as millikelvin",
+                    "write for example W/(m K)"};
         const std::string meant = nearest_word(word, unit_names());
         return {
             fmt::format("the unit '{}' is not known", word),
@@ -249,6 +274,9 @@ struct Split {
 
 Split split(std::string_view text, const QuantityKind& kind) {
     const std::string_view whole = trimmed(text);
+    if (whole.size() > longest_text)
+        throw UnitError("the value is far longer than a number with a unit",
+                        fmt::format("write for example {}", kind.example));
     std::string_view rest = whole;
     if (rest.starts_with('+')) rest.remove_prefix(1);
     double number = 0.0;
@@ -261,9 +289,10 @@ Split split(std::string_view text, const QuantityKind& kind) {
     if (!std::isfinite(number)) throw UnitError(fmt::format("'{}' is not finite", whole), example);
     const std::string_view unit = trimmed(rest.substr(std::size_t(end - rest.data())));
     if (!unit.empty() && (is_digit(unit.front()) || unit.front() == ',' || unit.front() == '.'))
-        throw UnitError(fmt::format("'{}' holds more than one number", whole),
-                        "write thousands without a separator and decimals with a point, " +
-                            example);
+        throw UnitError(
+            fmt::format("'{}' holds more than one number", whole),
+            fmt::format("write it without separators and with a decimal point, such as {}",
+                        kind.example));
     return {number, unit};
 }
 
@@ -275,7 +304,7 @@ std::string kind_read(const Reading& r) {
           &quantity::volume_flow, &quantity::pressure, &quantity::mass, &quantity::density,
           &quantity::specific_heat, &quantity::angle, &quantity::pure})
         if (kind->exponents == r.exponents) return std::string(kind->name);
-    return "something else";
+    return "no quantity used here";
 }
 
 } // namespace
@@ -302,14 +331,19 @@ double read_quantity(std::string_view text, const QuantityKind& kind) {
     const Reading unit = UnitParser(parts.unit).whole();
     if (unit.exponents != kind.exponents)
         throw UnitError(
-            fmt::format("{} is {}, expected {}", trimmed(text), kind_read(unit), kind.name),
-            fmt::format("write for example {}", kind.example));
-    const bool level = kind.level && unit.alone != nullptr;
-    const double value = parts.number * unit.factor + (level ? unit.alone->offset : 0.0);
-    if (level && value <= 0.0)
-        throw UnitError(fmt::format("{} is below absolute zero", trimmed(text)), "");
+            fmt::format("{} is {}; expected {}", trimmed(text), kind_read(unit), kind.name),
+            fmt::format("write {} such as {}", kind.name, kind.example));
+    if (kind.level && unit.alone == nullptr)
+        throw UnitError(fmt::format("{} is not a plain temperature", trimmed(text)),
+                        "write it in degC, degF or K alone, for example " +
+                            std::string(kind.example));
+    const double value = parts.number * unit.factor + (kind.level ? unit.alone->offset : 0.0);
+    if (kind.level && value <= 0.0)
+        throw UnitError(fmt::format("{} is below absolute zero", trimmed(text)),
+                        "check the sign and the unit: degC, degF or K");
     if (!std::isfinite(value))
-        throw UnitError(fmt::format("'{}' is out of any range", trimmed(text)), "");
+        throw UnitError(fmt::format("'{}' is out of any range", trimmed(text)),
+                        fmt::format("write for example {}", kind.example));
     return value;
 }
 
