@@ -13,6 +13,7 @@ namespace finwright::job {
 namespace {
 
 constexpr std::size_t largest_file = 1024 * 1024;
+constexpr std::size_t longest_line = 300;
 constexpr std::size_t deepest = 12;
 constexpr std::size_t most_nodes = 20000;
 
@@ -340,6 +341,9 @@ std::string Mapping::text(std::string_view key) {
                     [](char c) { return is_control(c) || c == '\n' || c == '\r' || c == '\t'; }))
         document_.fail(node.place, fmt::format("{} must be plain text in one line", key),
                        "leave out line ends, tabs and control characters");
+    if (node.text.size() > longest_line)
+        document_.fail(node.place, fmt::format("{} is longer than {} bytes", key, longest_line),
+                       "shorten it");
     return node.text;
 }
 
