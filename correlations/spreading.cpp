@@ -7,7 +7,6 @@ namespace finwright::correlations {
 namespace {
 
 constexpr double pi = std::numbers::pi;
-// Half waves over the smallest pad, across times along, up to which a mode counts.
 constexpr double half_waves_for_means = 8.0, half_waves_at_a_point = 200.0;
 constexpr int most_modes = 400;
 
@@ -73,38 +72,9 @@ Dual<N> resistance_of(const Dual<N>& z_squared, const Slab<Dual<N>>& slab) {
     return out;
 }
 
-/// Which modes count. A mode's share falls with the square of the half waves it makes over the
-/// smallest pad, across and along: (m, n) is kept while max(1, m c/W) max(1, n d/L) <= half_waves.
-class Modes {
-public:
-    template <class T>
-    static Modes of(const Slab<T>& slab, const std::vector<Pad<T>>& pads, double half_waves) {
-        Modes modes;
-        modes.half_waves_ = half_waves;
-        for (const Pad<T>& pad : pads) {
-            modes.share_across_ =
-                std::min(modes.share_across_, value_of(pad.across) / value_of(slab.width));
-            modes.share_along_ =
-                std::min(modes.share_along_, value_of(pad.along) / value_of(slab.length));
-        }
-        return modes;
-    }
-
-    int last_across() const { return last(half_waves_, share_across_); }
-    int last_along(int m) const {
-        return last(half_waves_ / std::max(1.0, m * share_across_), share_along_);
-    }
-
-private:
-    static int last(double half_waves, double share) {
-        return std::clamp(int(std::ceil(half_waves / share)), 4, most_modes);
-    }
-    double share_across_ = 1.0, share_along_ = 1.0, half_waves_ = 0.0;
-};
-
 /// Calls visit(m, n, weight, z^2) for every mode but the uniform one.
 template <class T, class Visit>
-void for_each_mode(const Slab<T>& slab, const Modes& modes, Visit&& visit) {
+void for_each_mode(const Slab<T>& slab, const ModeSet& modes, Visit&& visit) {
     const T across = pi / slab.width, along = pi / slab.length;
     const T across2 = across * across, along2 = along * along;
     for (int m = 0; m <= modes.last_across(); ++m) {
@@ -118,7 +88,7 @@ template <class T> struct PadModes { std::vector<T> across, along; };
 
 template <class T>
 std::vector<PadModes<T>> pad_modes(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
-                                   const Modes& modes) {
+                                   const ModeSet& modes) {
     std::vector<PadModes<T>> list;
     for (const Pad<T>& pad : pads)
         list.push_back({mode_means(pad.x, pad.across, slab.width, modes.last_across()),
@@ -133,10 +103,43 @@ template <class T> T uniform_resistance(const Slab<T>& slab) {
 } // namespace
 
 template <class T>
+ModeSet ModeSet::up_to(double half_waves, const Slab<T>& slab, const std::vector<Pad<T>>& pads) {
+    ModeSet modes;
+    modes.half_waves_ = half_waves;
+    for (const Pad<T>& pad : pads) {
+        modes.share_across_ =
+            std::min(modes.share_across_, value_of(pad.across) / value_of(slab.width));
+        modes.share_along_ =
+            std::min(modes.share_along_, value_of(pad.along) / value_of(slab.length));
+    }
+    return modes;
+}
+
+template ModeSet ModeSet::up_to(double, const Slab<double>&, const std::vector<Pad<double>>&);
+template ModeSet ModeSet::up_to(double, const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&);
+
+int ModeSet::last(double half_waves, double share) {
+    return std::clamp(int(std::ceil(half_waves / share)), 4, most_modes);
+}
+
+int ModeSet::last_across() const {
+    return last(half_waves_, share_across_);
+}
+
+int ModeSet::last_along(int m) const {
+    return last(half_waves_ / std::max(1.0, m * share_across_), share_along_);
+}
+
+template <class T>
 std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
                               const std::vector<double>& powers) {
+    return pad_mean_rises(slab, pads, powers, ModeSet::up_to(half_waves_for_means, slab, pads));
+}
+
+template <class T>
+std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
+                              const std::vector<double>& powers, const ModeSet& modes) {
     const std::size_t count = pads.size();
-    const Modes modes = Modes::of(slab, pads, half_waves_for_means);
     const auto means = pad_modes(slab, pads, modes);
     double total = 0.0;
     for (double power : powers)
@@ -174,12 +177,16 @@ std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pa
 
 template std::vector<double> pad_mean_rises(const Slab<double>&, const std::vector<Pad<double>>&,
                                             const std::vector<double>&);
+template std::vector<double> pad_mean_rises(const Slab<double>&, const std::vector<Pad<double>>&,
+                                            const std::vector<double>&, const ModeSet&);
 template std::vector<Dual<5>> pad_mean_rises(const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&,
                                              const std::vector<double>&);
+template std::vector<Dual<5>> pad_mean_rises(const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&,
+                                             const std::vector<double>&, const ModeSet&);
 
 double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,
                     const std::vector<double>& powers, double x, double y) {
-    const Modes modes = Modes::of(slab, pads, half_waves_at_a_point);
+    const ModeSet modes = ModeSet::up_to(half_waves_at_a_point, slab, pads);
     const auto means = pad_modes(slab, pads, modes);
     double rise = 0.0;
     for (double power : powers)
@@ -195,7 +202,7 @@ double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pa
 }
 
 double mean_rise_two_layers(const Slab<double>& base, const Layer& top, const Pad<double>& pad) {
-    const Modes modes = Modes::of(base, {pad}, half_waves_at_a_point);
+    const ModeSet modes = ModeSet::up_to(half_waves_at_a_point, base, std::vector{pad});
     const auto means = pad_modes(base, {pad}, modes).front();
     double rise = top.thickness / top.conductivity + uniform_resistance(base);
     for_each_mode(base, modes, [&](int m, int n, double weight, double z_squared) {

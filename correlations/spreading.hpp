@@ -45,15 +45,36 @@ template <class T> struct Pad {
     T across, along; ///< sides along x and y [m]
 };
 
+/// Which modes of the base count. A mode's share falls with the square of the half waves it makes
+/// over the smallest pad, across and along: (m, n) is kept while max(1, m c/W) max(1, n d/L) <=
+/// half_waves.
+class ModeSet {
+public:
+    template <class T>
+    static ModeSet up_to(double half_waves, const Slab<T>& slab, const std::vector<Pad<T>>& pads);
+
+    int last_across() const;
+    int last_along(int m) const;
+
+private:
+    static int last(double half_waves, double share);
+    double share_across_ = 1.0, share_along_ = 1.0, half_waves_ = 0.0;
+};
+
 /// Mean rise of each pad for a power in every pad, the one-dimensional part (t/k + 1/h)/(W L)
 /// included [K]. Double Fourier series of Muzychka, Culham & Yovanovich 2003 (from memory; agrees
 /// with finite volumes to 1e-4): sum over modes of w G(z)/(k z) times the mode's means over the
-/// pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)). Modes are
-/// kept by the half waves they make over the smallest pad (a hyperbolic cross, spreading.cpp); what
-/// is cut off is about 1e-3 of the spreading part.
+/// pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)). Eight half
+/// waves: what is cut off is about 1e-3 of the spreading part.
 template <class T>
 std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
                               const std::vector<double>& powers);
+
+/// The same over a stated set of modes: coarser and cheaper, or the same modes while dimensions
+/// vary.
+template <class T>
+std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
+                              const std::vector<double>& powers, const ModeSet& modes);
 
 /// Rise of the base's surface at (x, y) for a power in each pad [K].
 double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,

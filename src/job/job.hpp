@@ -112,7 +112,6 @@ struct Steps {
     double fin_thickness = 0.1e-3;
     double gap = 0.1e-3;
     double base_thickness = 0.5e-3;
-    double width = 1e-3;
     double length = 1e-3;
 };
 

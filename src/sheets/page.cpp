@@ -120,7 +120,7 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
                job.sink.width.fixed() ? millimetres(g.gap, 3) : mm(g.gap, steps.gap), "mm", "S"});
     table.row({"base thickness", mm(g.base, steps.base_thickness), "mm", "tb"});
     table.row(
-        {"width across the fins", mm(g.width(), std::min(steps.gap, steps.width)), "mm", "W"});
+        {"width across the fins", mm(g.width(), std::min(steps.gap, steps.fin_thickness)), "mm", "W"});
     table.row({"length along the fins", mm(g.length, steps.length), "mm", "L"});
     table.row({"(pitch)", fmt::format("({})", millimetres(g.pitch(), 3)), "mm",
                fmt::format("{} x pitch = {} mm", g.fins - 1,
@@ -319,11 +319,11 @@ std::string understood_space(const Job& job) {
 }
 
 std::string rounding_line(const Answer& answer, const Job& job) {
-    const double price = answer.design.rounded_aim / answer.design.optimum_aim - 1.0;
+    const double price = answer.design.rounded_aim / answer.least_aim - 1.0;
     return paragraph(fmt::format(
         "Least {} over {} fin counts; rounding to the shop's steps costs {} % ({} before).",
         aim_name(job.sink.aim), answer.fin_counts_tried, fixed(price * 100.0, 1),
-        aim_text(job.sink.aim, answer.design.optimum_aim)));
+        aim_text(job.sink.aim, answer.least_aim)));
 }
 
 } // namespace

@@ -156,6 +156,7 @@ std::string results_json(const job::Job& job, const sizing::Answer& answer) {
          {"rating", rating_json(answer.rating)},
          {"design", design_json(answer.design)},
          {"binding_limits", binding_json(answer.binding, "aim_saved_SI_per_SI_unit_eased")},
+         {"least_aim_before_rounding_SI", answer.least_aim},
          {"alternatives", alternatives},
          {"fin_counts_tried", answer.fin_counts_tried},
          {"cautions", cautions(job, answer.rating)}});

@@ -1,6 +1,5 @@
 #include "src/sink/rating.hpp"
 
-#include "correlations/spreading.hpp"
 #include "src/sink/placing.hpp"
 #include <algorithm>
 
@@ -74,6 +73,21 @@ void rate_parts(Rating& rating, const Duty& duty) {
     rating.hottest_pad_rise = *std::max_element(rises.begin(), rises.end());
 }
 
+/// The base as the spreading series sees it.
+template <class T> struct LoadedBase {
+    correlations::Slab<T> slab;
+    std::vector<correlations::Pad<T>> pads;
+    std::vector<double> powers;
+
+    LoadedBase(const Geometry<T>& g, const Duty& duty, const T& base_rise)
+        : slab{g.width(), g.length, g.base, duty.material.conductivity,
+               duty.power() / (base_rise * g.footprint())},
+          pads(pads_on_base(duty.parts, slab.width, slab.length)) {
+        for (const job::Part& part : duty.parts)
+            powers.push_back(part.power);
+    }
+};
+
 } // namespace
 
 double Rating::outlet_temperature() const {
@@ -83,18 +97,29 @@ double Rating::outlet_temperature() const {
 
 template <class T>
 std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
-    const T film = duty.power() / (base_rise * g.footprint());
-    const correlations::Slab<T> slab{g.width(), g.length, g.base, duty.material.conductivity, film};
-    std::vector<double> powers;
-    for (const job::Part& part : duty.parts)
-        powers.push_back(part.power);
-    return correlations::pad_mean_rises(slab, pads_on_base(duty.parts, slab.width, slab.length),
-                                        powers);
+    const LoadedBase<T> base(g, duty, base_rise);
+    return correlations::pad_mean_rises(base.slab, base.pads, base.powers);
 }
 
+template <class T>
+std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise,
+                         const correlations::ModeSet& modes) {
+    const LoadedBase<T> base(g, duty, base_rise);
+    return correlations::pad_mean_rises(base.slab, base.pads, base.powers, modes);
+}
+
+correlations::ModeSet modes_up_to(double half_waves, const Geometry<double>& g, const Duty& duty) {
+    const LoadedBase<double> base(g, duty, 1.0);
+    return correlations::ModeSet::up_to(half_waves, base.slab, base.pads);
+}
+
+using D5 = correlations::Dual<5>;
 template std::vector<double> pad_rises(const Geometry<double>&, const Duty&, const double&);
-template std::vector<correlations::Dual<5>> pad_rises(const Geometry<correlations::Dual<5>>&,
-                                                      const Duty&, const correlations::Dual<5>&);
+template std::vector<double> pad_rises(const Geometry<double>&, const Duty&, const double&,
+                                       const correlations::ModeSet&);
+template std::vector<D5> pad_rises(const Geometry<D5>&, const Duty&, const D5&);
+template std::vector<D5> pad_rises(const Geometry<D5>&, const Duty&, const D5&,
+                                   const correlations::ModeSet&);
 
 Rating rate(const Geometry<double>& g, const Duty& duty) {
     const Balance<double> settled = balance(g, duty);

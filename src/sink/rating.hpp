@@ -3,6 +3,7 @@
 // the air loses, and which laws say so.
 
 #include "correlations/numbers/dual.hpp"
+#include "correlations/spreading.hpp"
 #include "src/sink/balance.hpp"
 #include "src/sink/ducted_air.hpp"
 #include "src/sink/law_use.hpp"
@@ -54,6 +55,14 @@ struct Rating {
 /// Rise of the base under each pad over the inlet air, spreading included [K].
 template <class T>
 std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise);
+
+/// The same with a stated set of the base's modes.
+template <class T>
+std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise,
+                         const correlations::ModeSet& modes);
+
+/// The base's modes up to so many half waves over the smallest pad.
+correlations::ModeSet modes_up_to(double half_waves, const Geometry<double>& g, const Duty& duty);
 
 /// The whole rating. Throws std::domain_error for impossible geometry.
 Rating rate(const Geometry<double>& g, const Duty& duty);

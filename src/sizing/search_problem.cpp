@@ -226,9 +226,8 @@ void SearchProblem::evaluate(std::span<const double> x, Evaluation& out) {
     const Geometry<Dual5> g = seeded(x);
     const std::size_t n = variables_.size(), dims = free_.size();
     const sink::Balance<Dual5> balance = sink::balance(g, duty_);
-    Measured<Dual5> m{g, duty_, balance, {}, Dual5(1.0)};
-    for (std::size_t i = 0; i < duty_.parts.size(); ++i)
-        m.pad_rises.push_back(balance.base_rise + spreading_.rise(i, g));
+    Measured<Dual5> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance.base_rise),
+                      Dual5(1.0)};
     if (pursues_worst_pad()) m.worst = Dual5(x[dims]);
 
     const auto store = [&](const Dual5& value, double* slopes) {
@@ -257,23 +256,18 @@ void SearchProblem::judge(std::span<const double> x, double& value, std::span<do
 
 bool SearchProblem::recentre(std::span<const double> x) {
     const Geometry<double> g = geometry(x);
+    const double base_rise = sink::balance(g, duty_).base_rise;
     SpreadingModel moved;
     moved.centre(g, duty_);
-    const double base_rise = sink::balance(g, duty_).base_rise;
-    bool material = spreading_.pads() == 0; // never centred before
-    for (std::size_t i = 0; i < spreading_.pads(); ++i)
-        material = material || std::abs(moved.rise(i, g) - spreading_.rise(i, g)) >
-                                   stands_still * (base_rise + moved.rise(i, g));
+    bool material = !spreading_.centred();
+    if (!material) {
+        const auto before = spreading_.pad_rises(g, duty_, base_rise);
+        const auto after = moved.pad_rises(g, duty_, base_rise);
+        for (std::size_t i = 0; i < after.size(); ++i)
+            material = material || std::abs(after[i] - before[i]) > stands_still * after[i];
+    }
     spreading_ = std::move(moved);
     return material;
-}
-
-std::vector<double> SearchProblem::quick_pad_rises(const Geometry<double>& g,
-                                                   double base_rise) const {
-    std::vector<double> rises;
-    for (std::size_t i = 0; i < duty_.parts.size(); ++i)
-        rises.push_back(base_rise + spreading_.rise(i, g));
-    return rises;
 }
 
 double SearchProblem::quick_objective(std::span<const double> dimensions) const {
@@ -283,7 +277,7 @@ double SearchProblem::quick_objective(std::span<const double> dimensions) const 
         return objective(pursuit_, Measured<double>{g, duty_, unused, {}, 1.0});
     }
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    const auto rises = quick_pad_rises(g, balance.base_rise);
+    const auto rises = spreading_.pad_rises(g, duty_, balance.base_rise);
     const double worst = *std::max_element(rises.begin(), rises.end()) / duty_.power();
     return objective(pursuit_, Measured<double>{g, duty_, balance, rises, worst});
 }
@@ -296,7 +290,8 @@ bool SearchProblem::quickly_feasible(std::span<const double> dimensions) const {
             constraint(limit, Measured<double>{g, duty_, unused, {}, 1.0}) > feasible_tolerance)
             return false;
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    const Measured<double> m{g, duty_, balance, quick_pad_rises(g, balance.base_rise), 1.0};
+    const Measured<double> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance.base_rise),
+                             1.0};
     return std::none_of(space_.limits.begin(), space_.limits.end(), [&](const Limit& limit) {
         return limit.kind != LimitKind::worst_pad && constraint(limit, m) > rounding_slack;
     });

@@ -51,7 +51,6 @@ public:
 
 private:
     template <class T, class Seed> sink::Geometry<T> build(Seed&& seed) const;
-    std::vector<double> quick_pad_rises(const sink::Geometry<double>& g, double base_rise) const;
     sink::Geometry<Dual5> seeded(std::span<const double> x) const;
     bool pursues_worst_pad() const;
 

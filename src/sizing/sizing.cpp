@@ -322,6 +322,9 @@ Sizing size(const job::Job& job, const SearchOptions& options) {
         binding_limits(*problem, designs.front().candidate->outcome, answer.design.optimum_aim);
     for (std::size_t i = 1; i < designs.size() && i <= alternatives_shown; ++i)
         answer.alternatives.push_back(designs[i].design);
+    const Candidate& least = *search.feasible().front();
+    answer.least_aim =
+        Aimed{job.sink.aim}.of(search.settled(least)->geometry(least.outcome.x), duty);
     answer.fin_counts_tried = search.tried();
     answer.evaluations = search.evaluations();
     return answer;

@@ -39,6 +39,7 @@ struct Answer {
     sink::Rating rating; ///< of the rounded design
     std::vector<BindingLimit> binding;
     std::vector<Design> alternatives; ///< other fin counts, best first, at most five
+    double least_aim = 0.0;           ///< before rounding, at the best fin count for that [SI]
     int fin_counts_tried = 0;
     int evaluations = 0;
 };

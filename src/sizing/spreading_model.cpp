@@ -1,23 +1,17 @@
 #include "src/sizing/spreading_model.hpp"
 
 #include "src/sink/rating.hpp"
-#include <algorithm>
 #include <cmath>
 
 namespace finwright::sizing {
 
 namespace {
 
+constexpr double coarse_half_waves = 1.5;
+constexpr double least_tail = 1e-9; // a tail that vanishes is kept just above zero [K]
+
 template <class T> std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {
     return {g.height, g.thickness, g.gap, g.base, g.length};
-}
-
-/// d f / d ln(dimension) with each dimension its own variable.
-std::array<double, 5> log_slopes(const Dual5& f, const std::array<double, 5>& values) {
-    std::array<double, 5> out;
-    for (std::size_t k = 0; k < 5; ++k)
-        out[k] = f.slope[k] * values[k];
-    return out;
 }
 
 sink::Geometry<Dual5> independent(const sink::Geometry<double>& g) {
@@ -35,34 +29,43 @@ sink::Geometry<Dual5> independent(const sink::Geometry<double>& g) {
 void SpreadingModel::centre(const sink::Geometry<double>& plain, const sink::Duty& duty) {
     const sink::Geometry<Dual5> g = independent(plain);
     const Dual5 base_rise = sink::balance(g, duty).base_rise;
-    const std::vector<Dual5> rises = sink::pad_rises(g, duty, base_rise);
+    modes_ = sink::modes_up_to(coarse_half_waves, plain, duty);
+    const std::vector<Dual5> full = sink::pad_rises(g, duty, base_rise);
+    const std::vector<Dual5> coarse = sink::pad_rises(g, duty, base_rise, modes_);
     const auto values = dimensions_of(plain);
     for (std::size_t k = 0; k < 5; ++k)
         log_centre_[k] = std::log(values[k]);
-    pads_.clear();
-    for (const Dual5& pad : rises) {
-        const Dual5 rise = pad - base_rise;
-        PadModel model{rise.value, log_slopes(rise, values), rise.value > 0.0};
-        if (model.monomial)
-            for (double& e : model.exponents)
-                e /= rise.value;
-        pads_.push_back(model);
+    tails_.clear();
+    for (std::size_t i = 0; i < full.size(); ++i) {
+        const Dual5 rise = full[i] - coarse[i];
+        Tail tail{std::max(rise.value, least_tail), {}};
+        for (std::size_t k = 0; k < 5; ++k)
+            tail.exponents[k] = rise.slope[k] * values[k] / tail.rise;
+        tails_.push_back(tail);
     }
 }
 
-template <class T> T SpreadingModel::rise(std::size_t pad, const sink::Geometry<T>& g) const {
+template <class T>
+std::vector<T> SpreadingModel::pad_rises(const sink::Geometry<T>& g, const sink::Duty& duty,
+                                         const T& base_rise) const {
     using std::exp;
     using std::log;
-    const PadModel& model = pads_[pad];
-    const auto dimensions = dimensions_of(g);
-    T sum(0.0);
+    std::array<T, 5> away = dimensions_of(g);
     for (std::size_t k = 0; k < 5; ++k)
-        sum += model.exponents[k] * (log(dimensions[k]) - log_centre_[k]);
-    if (model.monomial) return model.rise * exp(sum);
-    return model.rise + sum;
+        away[k] = log(away[k]) - log_centre_[k];
+    std::vector<T> rises = sink::pad_rises(g, duty, base_rise, modes_);
+    for (std::size_t i = 0; i < rises.size(); ++i) {
+        T sum(0.0);
+        for (std::size_t k = 0; k < 5; ++k)
+            sum += tails_[i].exponents[k] * away[k];
+        rises[i] += tails_[i].rise * exp(sum);
+    }
+    return rises;
 }
 
-template double SpreadingModel::rise(std::size_t, const sink::Geometry<double>&) const;
-template Dual5 SpreadingModel::rise(std::size_t, const sink::Geometry<Dual5>&) const;
+template std::vector<double> SpreadingModel::pad_rises(const sink::Geometry<double>&,
+                                                       const sink::Duty&, const double&) const;
+template std::vector<Dual5> SpreadingModel::pad_rises(const sink::Geometry<Dual5>&,
+                                                      const sink::Duty&, const Dual5&) const;
 
 } // namespace finwright::sizing

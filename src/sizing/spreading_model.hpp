@@ -1,13 +1,14 @@
 #pragma once
 // The spreading of each pad's heat, cheap enough for the inner loop of a search.
 //
-// The series over all pads costs a hundred times the rest of a rating. So it is evaluated at a
-// centre, with its derivatives, and continued from there as a monomial of the dimensions (linearly
-// where it is not positive): equal to the series in value and slope at the centre, so that a search
-// which re-centres until it stands still solves the exact problem (first-order consistent models:
-// Alexandrov & Lewis 2001).
+// The full series costs ten times the rest of a rating. The search sums a few of its modes, and
+// adds what the others give as a monomial of the dimensions, taken with its slopes at a centre:
+// equal to the full series in value and slope there, so that a search which re-centres until it
+// stands still solves the exact problem (first-order consistent models: Alexandrov & Lewis 2001).
+// The modes stay the centre's while dimensions vary, so that nothing jumps.
 
 #include "correlations/numbers/dual.hpp"
+#include "correlations/spreading.hpp"
 #include "src/sink/duty.hpp"
 #include "src/sink/geometry.hpp"
 #include <array>
@@ -19,23 +20,24 @@ using Dual5 = correlations::Dual<5>;
 
 class SpreadingModel {
 public:
-    /// Takes the series' value and slopes at this geometry.
+    /// Takes the full series' value and slopes at this geometry.
     void centre(const sink::Geometry<double>& g, const sink::Duty& duty);
+    bool centred() const { return !tails_.empty(); }
 
-    /// Rise of the base under a pad over the mean of the base [K].
-    template <class T> T rise(std::size_t pad, const sink::Geometry<T>& g) const;
-
-    std::size_t pads() const { return pads_.size(); }
+    /// Rise of the base under each pad over the inlet air [K].
+    template <class T>
+    std::vector<T> pad_rises(const sink::Geometry<T>& g, const sink::Duty& duty,
+                             const T& base_rise) const;
 
 private:
-    struct PadModel {
-        double rise = 0.0; ///< at the centre [K]
-        std::array<double, 5>
-            exponents{}; ///< d ln rise / d ln dimension, or d rise / d ln dimension
-        bool monomial = true;
+    /// What the modes left out add to one pad.
+    struct Tail {
+        double rise = 0.0;                 ///< at the centre [K]
+        std::array<double, 5> exponents{}; ///< d ln rise / d ln dimension
     };
+    correlations::ModeSet modes_;
     std::array<double, 5> log_centre_{};
-    std::vector<PadModel> pads_;
+    std::vector<Tail> tails_;
 };
 
 } // namespace finwright::sizing
