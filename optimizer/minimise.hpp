@@ -15,11 +15,11 @@ struct Settings {
     double objective_tolerance = 1e-9;  ///< absolute, of the objective
     double step_tolerance = 1e-8;       ///< absolute, of the scaled variables
     double constraint_tolerance = 1e-8; ///< a constraint holds up to this
-    double residual_tolerance = 1e-3;   ///< KKT residual over gradient that counts as stationary
-    int evaluations = 500;              ///< per solve
-    int recentres = 8;                  ///< at most, per start
-    int random_starts = 0;              ///< besides the problem's own
-    std::uint64_t seed = 1;             ///< of the random starts
+    double residual_tolerance = 1e-3; ///< KKT residual (multipliers.hpp) that counts as stationary
+    int evaluations = 500;            ///< per solve
+    int recentres = 8;                ///< at most, per start
+    int random_starts = 0;            ///< besides the problem's own
+    std::uint64_t seed = 1;           ///< of the random starts
     /// Enumeration: how far (in the objective) above the best a candidate may lie and still be
     /// refined.
     double contender_margin = 0.03;
@@ -46,7 +46,7 @@ struct Outcome {
     double objective = 0.0;
     std::vector<double> constraints;
     double worst_violation = 0.0; ///< largest constraint, 0 when all hold
-    double kkt_residual = 0.0;    ///< over the gradient's norm, scaled variables
+    double kkt_residual = 0.0;    ///< as in multipliers.hpp
     /// Lagrange multipliers: what the objective falls by per unit by which the constraint or bound
     /// is eased.
     std::vector<double> multipliers, lower_multipliers, upper_multipliers;

@@ -2,6 +2,7 @@
 
 #include "optimizer/scaling.hpp"
 #include <Eigen/Dense>
+#include <algorithm>
 #include <cmath>
 
 namespace finwright::optimizer {
@@ -10,6 +11,7 @@ namespace {
 
 constexpr double active =
     1e-6; // a constraint or scaled bound this close to its limit counts as active
+constexpr double least_scale = 1e-8; // of the objective, where it and its gradient vanish together
 constexpr double no_gain = 1e-12;
 
 /// min |A y - b|, y >= 0 (Lawson & Hanson 1974, algorithm NNLS).
@@ -123,8 +125,8 @@ Multipliers multipliers_at(const std::vector<Variable>& variables, std::span<con
             break;
         }
     }
-    const double size = descent.norm();
-    out.residual = size > 0.0 ? (descent - normals * y).norm() / size : 0.0;
+    const double size = std::max({descent.norm(), std::abs(at.objective), least_scale});
+    out.residual = (descent - normals * y).norm() / size;
     return out;
 }
 

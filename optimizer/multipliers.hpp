@@ -8,7 +8,8 @@ namespace finwright::optimizer {
 
 struct Multipliers {
     std::vector<double> constraints, lower, upper; ///< >= 0, per unit of constraint or variable
-    double residual = 0.0;                         ///< of the scaled gradient, over its norm
+    /// What is left of the scaled gradient, over the larger of its norm and the objective.
+    double residual = 0.0;
 };
 
 Multipliers multipliers_at(const std::vector<Variable>& variables, std::span<const double> x,
