@@ -6,7 +6,9 @@
 #include "src/job/input_error.hpp"
 #include "src/sheets/laws_page.hpp"
 #include <CLI/CLI.hpp>
+#include <cstdio>
 #include <fmt/format.h>
+#include <system_error>
 
 namespace {
 
@@ -25,7 +27,9 @@ void add_json(CLI::App* sub, cli::JobCommand& command) {
 
 int guarded(const std::function<int()>& run) {
     try {
-        return run();
+        const int code = run();
+        if (std::fflush(stdout) != 0) throw cli::UnwritableFile("the page cannot be written");
+        return code;
     } catch (const job::InputError& error) {
         fmt::print(stderr, "{}\n", error.what());
         return cli::wrong_job_file;
@@ -34,6 +38,9 @@ int guarded(const std::function<int()>& run) {
         return cli::wrong_command_line;
     } catch (const cli::UnwritableFile& error) {
         fmt::print(stderr, "finwright: {}\n", error.what());
+        return cli::unwritable_file;
+    } catch (const std::system_error& error) {
+        fmt::print(stderr, "finwright: the page cannot be written: {}\n", error.what());
         return cli::unwritable_file;
     } catch (const std::exception& error) {
         fmt::print(stderr, "finwright: internal failure: {}\n", error.what());

@@ -119,8 +119,8 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     table.row({g.draft_tangent > 0.0 ? "gap at the root" : "gap",
                job.sink.width.fixed() ? millimetres(g.gap, 3) : mm(g.gap, steps.gap), "mm", "S"});
     table.row({"base thickness", mm(g.base, steps.base_thickness), "mm", "tb"});
-    table.row(
-        {"width across the fins", mm(g.width(), std::min(steps.gap, steps.fin_thickness)), "mm", "W"});
+    table.row({"width across the fins", mm(g.width(), std::min(steps.gap, steps.fin_thickness)),
+               "mm", "W"});
     table.row({"length along the fins", mm(g.length, steps.length), "mm", "L"});
     table.row({"(pitch)", fmt::format("({})", millimetres(g.pitch(), 3)), "mm",
                fmt::format("{} x pitch = {} mm", g.fins - 1,
@@ -231,6 +231,25 @@ std::string laws_used(const Rating& rating) {
     return out;
 }
 
+/// Which part comes nearest to what it is allowed, and whether the stated target is met.
+std::string standing(const Job& job, const Rating& rating) {
+    std::string text;
+    const sink::PartRating* nearest = nullptr;
+    for (const auto& part : rating.parts)
+        if (part.headroom() && (!nearest || *part.headroom() < *nearest->headroom()))
+            nearest = &part;
+    if (nearest) {
+        const double left = *nearest->headroom();
+        text = fmt::format("{} is nearest to what it is allowed: {} K {}.", nearest->name,
+                           fixed(std::abs(left), 1), left < 0.0 ? "TOO HOT" : "left");
+    }
+    if (const auto target = job.limits.sink_resistance)
+        text += fmt::format("{}The target of {} °C/W is {}.", text.empty() ? "" : " ",
+                            significant(*target, 3),
+                            rating.sink_resistance() > *target ? "MISSED" : "met");
+    return text.empty() ? text : paragraph(text);
+}
+
 std::string caution_list(const Job& job, const Rating& rating) {
     std::string out = heading("Cautions");
     for (const std::string& text : cautions(job, rating))
@@ -338,8 +357,8 @@ std::string size_page(const Job& job, const Answer& answer) {
 
 std::string rate_page(const Job& job, const Rating& rating) {
     return title_lines(job) + heading("The sink as stated") + key_line(rating, job) +
-           dimension_table(job, rating.geometry) + budget(job, rating) + heat_split(rating) +
-           laws_used(rating) + caution_list(job, rating);
+           standing(job, rating) + dimension_table(job, rating.geometry) + budget(job, rating) +
+           heat_split(rating) + laws_used(rating) + caution_list(job, rating);
 }
 
 std::string refusal_page(const Job& job, const Refusal& refusal) {

@@ -21,8 +21,9 @@ PartRating rate_part(const job::Part& part, double pad_temperature, double margi
 std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry<double>& g,
                                    ChannelLaw law) {
     const double gap = g.mean_gap();
-    std::vector<LawUse> uses{{"air_conductivity", "air in the film", {v.film_temperature}},
-                             {"air_viscosity", "air in the film", {v.film_temperature}}};
+    std::vector<LawUse> uses{
+        {"air_conductivity", "air in the film", {v.film_temperature}},
+    };
     switch (law) {
     case ChannelLaw::u_channel:
         uses.push_back({"u_channel", "channels", {v.rayleigh_radius, gap, g.height}});
@@ -43,7 +44,6 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
 std::vector<LawUse> ducted_air_laws(const DuctedAirView<double>& v, const Geometry<double>& g) {
     const double length_ratio = g.length / v.hydraulic_diameter;
     return {{"air_conductivity", "air in the film", {v.film_temperature}},
-            {"air_viscosity", "air in the film", {v.film_temperature}},
             {"duct_all_regimes", "channels", {v.reynolds, v.prandtl, v.aspect, length_ratio}},
             {"fapp_all_regimes", "friction", {v.reynolds, v.aspect, length_ratio}},
             {"entry_loss", "entry", {v.free_area_ratio}}};

@@ -1,0 +1,149 @@
+// The program from outside: exit codes, errors on the right stream, JSON whole or not at all,
+// numbers that agree.
+#include "src/job/read_job.hpp"
+#include "tests/cli/run_program.hpp"
+#include "tests/near.hpp"
+#include <cmath>
+#include <filesystem>
+#include <nlohmann/json.hpp>
+
+using finwright::tests::near;
+using finwright::tests::run_program;
+using finwright::tests::text_of;
+namespace fs = std::filesystem;
+using Json = nlohmann::json;
+
+namespace {
+
+/// A folder of its own for each test, gone afterwards.
+struct Folder {
+    fs::path path = fs::temp_directory_path() /
+                    ("finwright_" + std::to_string(std::rand()) + "_" + std::to_string(::getpid()));
+    Folder() { fs::create_directories(path); }
+    ~Folder() { fs::remove_all(path); }
+    std::string file(const std::string& name, const std::string& text) const {
+        std::ofstream((path / name).string(), std::ios::binary) << text;
+        return (path / name).string();
+    }
+};
+
+std::string demo() {
+    return text_of(std::string(SOURCE_DIR) + "/configs/jobs/pump_controller.yaml");
+}
+
+std::string replaced(std::string text, const std::string& from, const std::string& to) {
+    const auto at = text.find(from);
+    REQUIRE(at != std::string::npos);
+    return text.replace(at, from.size(), to);
+}
+
+} // namespace
+
+TEST_CASE("exit codes: 0 done, 2 command line, 3 job file, 4 impossible, 5 unwritable") {
+    const Folder folder;
+    CHECK(run_program("check configs/jobs/pump_controller.yaml").exit_code == 0);
+    CHECK(run_program("--version").exit_code == 0);
+    CHECK(run_program("--help").exit_code == 0);
+    CHECK(run_program("").exit_code == 2);
+    CHECK(run_program("size").exit_code == 2);
+    CHECK(run_program("polish configs/jobs/pump_controller.yaml").exit_code == 2);
+    CHECK(run_program("laws no_such_law").exit_code == 2);
+    CHECK(run_program("laws elenbaas el=abc").exit_code == 2);
+    CHECK(run_program("laws elenbaas").exit_code == 0);
+    CHECK(run_program("size no_such_file.yaml").exit_code == 3);
+    CHECK(run_program("size configs").exit_code == 3);
+    const auto impossible = folder.file("a.yaml", replaced(demo(), "mass: 1.2 kg", "mass: 100 g"));
+    CHECK(run_program("size " + impossible).exit_code == 4);
+    CHECK(run_program("size configs/jobs/pump_controller.yaml --json /no/such/folder/a.json")
+              .exit_code == 5);
+    CHECK(run_program("size configs/jobs/pump_controller.yaml --json " + folder.path.string())
+              .exit_code == 5);
+}
+
+TEST_CASE("errors go to standard error, with place, excerpt, caret and suggestion") {
+    const Folder folder;
+    const auto bad = folder.file("a.yaml", replaced(demo(), "power: 16 W", "power: 16"));
+    const auto run = run_program("size " + bad);
+    CHECK(run.exit_code == 3);
+    CHECK(run.output.empty());
+    CHECK(run.errors.find("a.yaml:17:12: ") != std::string::npos);
+    CHECK(run.errors.find("^") != std::string::npos);
+    CHECK(run.errors.find("18 W") != std::string::npos);
+}
+
+TEST_CASE("a failed write leaves nothing behind, and a good one no temporary") {
+    const Folder folder;
+    const auto target = (folder.path / "result.json").string();
+    CHECK(run_program("size configs/jobs/pump_controller.yaml --json " + target).exit_code == 0);
+    int files = 0;
+    for (const auto& entry : fs::directory_iterator(folder.path)) {
+        CHECK(entry.path().filename() == "result.json");
+        ++files;
+    }
+    CHECK(files == 1);
+}
+
+TEST_CASE("a full disk is an error with its own exit code") {
+    if (!fs::exists("/dev/full")) return;
+    // The page itself cannot be written: the program must not say it succeeded.
+    CHECK(run_program("laws > /dev/full").exit_code == 5);
+}
+
+TEST_CASE("JSON: SI numbers that agree with each other and with the page") {
+    const Folder folder;
+    const auto target = (folder.path / "r.json").string();
+    const auto run = run_program("size configs/jobs/bench_supply.yaml --json " + target);
+    REQUIRE(run.exit_code == 0);
+    const Json j = Json::parse(text_of(target));
+    const auto& g = j["geometry"];
+    const auto& r = j["rating"];
+    const double n = g["fins"], t = g["fin_thickness_root_m"], s = g["gap_root_m"];
+    CHECK(g["width_m"].get<double>() == near(n * t + (n - 1.0) * s, 1e-12));
+    const double section =
+        g["width_m"].get<double>() * g["base_thickness_m"].get<double>() +
+        n * g["fin_height_m"].get<double>() * 0.5 * (t + g["fin_thickness_tip_m"].get<double>());
+    CHECK(g["section_area_m2"].get<double>() == near(section, 1e-12));
+    CHECK(r["mass_kg"].get<double>() ==
+          near(section * g["length_m"].get<double>() * j["job"]["density_kg_m3"].get<double>(),
+               1e-12));
+    double heat = 0.0;
+    for (const auto& [path, watts] : r["heat_W"].items())
+        heat += watts.get<double>();
+    CHECK(heat == near(r["power_W"].get<double>(), 1e-9));
+    const auto& part = r["parts"][0];
+    CHECK(
+        part["pad_temperature_K"].get<double>() ==
+        near(r["air_temperature_K"].get<double>() + r["hottest_pad_rise_K"].get<double>(), 1e-12));
+    CHECK(part["headroom_K"].get<double>() >= -1e-6);
+    const std::string grams =
+        std::to_string(int(std::lround(r["mass_kg"].get<double>() * 1e3))) + " g;";
+    CHECK(run.output.find(grams) != std::string::npos);
+}
+
+// Dimensional consistency: the same job in inches, feet, degF and cfm gives the same sink to 1e-12.
+TEST_CASE("a job in inches equals the same job in millimetres") {
+    const auto metric =
+        finwright::job::read_job(std::string(SOURCE_DIR) + "/tests/data/jobs/metric.yaml");
+    const auto inches =
+        finwright::job::read_job(std::string(SOURCE_DIR) + "/tests/data/jobs/inches.yaml");
+    CHECK(inches.air.temperature == near(metric.air.temperature, 1e-12));
+    CHECK(inches.air.altitude == near(metric.air.altitude, 1e-12));
+    const Folder folder;
+    const auto a = (folder.path / "a.json").string(), b = (folder.path / "b.json").string();
+    REQUIRE(run_program("size tests/data/jobs/metric.yaml --json " + a).exit_code == 0);
+    REQUIRE(run_program("size tests/data/jobs/inches.yaml --json " + b).exit_code == 0);
+    const Json ja = Json::parse(text_of(a)), jb = Json::parse(text_of(b));
+    CHECK(ja["rating"]["mass_kg"].get<double>() ==
+          near(jb["rating"]["mass_kg"].get<double>(), 1e-12));
+    CHECK(ja["rating"]["base_rise_K"].get<double>() ==
+          near(jb["rating"]["base_rise_K"].get<double>(), 1e-10));
+}
+
+TEST_CASE("laws: a value worked by hand") {
+    // Elenbaas 1942: (54.3/24)(1 - exp(-35/54.3))^(3/4)
+    const double by_hand = 54.3 / 24.0 * std::pow(1.0 - std::exp(-35.0 / 54.3), 0.75);
+    const auto run = run_program("laws elenbaas el=54.3");
+    const auto at = run.output.rfind("Nu = ");
+    REQUIRE(at != std::string::npos);
+    CHECK(std::strtod(run.output.c_str() + at + 5, nullptr) == near(by_hand, 1e-8));
+}
