@@ -8,7 +8,7 @@ namespace {
 
 constexpr double pi = std::numbers::pi;
 constexpr double half_waves_for_means = 8.0, half_waves_at_a_point = 200.0;
-constexpr int most_modes = 400;
+constexpr int fewest_modes = 3, most_modes = 400;
 
 /// Mean over a pad of cos(m pi x/side) for m = 0..last, by the recurrences of cos and sin.
 template <class T>
@@ -77,9 +77,10 @@ template <class T, class Visit>
 void for_each_mode(const Slab<T>& slab, const ModeSet& modes, Visit&& visit) {
     const T across = pi / slab.width, along = pi / slab.length;
     const T across2 = across * across, along2 = along * along;
-    for (int m = 0; m <= modes.last_across(); ++m) {
+    for (int m = 0, last_m = modes.last_across(); m <= last_m; ++m) {
         const T from_m = double(m) * double(m) * across2;
-        for (int n = m == 0 ? 1 : 0; n <= modes.last_along(m); ++n)
+        const int last_n = modes.last_along(m);
+        for (int n = m == 0 ? 1 : 0; n <= last_n; ++n)
             visit(m, n, m > 0 && n > 0 ? 4.0 : 2.0, T(from_m + double(n) * double(n) * along2));
     }
 }
@@ -119,7 +120,7 @@ template ModeSet ModeSet::up_to(double, const Slab<double>&, const std::vector<P
 template ModeSet ModeSet::up_to(double, const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&);
 
 int ModeSet::last(double half_waves, double share) {
-    return std::clamp(int(std::ceil(half_waves / share)), 4, most_modes);
+    return std::clamp(int(std::ceil(half_waves / share)), fewest_modes, most_modes);
 }
 
 int ModeSet::last_across() const {

@@ -11,6 +11,9 @@ namespace finwright::optimizer {
 
 namespace {
 
+// Combinations are solved in blocks of this many, each from its neighbour's end; blocks start cold
+// and are what threads share out, so that the result does not depend on their number.
+constexpr std::size_t block = 8;
 constexpr double nearly_feasible = 0.05; // a violation the first model may be to blame for
 
 std::vector<std::vector<int>> combinations(std::span<const IntegerRange> ranges) {
@@ -52,10 +55,11 @@ template <class Work> void in_parallel(std::size_t count, int threads, Work&& wo
     if (failure) std::rethrow_exception(failure);
 }
 
-/// Starts a problem where an earlier solve of it ended.
-class Resumed final : public Problem {
+/// A problem with other starting points.
+class Restarted final : public Problem {
 public:
-    Resumed(Problem& inner, std::vector<double> start) : inner_(inner), start_(std::move(start)) {}
+    Restarted(Problem& inner, std::vector<std::vector<double>> starts)
+        : inner_(inner), starts_(std::move(starts)) {}
     const std::vector<Variable>& variables() const override { return inner_.variables(); }
     std::size_t constraint_count() const override { return inner_.constraint_count(); }
     void evaluate(std::span<const double> x, Evaluation& out) override { inner_.evaluate(x, out); }
@@ -63,12 +67,31 @@ public:
         inner_.judge(x, f, c);
     }
     bool recentre(std::span<const double> x) override { return inner_.recentre(x); }
-    std::vector<std::vector<double>> starts() const override { return {start_}; }
+    std::vector<std::vector<double>> starts() const override { return starts_; }
 
 private:
     Problem& inner_;
-    std::vector<double> start_;
+    std::vector<std::vector<double>> starts_;
 };
+
+/// Where a neighbour ended, in place of the problem's own first start.
+std::vector<std::vector<double>> starts_after(const Problem& problem, const Outcome& neighbour) {
+    auto starts = problem.starts();
+    if (neighbour.keeps_limits() && neighbour.x.size() == problem.variables().size())
+        starts.front() = neighbour.x;
+    return starts;
+}
+
+/// Enough to tell which combinations deserve the full treatment.
+Settings rough(Settings settings) {
+    settings.recentres = 0;
+    settings.repairs = 0;
+    settings.residual_tolerance = std::numeric_limits<double>::infinity();
+    settings.objective_tolerance = std::max(settings.objective_tolerance, 1e-5);
+    settings.step_tolerance = std::max(settings.step_tolerance, 1e-4);
+    settings.constraint_tolerance = std::max(settings.constraint_tolerance, 1e-4);
+    return settings;
+}
 
 double best_objective(const std::vector<Candidate>& candidates) {
     double best = std::numeric_limits<double>::infinity();
@@ -97,6 +120,27 @@ std::vector<std::size_t> contenders(const std::vector<Candidate>& candidates, co
     return list;
 }
 
+/// Every combination once: first the head of each block, cold; then the rest of each block, each
+/// from its neighbour's end, and no longer than it takes to see that it is hopeless beside the best
+/// head.
+void solve_roughly(std::vector<Candidate>& candidates,
+                   const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
+                   int threads) {
+    Settings once = rough(settings);
+    const std::size_t blocks = (problems.size() + block - 1) / block;
+    in_parallel(blocks, threads, [&](std::size_t b) {
+        candidates[b * block].outcome = minimise(*problems[b * block], once);
+    });
+    once.hopeless_above = best_objective(candidates) + settings.hopeless_margin;
+    in_parallel(blocks, threads, [&](std::size_t b) {
+        const std::size_t end = std::min(problems.size(), (b + 1) * block);
+        for (std::size_t i = b * block + 1; i < end; ++i) {
+            Restarted warm(*problems[i], starts_after(*problems[i], candidates[i - 1].outcome));
+            candidates[i].outcome = minimise(warm, once);
+        }
+    });
+}
+
 } // namespace
 
 MixedOutcome enumerate(std::span<const IntegerRange> ranges, const Factory& factory,
@@ -109,16 +153,13 @@ MixedOutcome enumerate(std::span<const IntegerRange> ranges, const Factory& fact
             mixed.candidates.push_back({std::move(integers), {}, false});
         }
 
-    Settings once = settings;
-    once.recentres = 0;
-    in_parallel(problems.size(), threads,
-                [&](std::size_t i) { mixed.candidates[i].outcome = minimise(*problems[i], once); });
+    solve_roughly(mixed.candidates, problems, settings, threads);
 
     for (auto list = contenders(mixed.candidates, settings); !list.empty();
          list = contenders(mixed.candidates, settings))
         in_parallel(list.size(), threads, [&](std::size_t k) {
             Candidate& c = mixed.candidates[list[k]];
-            Resumed resumed(*problems[list[k]], c.outcome.x);
+            Restarted resumed(*problems[list[k]], {c.outcome.x});
             const int before = c.outcome.evaluations;
             c.outcome = minimise(resumed, settings);
             c.outcome.evaluations += before;

@@ -342,6 +342,7 @@ Judged best_of_starts(Problem& problem, Descent& descent, const Budget& budget,
         Judged j = descent.from(start);
         if (best.x.empty() || better(j, best, settings)) best = std::move(j);
         if (budget.spent()) break;
+        if (best.holds(settings) && best.objective > settings.hopeless_above) break;
     }
     return best;
 }
@@ -404,7 +405,7 @@ Outcome minimise(Problem& problem, const Settings& settings) {
     }
     Descent descent(problem, settings, budget);
     Judged best = best_of_starts(problem, descent, budget, settings);
-    if (!best.holds(settings) && !budget.spent())
+    if (!best.holds(settings) && settings.repairs > 0 && !budget.spent())
         best = repaired(problem, descent, std::move(best), settings);
     if (best.holds(settings) && best.multipliers.residual > settings.residual_tolerance &&
         !budget.spent()) {

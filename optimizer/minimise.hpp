@@ -6,6 +6,7 @@
 #include "optimizer/problem.hpp"
 #include <chrono>
 #include <cstdint>
+#include <limits>
 #include <optional>
 #include <stop_token>
 
@@ -18,11 +19,16 @@ struct Settings {
     double residual_tolerance = 1e-3; ///< KKT residual (multipliers.hpp) that counts as stationary
     int evaluations = 500;            ///< per solve
     int recentres = 8;                ///< at most, per start
-    int random_starts = 0;            ///< besides the problem's own
-    std::uint64_t seed = 1;           ///< of the random starts
+    int repairs = 1;        ///< tries by way of the least violation, where no start ends feasible
+    int random_starts = 0;  ///< besides the problem's own
+    std::uint64_t seed = 1; ///< of the random starts
+    /// A start that ends feasible above this objective ends the search: nothing better is looked
+    /// for.
+    double hopeless_above = std::numeric_limits<double>::infinity();
     /// Enumeration: how far (in the objective) above the best a candidate may lie and still be
-    /// refined.
+    /// refined, and from where on it is not even started a second time.
     double contender_margin = 0.03;
+    double hopeless_margin = std::numeric_limits<double>::infinity();
     std::optional<std::chrono::duration<double>> time;
     std::stop_token stop;
 };

@@ -29,11 +29,11 @@ template <class T> T pressure_lost(const DuctedSink<T>& sink, const T& base_rise
 }
 
 /// Secant in (log rise, log heat): the curve is almost a straight line there.
-template <class Model> double balanced_rise(const Model& model, double power) {
+template <class Model> double balanced_rise(const Model& model, double power, double guess) {
     const auto log_heat = [&](double log_rise) {
         return std::log(model.shed(std::exp(log_rise)).total() / power);
     };
-    double x0 = std::log(40.0), f0 = log_heat(x0);
+    double x0 = std::log(guess), f0 = log_heat(x0);
     double x1 = x0 - f0 / 1.2, f1 = log_heat(x1);
     for (int step = 0; step < balance_steps; ++step) {
         if (std::abs(f1) < balance_tolerance || x1 == x0) return std::exp(x1);
@@ -88,16 +88,16 @@ HeatPaths<double> shed(const Geometry<double>& g, const Duty& duty, double base_
     return with_model(g, duty, [&](const auto& model) { return model.shed(base_rise); });
 }
 
-Balance<double> balance(const Geometry<double>& g, const Duty& duty) {
+Balance<double> balance(const Geometry<double>& g, const Duty& duty, double guess) {
     require_room(g);
     return with_model(g, duty, [&](const auto& model) {
-        const double rise = balanced_rise(model, duty.power());
+        const double rise = balanced_rise(model, duty.power(), guess);
         return Balance<double>{rise, pressure_lost(model, rise)};
     });
 }
 
-Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty) {
-    const double rise = balance(plain(g), duty).base_rise;
+Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty, double guess) {
+    const double rise = balance(plain(g), duty, guess).base_rise;
     return with_model(widened(g), duty, [&](const auto& model) {
         const auto rise6 = Dual<6>::variable(rise, 5);
         const Dual<6> heat = model.shed(rise6).total();

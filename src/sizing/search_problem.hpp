@@ -58,6 +58,7 @@ private:
     const sink::Duty& duty_;
     Pursuit pursuit_;
     SpreadingModel spreading_;
+    double last_rise_ = sink::first_guess; ///< where the next heat balance is looked for first [K]
     std::vector<optimizer::Variable> variables_;
     std::vector<Dimension>
         free_; ///< the dimension each variable moves; the worst pad comes after them

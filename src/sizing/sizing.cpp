@@ -30,6 +30,7 @@ optimizer::Settings search_settings() {
     optimizer::Settings settings;
     settings.constraint_tolerance = 1e-6;
     settings.recentres = 12;
+    settings.hopeless_margin = 0.2; // of ln(aim): a fifth heavier
     return settings;
 }
 
@@ -304,6 +305,14 @@ double aim_value(job::Aim aim, const Rating& rating) {
         return rating.pressure_drop;
     }
     return 0.0;
+}
+
+std::optional<Geometry<double>> search(const job::Job& job, const SearchOptions& options) {
+    const sink::Duty duty = sink::duty_of(job);
+    const Search search(job, duty, pursuit_of(job.sink.aim), options);
+    const auto feasible = search.feasible();
+    if (feasible.empty()) return std::nullopt;
+    return search.settled(*feasible.front())->geometry(feasible.front()->outcome.x);
 }
 
 Sizing size(const job::Job& job, const SearchOptions& options) {

@@ -62,6 +62,10 @@ struct SearchOptions {
 
 Sizing size(const job::Job& job, const SearchOptions& options = {});
 
+/// The search over all fin counts alone, before rounding: the optimum, if there is one.
+std::optional<sink::Geometry<double>> search(const job::Job& job,
+                                             const SearchOptions& options = {});
+
 /// The value of a job's aim for a rated sink, SI.
 double aim_value(job::Aim aim, const sink::Rating& rating);
 

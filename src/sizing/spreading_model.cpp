@@ -7,7 +7,7 @@ namespace finwright::sizing {
 
 namespace {
 
-constexpr double coarse_half_waves = 1.5;
+constexpr double coarse_half_waves = 0.5;
 constexpr double least_tail = 1e-9; // a tail that vanishes is kept just above zero [K]
 
 template <class T> std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {

@@ -1,0 +1,124 @@
+// What a rating, its derivatives, the spreading series and a whole search cost. Run it with
+//   --benchmark_repetitions=9 --benchmark_report_aggregates_only=true
+// and quote medians; the table in docs/performance.md is made that way.
+#include "src/job/read_job.hpp"
+#include "src/sink/rating.hpp"
+#include "src/sizing/sizing.hpp"
+#include "src/sizing/spreading_model.hpp"
+#include "tests/sizing/random_jobs.hpp"
+#include <benchmark/benchmark.h>
+
+using namespace finwright;
+using D5 = correlations::Dual<5>;
+
+namespace {
+
+job::Job demo(const char* name) {
+    return job::read_job(std::string(CONFIGS_DIR) + "/jobs/" + name + ".yaml");
+}
+
+const char* pump = "pump_controller";
+const char* bench = "bench_supply";
+
+sink::Geometry<double> typical() {
+    return {15, 30e-3, 1.4e-3, 8e-3, 4e-3, 0.12, 0.0};
+}
+
+sink::Geometry<D5> seeded(const sink::Geometry<double>& g) {
+    return {g.fins,
+            D5::variable(g.height, 0),
+            D5::variable(g.thickness, 1),
+            D5::variable(g.gap, 2),
+            D5::variable(g.base, 3),
+            D5::variable(g.length, 4),
+            0.0};
+}
+
+void balance(benchmark::State& state, const char* name) {
+    const auto duty = sink::duty_of(demo(name));
+    auto g = typical();
+    for (auto _ : state) {
+        g.height += 1e-12; // not the same question twice
+        benchmark::DoNotOptimize(sink::balance(g, duty));
+    }
+}
+
+void balance_with_slopes(benchmark::State& state, const char* name) {
+    const auto duty = sink::duty_of(demo(name));
+    auto g = typical();
+    for (auto _ : state) {
+        g.height += 1e-12;
+        benchmark::DoNotOptimize(sink::balance(seeded(g), duty));
+    }
+}
+
+void spreading_series(benchmark::State& state, const char* name) {
+    const auto duty = sink::duty_of(demo(name));
+    const auto g = typical();
+    double rise = 60.0;
+    for (auto _ : state)
+        benchmark::DoNotOptimize(sink::pad_rises(g, duty, rise += 1e-9));
+}
+
+void spreading_in_search(benchmark::State& state, const char* name) {
+    const auto duty = sink::duty_of(demo(name));
+    const auto g = typical();
+    sizing::SpreadingModel model;
+    model.centre(g, duty);
+    const auto s = seeded(g);
+    D5 rise(60.0);
+    for (auto _ : state) {
+        rise.value += 1e-9;
+        benchmark::DoNotOptimize(model.pad_rises(s, duty, rise));
+    }
+}
+
+void whole_rating(benchmark::State& state, const char* name) {
+    const auto duty = sink::duty_of(demo(name));
+    const auto g = typical();
+    for (auto _ : state)
+        benchmark::DoNotOptimize(sink::rate(g, duty));
+}
+
+void size_demo(benchmark::State& state, const char* name) {
+    const auto job = demo(name);
+    for (auto _ : state)
+        benchmark::DoNotOptimize(sizing::size(job));
+}
+
+/// The search over all fin counts alone, on the feasible ones of the seeded random jobs; one
+/// iteration a job.
+void search_random(benchmark::State& state, job::Job (tests::RandomJobs::*make)()) {
+    tests::RandomJobs random(101);
+    std::vector<job::Job> jobs;
+    while (jobs.size() < 50) {
+        auto job = (random.*make)();
+        if (std::holds_alternative<sizing::Answer>(sizing::size(job))) jobs.push_back(job);
+    }
+    std::size_t i = 0;
+    for (auto _ : state)
+        benchmark::DoNotOptimize(sizing::search(jobs[i++ % jobs.size()]));
+}
+
+} // namespace
+
+BENCHMARK_CAPTURE(balance, still, pump)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(balance, ducted, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(balance_with_slopes, still, pump)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(balance_with_slopes, ducted, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(spreading_series, three_pads, pump)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(spreading_series, one_pad, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(spreading_in_search, three_pads, pump)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(spreading_in_search, one_pad, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(whole_rating, still, pump)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(whole_rating, ducted, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(size_demo, pump_controller, pump)->Unit(benchmark::kMillisecond);
+BENCHMARK_CAPTURE(size_demo, bench_supply, bench)->Unit(benchmark::kMillisecond);
+BENCHMARK_CAPTURE(search_random, still, &tests::RandomJobs::still)
+    ->Unit(benchmark::kMillisecond)
+    ->Iterations(50);
+BENCHMARK_CAPTURE(search_random, ducted, &tests::RandomJobs::ducted)
+    ->Unit(benchmark::kMillisecond)
+    ->Iterations(50);
+
+BENCHMARK_MAIN();
