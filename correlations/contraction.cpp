@@ -25,13 +25,17 @@ constexpr auto slopes = monotone_slopes();
 
 } // namespace
 
-template <class T> T contraction_coefficient(const T& sigma) {
-    const T bounded = clamp(sigma, 0.0, 1.0);
-    const auto i = std::min<std::size_t>(std::size_t(value_of(bounded) / spacing), 9);
-    const T s = bounded / spacing - double(i);
-    const T s2 = s * s, s3 = s2 * s;
-    return table[i] * (2.0 * s3 - 3.0 * s2 + 1.0) + spacing * slopes[i] * (s3 - 2.0 * s2 + s) +
-           table[i + 1] * (3.0 * s2 - 2.0 * s3) + spacing * slopes[i + 1] * (s3 - s2);
+// The cubics end to end, each clamped to its own stretch: no branch on the value.
+template <class T>
+T contraction_coefficient(const T& sigma) {
+    T sum(table[0]);
+    for (std::size_t i = 0; i + 1 < table.size(); ++i) {
+        const double rise = table[i + 1] - table[i];
+        const double from = spacing * slopes[i], to = spacing * slopes[i + 1];
+        const T s = clamp(T(sigma / spacing - double(i)), 0.0, 1.0);
+        sum += s * (from + s * (3.0 * rise - 2.0 * from - to + s * (from + to - 2.0 * rise)));
+    }
+    return sum;
 }
 
 template double contraction_coefficient(const double&);

@@ -8,7 +8,8 @@ namespace finwright::correlations {
 
 /// Efficiency of a straight fin of constant thickness, adiabatic tip [-]: tanh(mH)/(mH). Harper &
 /// Brown 1922. 1-D error 0.25 % at h t/(2k) = 0.01.
-template <class T> T fin_efficiency(const T& mh) {
+template <class T>
+T fin_efficiency(const T& mh) {
     using std::tanh;
     return tanh(mh) / mh;
 }
@@ -45,7 +46,8 @@ double trapezoidal_fin_efficiency(double film, double conductivity, double root,
 double triangular_fin_efficiency(double mh);
 
 /// Efficiency of a concave parabolic fin [-]: 2/(1 + sqrt(1 + 4 (mH)^2)). Gardner 1945.
-template <class T> T parabolic_fin_efficiency(const T& mh) {
+template <class T>
+T parabolic_fin_efficiency(const T& mh) {
     using std::sqrt;
     return 2.0 / (1.0 + sqrt(1.0 + 4.0 * mh * mh));
 }

@@ -13,7 +13,8 @@ namespace finwright::correlations {
 /// Plates on INLET air, Nu = h S/k [-]; Re* = (V S/nu)(S/L). Teertstra, Yovanovich & Culham 2000:
 /// {(Re* Pr/2)^-3 + [0.664 Re*^0.5 Pr^(1/3) (1 + 3.65/Re*^0.5)^0.5]^-3}^(-1/3). Coefficients from
 /// memory; numerical solutions agree within 4 %.
-template <class T> T nusselt_inlet_plates(const T& re_star, const T& pr) {
+template <class T>
+T nusselt_inlet_plates(const T& re_star, const T& pr) {
     using std::cbrt, std::sqrt;
     const T root = sqrt(re_star);
     const T developed = 0.5 * re_star * pr;
@@ -35,7 +36,8 @@ T inlet_based_from_log_mean(const T& nu_log_mean, const T& re_star, const T& pr)
 /// Parallel gap, profiles of velocity and temperature developing together, mean, Dh = 2 S [-];
 /// G = Re Pr Dh/L. VDI Heat Atlas 2010, ch. G2: (7.541^3 + (1.841 G^(1/3))^3 + ((2/(1+22Pr))^(1/6)
 /// G^0.5)^3)^(1/3).
-template <class T> T nusselt_developing_gap(const T& graetz, const T& pr) {
+template <class T>
+T nusselt_developing_gap(const T& graetz, const T& pr) {
     using std::cbrt, std::sqrt;
     const T a = 1.841 * cbrt(graetz);
     const T b = sqrt(cbrt(2.0 / (1.0 + 22.0 * pr))) * sqrt(graetz);
@@ -45,14 +47,16 @@ template <class T> T nusselt_developing_gap(const T& graetz, const T& pr) {
 /// Fully developed rectangular duct, all four walls at one temperature [-]; aspect = short/long
 /// side. Shah & London 1978, eq. 347: 7.541(1 - 2.610a + 4.970a^2 - 5.119a^3 + 2.702a^4 -
 /// 0.548a^5).
-template <class T> T duct_nusselt_developed(const T& aspect) {
+template <class T>
+T duct_nusselt_developed(const T& aspect) {
     const T& a = aspect;
     return 7.541 * (1.0 + a * (-2.610 + a * (4.970 + a * (-5.119 + a * (2.702 - 0.548 * a)))));
 }
 
 /// The same with uniform flux along and uniform temperature around (H1) [-].
 /// Shah & London 1978, eq. 346: 8.235(1 - 2.0421a + 3.0853a^2 - 2.4765a^3 + 1.0578a^4 - 0.1861a^5).
-template <class T> T duct_nusselt_developed_flux(const T& aspect) {
+template <class T>
+T duct_nusselt_developed_flux(const T& aspect) {
     const T& a = aspect;
     return 8.235 * (1.0 + a * (-2.0421 + a * (3.0853 + a * (-2.4765 + a * (1.0578 - 0.1861 * a)))));
 }
@@ -85,7 +89,8 @@ T nusselt_rectangular_duct(const T& re, const T& pr, const T& aspect, const T& l
 
 /// Turbulent developed flow in a duct for a given Darcy friction factor f [-]. Gnielinski 1976:
 /// Nu = (f/8)(Re - 1000) Pr/(1 + 12.7 (f/8)^0.5 (Pr^(2/3) - 1)); Re 2300..1e6, 10 %.
-template <class T> T gnielinski_developed(const T& re, const T& pr, const T& darcy) {
+template <class T>
+T gnielinski_developed(const T& re, const T& pr, const T& darcy) {
     using std::cbrt, std::sqrt;
     const T eighth = darcy / 8.0;
     const T pr_third = cbrt(pr);
@@ -94,7 +99,8 @@ template <class T> T gnielinski_developed(const T& re, const T& pr, const T& dar
 
 /// The same for a smooth duct (Petukhov's f) with its entry, factor 1 + (Dh/L)^(2/3) [-].
 /// Gnielinski 1976.
-template <class T> T gnielinski(const T& re, const T& pr, const T& dh_over_length) {
+template <class T>
+T gnielinski(const T& re, const T& pr, const T& dh_over_length) {
     using std::cbrt;
     const T entry = cbrt(dh_over_length);
     return gnielinski_developed(re, pr, petukhov_darcy(re)) * (1.0 + entry * entry);
@@ -114,7 +120,8 @@ T nusselt_duct_all_regimes(const T& re, const T& pr, const T& aspect, const T& l
 
 /// Flat plate, laminar boundary layer, mean on its length [-]: 0.664 Re^0.5 Pr^(1/3); Re to 5e5, Pr
 /// above 0.6. Pohlhausen 1921.
-template <class T> T nusselt_flat_plate(const T& re, const T& pr) {
+template <class T>
+T nusselt_flat_plate(const T& re, const T& pr) {
     using std::cbrt, std::sqrt;
     return 0.664 * sqrt(re) * cbrt(pr);
 }

@@ -12,13 +12,15 @@ T layer_area_resistance(const T& thickness, const T& conductivity, const T& cont
 }
 
 /// Resistance over an area [K/W].
-template <class T> T resistance_over_area(const T& area_resistance, const T& area) {
+template <class T>
+T resistance_over_area(const T& area_resistance, const T& area) {
     return area_resistance / area;
 }
 
 /// Junction-to-case resistance behind a rating at 25 degC case temperature [K/W]: (Tj,max -
 /// 298.15)/P. Common practice in data sheets, no source. Temperature in K.
-template <class T> T rated_junction_to_case(const T& junction_limit, const T& rated_power) {
+template <class T>
+T rated_junction_to_case(const T& junction_limit, const T& rated_power) {
     return (junction_limit - 298.15) / rated_power;
 }
 

@@ -16,46 +16,53 @@ T elenbaas_number(const T& g_beta_over_nu_alpha, const T& rise, const T& gap, co
 
 /// Hydraulic radius of a U-shaped channel [m]: 2 H S/(2 H + S), twice the section over the wetted
 /// perimeter.
-template <class T> T hydraulic_radius(const T& gap, const T& height) {
+template <class T>
+T hydraulic_radius(const T& gap, const T& height) {
     return 2.0 * height * gap / (2.0 * height + gap);
 }
 
 /// Isothermal parallel plates [-]. Elenbaas 1942: Nu = (El/24)(1 - exp(-35/El))^(3/4); El 0.1..1e5.
-template <class T> T nusselt_elenbaas(const T& el) {
+template <class T>
+T nusselt_elenbaas(const T& el) {
     using std::expm1, std::sqrt;
     const T root = sqrt(-expm1(-35.0 / el));
     return el / 24.0 * root * sqrt(root);
 }
 
 /// Isothermal parallel plates [-]. Bar-Cohen & Rohsenow 1984: Nu = (576/El^2 + 2.873/El^0.5)^-0.5.
-template <class T> T nusselt_parallel_plates(const T& el) {
+template <class T>
+T nusselt_parallel_plates(const T& el) {
     using std::sqrt;
     return 1.0 / sqrt(576.0 / (el * el) + 2.873 / sqrt(el));
 }
 
 /// One plate isothermal, the other adiabatic [-]. Bar-Cohen & Rohsenow 1984: (144/El^2
 /// + 2.873/El^0.5)^-0.5.
-template <class T> T nusselt_parallel_plates_one_side(const T& el) {
+template <class T>
+T nusselt_parallel_plates_one_side(const T& el) {
     using std::sqrt;
     return 1.0 / sqrt(144.0 / (el * el) + 2.873 / sqrt(el));
 }
 
 /// Uniform flux q on both plates, local at the channel's end [-], on wall minus inlet there.
 /// Bar-Cohen & Rohsenow 1984: (48/El' + 2.51/El'^0.4)^-0.5, El' = g beta q S^5/(k nu alpha L).
-template <class T> T nusselt_uniform_flux_end(const T& el_flux) {
+template <class T>
+T nusselt_uniform_flux_end(const T& el_flux) {
     using std::pow, std::sqrt;
     return 1.0 / sqrt(48.0 / el_flux + 2.51 * pow(el_flux, -0.4));
 }
 
 /// As above at mid height [-]. Bar-Cohen & Rohsenow 1984: (12/El' + 1.88/El'^0.4)^-0.5.
-template <class T> T nusselt_uniform_flux_middle(const T& el_flux) {
+template <class T>
+T nusselt_uniform_flux_middle(const T& el_flux) {
     using std::pow, std::sqrt;
     return 1.0 / sqrt(12.0 / el_flux + 1.88 * pow(el_flux, -0.4));
 }
 
 /// Gap that carries most heat per array volume, thin isothermal fins [m]. Bar-Cohen & Rohsenow
 /// 1984: S = 2.714 L/Ra_L^0.25 (there El = 54.3, Nu = 1.307); Ra_L on the length.
-template <class T> T optimum_gap_thin_fins(const T& length, const T& rayleigh_length) {
+template <class T>
+T optimum_gap_thin_fins(const T& length, const T& rayleigh_length) {
     using std::sqrt;
     return 2.714 * length / sqrt(sqrt(rayleigh_length));
 }
@@ -65,7 +72,8 @@ template <class T> T optimum_gap_thin_fins(const T& length, const T& rayleigh_le
 /// 1973: Nu = (Ra/Z)(1 - exp(-Z (0.5/Ra)^0.75)), a = S/H, Z = 24 (1 - 0.483 exp(-0.17/a))/{(1 +
 /// a/2)[1 + (1 - exp(-0.83 a))(9.14 sqrt(a) exp(-465 S) - 0.61)]}^3, S in m. Coefficients from
 /// memory; recovers the parallel-plate and single-plate limits.
-template <class T> T nusselt_u_channel(const T& rayleigh_radius, const T& gap, const T& height) {
+template <class T>
+T nusselt_u_channel(const T& rayleigh_radius, const T& gap, const T& height) {
     using std::exp, std::expm1, std::sqrt;
     const T a = gap / height;
     const T base = 1.0 - exp(-0.83 * a);

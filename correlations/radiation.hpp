@@ -8,7 +8,8 @@ namespace finwright::correlations {
 inline constexpr double stefan_boltzmann = 5.670374419e-8; ///< SI, exact constants [W/(m2 K4)]
 
 /// Radiated flux difference of black surfaces [W/m2]: sigma (Ts^4 - Te^4); K. Stefan-Boltzmann law.
-template <class T> T radiated(const T& surface, const T& surroundings) {
+template <class T>
+T radiated(const T& surface, const T& surroundings) {
     const T s2 = surface * surface, e2 = surroundings * surroundings;
     return stefan_boltzmann * (s2 - e2) * (s2 + e2);
 }
@@ -24,7 +25,8 @@ T radiation_coefficient(double emissivity, const T& surface, const T& surroundin
 /// A_s F_s,env [m2]: S L (1 - 2 F_te) + 2 S H (1 - F_ee) - 2 S L F_te, F_te from the front opening
 /// to an end, F_ee from end to end. Exact for black or isothermal one-zone walls (Incropera 2007,
 /// table 13.2 factors).
-template <class T> T channel_opening(const T& gap, const T& height, const T& length) {
+template <class T>
+T channel_opening(const T& gap, const T& height, const T& length) {
     const T front_to_end = perpendicular_rectangles(height, length, gap);
     const T end_to_end = aligned_rectangles(gap, height, length);
     return gap * length * (1.0 - 4.0 * front_to_end) + 2.0 * gap * height * (1.0 - end_to_end);

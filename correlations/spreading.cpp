@@ -85,7 +85,10 @@ void for_each_mode(const Slab<T>& slab, const ModeSet& modes, Visit&& visit) {
     }
 }
 
-template <class T> struct PadModes { std::vector<T> across, along; };
+template <class T>
+struct PadModes {
+    std::vector<T> across, along;
+};
 
 template <class T>
 std::vector<PadModes<T>> pad_modes(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
@@ -97,7 +100,8 @@ std::vector<PadModes<T>> pad_modes(const Slab<T>& slab, const std::vector<Pad<T>
     return list;
 }
 
-template <class T> T uniform_resistance(const Slab<T>& slab) {
+template <class T>
+T uniform_resistance(const Slab<T>& slab) {
     return slab.thickness / slab.conductivity + 1.0 / slab.film;
 }
 

@@ -12,7 +12,8 @@ namespace finwright::correlations {
 /// pad and base radius, tau = t/b, Bi = h b/k. Lee, Song, Au & Moran 1995 (coefficients from
 /// memory): Phi = (tanh(lambda tau) + lambda/Bi)/(1 + (lambda/Bi) tanh(lambda tau)), lambda = pi +
 /// 1/(sqrt(pi) eps).
-template <class T> T spreading_phi(const T& eps, const T& tau, const T& bi) {
+template <class T>
+T spreading_phi(const T& eps, const T& tau, const T& bi) {
     using std::tanh;
     const T lambda = std::numbers::pi + 1.0 / (std::sqrt(std::numbers::pi) * eps);
     const T t = tanh(lambda * tau), r = lambda / bi;
@@ -20,18 +21,21 @@ template <class T> T spreading_phi(const T& eps, const T& tau, const T& bi) {
 }
 
 /// Mean spreading resistance times sqrt(pi) k a [-]: 0.5 (1 - eps)^1.5 Phi. -6..+2 %.
-template <class T> T spreading_mean(const T& eps, const T& tau, const T& bi) {
+template <class T>
+T spreading_mean(const T& eps, const T& tau, const T& bi) {
     using std::sqrt;
     return 0.5 * (1.0 - eps) * sqrt(1.0 - eps) * spreading_phi(eps, tau, bi);
 }
 
 /// Largest (centre) spreading resistance times sqrt(pi) k a [-]: (1 - eps) Phi/sqrt(pi). -2..+4 %.
-template <class T> T spreading_largest(const T& eps, const T& tau, const T& bi) {
+template <class T>
+T spreading_largest(const T& eps, const T& tau, const T& bi) {
     return (1.0 - eps) * spreading_phi(eps, tau, bi) / std::sqrt(std::numbers::pi);
 }
 
 /// A base cooled with one film coefficient over its far side. SI.
-template <class T> struct Slab {
+template <class T>
+struct Slab {
     T width;             ///< along x [m]
     T length;            ///< along y [m]
     T thickness;         ///< [m]
@@ -40,7 +44,8 @@ template <class T> struct Slab {
 };
 
 /// A rectangular pad of uniform flux on the base.
-template <class T> struct Pad {
+template <class T>
+struct Pad {
     T x, y;          ///< centre from the corner [m]
     T across, along; ///< sides along x and y [m]
 };

@@ -7,7 +7,8 @@
 namespace finwright::correlations {
 
 /// Two aligned parallel rectangles a x b, a distance c apart [-]. Howell catalogue C-11.
-template <class T> T aligned_rectangles(const T& a, const T& b, const T& c) {
+template <class T>
+T aligned_rectangles(const T& a, const T& b, const T& c) {
     using std::atan, std::log, std::sqrt;
     const T x = a / c, y = b / c;
     const T x2 = 1.0 + x * x, y2 = 1.0 + y * y;
@@ -19,7 +20,8 @@ template <class T> T aligned_rectangles(const T& a, const T& b, const T& c) {
 
 /// Two perpendicular rectangles with a common edge x: from the one of depth y to the one of height
 /// z [-]. Howell catalogue C-14.
-template <class T> T perpendicular_rectangles(const T& z, const T& y, const T& x) {
+template <class T>
+T perpendicular_rectangles(const T& z, const T& y, const T& x) {
     using std::atan, std::log, std::sqrt;
     const T h = z / x, w = y / x;
     const T h2 = h * h, w2 = w * w, sum = h2 + w2, diagonal = sqrt(sum);

@@ -31,7 +31,8 @@ std::vector<std::vector<int>> combinations(std::span<const IntegerRange> ranges)
 }
 
 /// Runs work(i) for i < count on `threads` threads; the first exception comes back to the caller.
-template <class Work> void in_parallel(std::size_t count, int threads, Work&& work) {
+template <class Work>
+void in_parallel(std::size_t count, int threads, Work&& work) {
     std::atomic<std::size_t> next{0};
     std::exception_ptr failure;
     std::mutex failing;

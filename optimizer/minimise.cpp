@@ -19,6 +19,10 @@ using Point = std::vector<double>;
 constexpr double not_a_number_objective = 1e10; // what NLopt sees where the model has no number
 constexpr double not_a_number_constraint = 1e3;
 constexpr int restarts = 3;
+constexpr double anywhere = 1e30;
+// How far from its centre a model is trusted, scaled: at first, and by what it shrinks from round
+// to round.
+constexpr double first_reach = 0.5, reach_shrinks = 0.8;
 
 /// The budget one call of minimise() has, shared by all its solves.
 struct Budget {
@@ -46,7 +50,8 @@ public:
           x_(problem.variables().size()) {}
 
     /// The best point seen: feasible with the least objective, or else the least violated.
-    Point run(nlopt::algorithm algorithm, const Point& start) {
+    /// Variables stay within `reach` of the start, scaled.
+    Point run(nlopt::algorithm algorithm, const Point& start, double reach = anywhere) {
         best_.clear();
         const auto& variables = problem_.variables();
         const std::size_t n = variables.size();
@@ -55,6 +60,8 @@ public:
             low[j] = to_scaled(variables[j], variables[j].lower);
             high[j] = to_scaled(variables[j], variables[j].upper);
             u[j] = std::clamp(to_scaled(variables[j], start[j]), low[j], high[j]);
+            low[j] = std::max(low[j], u[j] - reach);
+            high[j] = std::min(high[j], u[j] + reach);
         }
         nlopt::opt solver(algorithm, unsigned(n));
         solver.set_lower_bounds(low);
@@ -118,7 +125,8 @@ private:
         best_objective_ = at_.objective;
     }
 
-    template <class Fill> void guarded(const double* u, Fill&& fill) {
+    template <class Fill>
+    void guarded(const double* u, Fill&& fill) {
         if (failure_) return;
         try {
             if (budget_.spent()) {
@@ -224,10 +232,13 @@ public:
           budget_(budget) {}
 
     Judged from(const Point& start) {
-        Judged best = settled(start);
+        Judged best = settled(start, anywhere);
+        double reach = first_reach;
         for (int round = 0; round < settings_.recentres && !budget_.spent(); ++round) {
             if (!problem_.recentre(best.x)) break;
-            best = settled(best.x); // the model moved: what was judged before is judged again
+            best =
+                settled(best.x, reach); // the model moved: what was judged before is judged again
+            reach *= reach_shrinks;
         }
         return best;
     }
@@ -235,12 +246,12 @@ public:
     const Solve& solve() const { return solve_; }
 
 private:
-    Judged settled(const Point& start) {
-        Point x = solve_.run(nlopt::LD_SLSQP, start);
+    Judged settled(const Point& start, double reach) {
+        Point x = solve_.run(nlopt::LD_SLSQP, start, reach);
         if (x.empty()) x = start;
         Judged best = by_model(problem_, x);
         for (int again = 0; again < restarts && !budget_.spent() && !stationary(best); ++again) {
-            const Point next = solve_.run(nlopt::LD_SLSQP, best.x);
+            const Point next = solve_.run(nlopt::LD_SLSQP, best.x, reach);
             if (next.empty()) break;
             Judged j = by_model(problem_, next);
             const bool gained =

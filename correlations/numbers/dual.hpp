@@ -13,7 +13,8 @@
 
 namespace finwright::correlations {
 
-template <std::size_t N> struct Dual {
+template <std::size_t N>
+struct Dual {
     double value = 0.0;
     std::array<double, N> slope{};
 
@@ -147,7 +148,8 @@ template <std::size_t N> struct Dual {
 };
 
 /// The plain number inside, for printing and for deciding.
-template <std::size_t N> constexpr double value_of(const Dual<N>& a) {
+template <std::size_t N>
+constexpr double value_of(const Dual<N>& a) {
     return a.value;
 }
 constexpr double value_of(double a) {
@@ -155,7 +157,8 @@ constexpr double value_of(double a) {
 }
 
 /// Bounded to [lower, upper]; constant, so slope zero, outside.
-template <class T> T clamp(const T& a, double lower, double upper) {
+template <class T>
+T clamp(const T& a, double lower, double upper) {
     using std::max, std::min;
     return min(max(a, T(lower)), T(upper));
 }

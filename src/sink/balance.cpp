@@ -21,15 +21,18 @@ auto with_model(const Geometry<T>& g, const Duty& duty, Visitor&& visit) {
     return visit(DuctedSink<T>(g, duty.surroundings, duty.material));
 }
 
-template <class T> T pressure_lost(const StillAirSink<T>&, const T&) {
+template <class T>
+T pressure_lost(const StillAirSink<T>&, const T&) {
     return T(0.0);
 }
-template <class T> T pressure_lost(const DuctedSink<T>& sink, const T& base_rise) {
+template <class T>
+T pressure_lost(const DuctedSink<T>& sink, const T& base_rise) {
     return sink.pressure_drop(base_rise);
 }
 
 /// Secant in (log rise, log heat): the curve is almost a straight line there.
-template <class Model> double balanced_rise(const Model& model, double power, double guess) {
+template <class Model>
+double balanced_rise(const Model& model, double power, double guess) {
     const auto log_heat = [&](double log_rise) {
         return std::log(model.shed(std::exp(log_rise)).total() / power);
     };
@@ -75,7 +78,8 @@ Dual<5> along(const Dual<6>& f, const Dual<5>& rise) {
 
 } // namespace
 
-template <class T> Geometry<double> plain(const Geometry<T>& g) {
+template <class T>
+Geometry<double> plain(const Geometry<T>& g) {
     using correlations::value_of;
     return {g.fins,           value_of(g.height), value_of(g.thickness), value_of(g.gap),
             value_of(g.base), value_of(g.length), g.draft_tangent};

@@ -9,7 +9,8 @@
 namespace finwright::sink {
 
 /// The sink in balance with its duty, before spreading.
-template <class T> struct Balance {
+template <class T>
+struct Balance {
     T base_rise = T(0.0);     ///< mean of the base over the inlet air [K]
     T pressure_drop = T(0.0); ///< 0 in still air [Pa]
 };

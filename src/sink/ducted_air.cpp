@@ -10,7 +10,8 @@ namespace finwright::sink {
 
 namespace {
 
-template <class T> T stated_flow(const Geometry<T>& g, const Surroundings& s) {
+template <class T>
+T stated_flow(const Geometry<T>& g, const Surroundings& s) {
     if (const auto* flow = std::get_if<DuctFlow>(&s.air)) return T(flow->volume);
     return std::get<DuctVelocity>(s.air).approach * g.width() * g.height;
 }
@@ -27,7 +28,8 @@ DuctedSink<T>::DuctedSink(const Geometry<T>& geometry, const Surroundings& surro
           volume_flow_ *
           correlations::air_at(surroundings.air_temperature, surroundings.pressure).density) {}
 
-template <class T> DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
+template <class T>
+DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
     using std::max;
     using std::min;
     const T gap = g_.mean_gap();
@@ -58,18 +60,21 @@ template <class T> DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) cons
     return v;
 }
 
-template <class T> T DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
+template <class T>
+T DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
     using std::expm1;
     return -v.capacity_flow * expm1(-v.transfer_units) * base_rise;
 }
 
-template <class T> HeatPaths<T> DuctedSink<T>::shed(const T& base_rise) const {
+template <class T>
+HeatPaths<T> DuctedSink<T>::shed(const T& base_rise) const {
     HeatPaths<T> q;
     q.channels = heat(view(base_rise), base_rise);
     return q;
 }
 
-template <class T> T DuctedSink<T>::pressure_drop(const T& base_rise) const {
+template <class T>
+T DuctedSink<T>::pressure_drop(const T& base_rise) const {
     const DuctedAirView<T> v = view(base_rise);
     const T bulk_mean = surroundings_.air_temperature + 0.5 * heat(v, base_rise) / v.capacity_flow;
     const auto air = correlations::air_at(bulk_mean, surroundings_.pressure);

@@ -14,7 +14,8 @@
 
 namespace finwright::sink {
 
-template <class T> struct DuctedAirView {
+template <class T>
+struct DuctedAirView {
     T film_temperature = T(0.0);   ///< [K]
     T approach_velocity = T(0.0);  ///< before the fins, inlet density [m/s]
     T channel_velocity = T(0.0);   ///< between the fins, inlet density [m/s]
@@ -31,7 +32,8 @@ template <class T> struct DuctedAirView {
     T transfer_units = T(0.0);     ///< UA/(m cp) [-]
 };
 
-template <class T> class DuctedSink {
+template <class T>
+class DuctedSink {
 public:
     DuctedSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                const Material& material);

@@ -15,7 +15,8 @@ namespace finwright::sink {
 
 /// 3 int_0^1 s^2/(tau + (1 - tau) s) ds by four-point Gauss-Legendre quadrature (1 for a straight
 /// fin) [-]
-template <class T> T taper_factor(const T& tau) {
+template <class T>
+T taper_factor(const T& tau) {
     constexpr double node[4] = {0.0694318442029737, 0.3300094782075719, 0.6699905217924281,
                                 0.9305681557970263};
     constexpr double weight[4] = {0.1739274225687269, 0.3260725774312731, 0.3260725774312731,
@@ -27,14 +28,16 @@ template <class T> T taper_factor(const T& tau) {
 }
 
 /// Hc/(k t L) with the taper allowed for: (m Hc)^2 = G times this [K/W].
-template <class T> T fin_shape(const Geometry<T>& g, double conductivity) {
+template <class T>
+T fin_shape(const Geometry<T>& g, double conductivity) {
     const T corrected_height = g.height + 0.5 * g.tip_thickness();
     return taper_factor(T(g.tip_thickness() / g.thickness)) * corrected_height /
            (conductivity * g.thickness * g.length);
 }
 
 /// Mean rise of the fin over its base's rise, G as above [-].
-template <class T> T efficiency(const T& conductance, const T& shape) {
+template <class T>
+T efficiency(const T& conductance, const T& shape) {
     using std::sqrt;
     return correlations::fin_efficiency(T(sqrt(conductance * shape)));
 }

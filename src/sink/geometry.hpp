@@ -16,7 +16,8 @@
 
 namespace finwright::sink {
 
-template <class T> struct Geometry {
+template <class T>
+struct Geometry {
     int fins = 2;
     T height;                   ///< H, off the base [m]
     T thickness;                ///< t, at the root [m]
@@ -40,11 +41,13 @@ template <class T> struct Geometry {
 };
 
 /// Width that N fins and their gaps take, solved for the gap [m].
-template <class T> T gap_for_width(int fins, const T& width, const T& thickness) {
+template <class T>
+T gap_for_width(int fins, const T& width, const T& thickness) {
     return (width - double(fins) * thickness) / double(fins - 1);
 }
 
 /// The same part with its dimensions as plain numbers.
-template <class T> Geometry<double> plain(const Geometry<T>& g);
+template <class T>
+Geometry<double> plain(const Geometry<T>& g);
 
 } // namespace finwright::sink

@@ -4,7 +4,8 @@
 namespace finwright::sink {
 
 /// Heat leaving the sink by path [W].
-template <class T> struct HeatPaths {
+template <class T>
+struct HeatPaths {
     T channels = T(0.0);    ///< convection from fin faces and base strips between fins
     T outer_faces = T(0.0); ///< convection from the two outermost fin faces
     T tips_edges = T(0.0);  ///< convection from fin tips and the fins' end faces

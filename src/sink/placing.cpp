@@ -24,7 +24,8 @@ std::vector<double> row_shares(const std::vector<job::Part>& parts) {
     return shares;
 }
 
-template <class T> T on_side(const job::Coordinate& coordinate, const T& side) {
+template <class T>
+T on_side(const job::Coordinate& coordinate, const T& side) {
     return coordinate.share_of_side ? T(coordinate.value * side) : T(coordinate.value);
 }
 

@@ -74,7 +74,8 @@ void rate_parts(Rating& rating, const Duty& duty) {
 }
 
 /// The base as the spreading series sees it.
-template <class T> struct LoadedBase {
+template <class T>
+struct LoadedBase {
     correlations::Slab<T> slab;
     std::vector<correlations::Pad<T>> pads;
     std::vector<double> powers;

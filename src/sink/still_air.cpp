@@ -43,7 +43,8 @@ T StillAirSink<T>::channel_coefficient(const StillAirView<T>& v, const T& conduc
            correlations::hydraulic_radius(gap, g_.height);
 }
 
-template <class T> StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
+template <class T>
+StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
     const double ambient = surroundings_.air_temperature;
     const T gap = g_.mean_gap();
     StillAirView<T> v;
@@ -67,7 +68,8 @@ template <class T> StillAirView<T> StillAirSink<T>::films(const T& wall_rise) co
     return v;
 }
 
-template <class T> void StillAirSink<T>::efficiencies(StillAirView<T>& v) const {
+template <class T>
+void StillAirSink<T>::efficiencies(StillAirView<T>& v) const {
     const T face = g_.height * g_.length;
     const T inside = v.channel_film + v.channel_radiation;
     const T outside = v.outer_film + v.outer_radiation;
@@ -76,7 +78,8 @@ template <class T> void StillAirSink<T>::efficiencies(StillAirView<T>& v) const 
     v.outer_efficiency = efficiency(T(face * (inside + outside) + ends), fin_shape_);
 }
 
-template <class T> StillAirView<T> StillAirSink<T>::view(const T& base_rise) const {
+template <class T>
+StillAirView<T> StillAirSink<T>::view(const T& base_rise) const {
     const T fin_share = 2.0 * g_.height / (2.0 * g_.height + g_.gap);
     StillAirView<T> v = films(base_rise);
     efficiencies(v);
@@ -109,7 +112,8 @@ HeatPaths<T> StillAirSink<T>::paths(const StillAirView<T>& v, const T& base_rise
     return q;
 }
 
-template <class T> HeatPaths<T> StillAirSink<T>::shed(const T& base_rise) const {
+template <class T>
+HeatPaths<T> StillAirSink<T>::shed(const T& base_rise) const {
     return paths(view(base_rise), base_rise);
 }
 

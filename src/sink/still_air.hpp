@@ -18,7 +18,8 @@
 namespace finwright::sink {
 
 /// What the laws saw, for range checks and for the reader.
-template <class T> struct StillAirView {
+template <class T>
+struct StillAirView {
     T wall_rise = T(0.0);         ///< mean over the channel walls [K]
     T film_temperature = T(0.0);  ///< [K]
     T elenbaas = T(0.0);          ///< channel number on the gap [-]
@@ -33,7 +34,8 @@ template <class T> struct StillAirView {
     T outer_efficiency = T(1.0);  ///< first and last fin [-]
 };
 
-template <class T> class StillAirSink {
+template <class T>
+class StillAirSink {
 public:
     StillAirSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                  const Material& material, ChannelLaw law);

@@ -52,7 +52,8 @@ std::optional<Dimension> decided_by_width(WidthRule rule) {
 }
 
 /// What a limit measures, once the sink is in balance. `worst` is the worst-pad variable.
-template <class T> struct Measured {
+template <class T>
+struct Measured {
     const Geometry<T>& g;
     const sink::Duty& duty;
     const sink::Balance<T>& balance;
@@ -61,7 +62,8 @@ template <class T> struct Measured {
 };
 
 /// ln(quantity/bound), turned so that the limit holds when it is <= 0.
-template <class T> T constraint(const Limit& limit, const Measured<T>& m) {
+template <class T>
+T constraint(const Limit& limit, const Measured<T>& m) {
     using std::hypot;
     using std::log;
     const Geometry<T>& g = m.g;
@@ -98,7 +100,8 @@ template <class T> T constraint(const Limit& limit, const Measured<T>& m) {
     return T(0.0);
 }
 
-template <class T> T aim(Pursuit pursuit, const Measured<T>& m) {
+template <class T>
+T aim(Pursuit pursuit, const Measured<T>& m) {
     const Geometry<T>& g = m.g;
     switch (pursuit) {
     case Pursuit::mass:
@@ -118,7 +121,8 @@ template <class T> T aim(Pursuit pursuit, const Measured<T>& m) {
     return T(0.0);
 }
 
-template <class T> T objective(Pursuit pursuit, const Measured<T>& m) {
+template <class T>
+T objective(Pursuit pursuit, const Measured<T>& m) {
     using std::log;
     const T main = log(aim(pursuit, m));
     return pursuit == Pursuit::mass ? main : T(main + tie_break * log(m.g.metal()));
@@ -135,7 +139,8 @@ bool needs_balance(Pursuit pursuit) {
 }
 
 /// Keeps a dimension that follows from a fixed width positive, far below what its limit allows.
-template <class T> T floored(const T& value, const T& smallest) {
+template <class T>
+T floored(const T& value, const T& smallest) {
     using std::max;
     return max(value, T(0.05 * smallest));
 }
@@ -196,7 +201,8 @@ bool SearchProblem::pursues_worst_pad() const {
     return pursuit_ == Pursuit::resistance || pursuit_ == Pursuit::excess;
 }
 
-template <class T, class Seed> Geometry<T> SearchProblem::build(Seed&& seed) const {
+template <class T, class Seed>
+Geometry<T> SearchProblem::build(Seed&& seed) const {
     std::array<T, dimension_count> d;
     for (std::size_t k = 0; k < dimension_count; ++k)
         d[k] = T(space_.rooms[k].lower);

@@ -50,7 +50,8 @@ public:
     bool feasible(std::span<const double> dimensions) const;
 
 private:
-    template <class T, class Seed> sink::Geometry<T> build(Seed&& seed) const;
+    template <class T, class Seed>
+    sink::Geometry<T> build(Seed&& seed) const;
     sink::Geometry<Dual5> seeded(std::span<const double> x) const;
     bool pursues_worst_pad() const;
 

@@ -7,10 +7,11 @@ namespace finwright::sizing {
 
 namespace {
 
-constexpr double coarse_half_waves = 0.5;
+constexpr double coarse_half_waves = 0.8;
 constexpr double least_tail = 1e-9; // a tail that vanishes is kept just above zero [K]
 
-template <class T> std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {
+template <class T>
+std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {
     return {g.height, g.thickness, g.gap, g.base, g.length};
 }
 

@@ -21,7 +21,8 @@ TEST_CASE("at one atmosphere: within 0.3 % of the full equations, AJ rows (compu
         const auto row = check_value(id);
         const auto air = air_at(row["T"], 101325.0);
         CHECK(air.density == near(row.values[0], 1.5e-3));
-        CHECK(air.specific_heat == near(row.values[1], 2.5e-3)); // the polynomial is 0.2 % high at 400 K
+        CHECK(air.specific_heat ==
+              near(row.values[1], 2.5e-3)); // the polynomial is 0.2 % high at 400 K
         CHECK(air.viscosity == near(row.values[2], 3e-3));
         CHECK(air.conductivity == near(row.values[3], 3e-3));
         CHECK(air.prandtl() == near(row.values[4], 4e-3));

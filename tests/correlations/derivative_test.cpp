@@ -123,7 +123,8 @@ TEST_CASE("fins, radiation, spreading") {
                  [](const auto& x) { return spreading_mean(x[0], x[1], x[2]); });
 }
 
-// Sides away from round multiples of the pads: where the number of modes changes the value steps by some 1e-8.
+// Sides away from round multiples of the pads: where the number of modes changes the value steps by
+// some 1e-8.
 TEST_CASE("the series' slopes by all five dimensions it sees") {
     using D = Dual<5>;
     const auto rises = [](auto w, auto l, auto t, auto h, auto x) {

@@ -62,7 +62,8 @@ TEST_CASE("duct with sides, top and bottom, TB-02 (Incropera 6e, example 9.3: 24
           near(check_value("TB-02").value(), 1e-2));
 }
 
-TEST_CASE("smooth forms stay within 30 % of the textbook pair they replace (the two sources differ that much)") {
+TEST_CASE("smooth forms stay within 30 % of the textbook pair they replace (the two sources differ "
+          "that much)") {
     for (double ra : {1e5, 1e6, 1e7}) {
         CHECK(nusselt_facing_up(ra, 0.71) == near(nusselt_facing_up_laminar_textbook(ra), 0.25));
         CHECK(nusselt_facing_down(ra, 0.71) == near(nusselt_facing_down_textbook(ra), 0.30));

@@ -11,14 +11,16 @@ using finwright::tests::near;
 
 namespace {
 
-template <class Entry> const Entry& named(const std::vector<Entry>& list, const char* name) {
+template <class Entry>
+const Entry& named(const std::vector<Entry>& list, const char* name) {
     const auto found =
         std::find_if(list.begin(), list.end(), [&](const Entry& e) { return e.name == name; });
     REQUIRE(found != list.end());
     return *found;
 }
 
-template <class Entry> void check_named_and_sourced(const std::vector<Entry>& list) {
+template <class Entry>
+void check_named_and_sourced(const std::vector<Entry>& list) {
     std::set<std::string> names;
     for (const Entry& entry : list) {
         CAPTURE(entry.name);

@@ -129,11 +129,10 @@ TEST_CASE("HS 12: -30") {
 
 // The book's equality sum of squares = 40; only this side of it binds.
 TEST_CASE("HS 71: 17.0140173") {
-    check_from({box(4, 1.0, 5.0),
-                [](X x) { return x[0] * x[3] * (x[0] + x[1] + x[2]) + x[2]; },
-                {[](X x) { return 25.0 - x[0] * x[1] * x[2] * x[3]; },
-                 [](X x) {
-                     return square(x[0]) + square(x[1]) + square(x[2]) + square(x[3]) - 40.0;
-                 }}},
-               {1.0, 5.0, 5.0, 1.0}, 17.0140173);
+    check_from(
+        {box(4, 1.0, 5.0),
+         [](X x) { return x[0] * x[3] * (x[0] + x[1] + x[2]) + x[2]; },
+         {[](X x) { return 25.0 - x[0] * x[1] * x[2] * x[3]; },
+          [](X x) { return square(x[0]) + square(x[1]) + square(x[2]) + square(x[3]) - 40.0; }}},
+        {1.0, 5.0, 5.0, 1.0}, 17.0140173);
 }
