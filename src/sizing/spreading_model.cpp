@@ -8,7 +8,7 @@ namespace finwright::sizing {
 namespace {
 
 constexpr double coarse_half_waves = 0.8;
-constexpr double least_tail = 1e-9; // a tail that vanishes is kept just above zero [K]
+constexpr double tamest_exponent = 4.0; // of a tail as a monomial
 
 template <class T>
 std::array<T, 5> dimensions_of(const sink::Geometry<T>& g) {
@@ -39,28 +39,35 @@ void SpreadingModel::centre(const sink::Geometry<double>& plain, const sink::Dut
     tails_.clear();
     for (std::size_t i = 0; i < full.size(); ++i) {
         const Dual5 rise = full[i] - coarse[i];
-        Tail tail{std::max(rise.value, least_tail), {}};
-        for (std::size_t k = 0; k < 5; ++k)
-            tail.exponents[k] = rise.slope[k] * values[k] / tail.rise;
+        Tail tail{rise.value, {}, true};
+        for (std::size_t k = 0; k < 5; ++k) {
+            tail.slopes[k] = rise.slope[k] * values[k];
+            tail.monomial =
+                tail.monomial && std::abs(tail.slopes[k]) < tamest_exponent * std::abs(tail.rise);
+        }
         tails_.push_back(tail);
     }
 }
 
 template <class T>
+T SpreadingModel::Tail::at(const std::array<T, 5>& away) const {
+    using std::exp;
+    T sum(0.0);
+    for (std::size_t k = 0; k < 5; ++k)
+        sum += slopes[k] * away[k];
+    return monomial ? T(rise * exp(sum / rise)) : T(rise + sum);
+}
+
+template <class T>
 std::vector<T> SpreadingModel::pad_rises(const sink::Geometry<T>& g, const sink::Duty& duty,
                                          const T& base_rise) const {
-    using std::exp;
     using std::log;
     std::array<T, 5> away = dimensions_of(g);
     for (std::size_t k = 0; k < 5; ++k)
         away[k] = log(away[k]) - log_centre_[k];
     std::vector<T> rises = sink::pad_rises(g, duty, base_rise, modes_);
-    for (std::size_t i = 0; i < rises.size(); ++i) {
-        T sum(0.0);
-        for (std::size_t k = 0; k < 5; ++k)
-            sum += tails_[i].exponents[k] * away[k];
-        rises[i] += tails_[i].rise * exp(sum);
-    }
+    for (std::size_t i = 0; i < rises.size(); ++i)
+        rises[i] += tails_[i].at(away);
     return rises;
 }
 

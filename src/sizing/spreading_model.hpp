@@ -30,10 +30,15 @@ public:
                              const T& base_rise) const;
 
 private:
-    /// What the modes left out add to one pad.
+    /// What the modes left out add to one pad: a monomial of the dimensions, or linear in their
+    /// logarithms where it is too small beside its slopes for a monomial to be tame.
     struct Tail {
-        double rise = 0.0;                 ///< at the centre [K]
-        std::array<double, 5> exponents{}; ///< d ln rise / d ln dimension
+        double rise = 0.0;              ///< at the centre [K]
+        std::array<double, 5> slopes{}; ///< d rise / d ln dimension [K]
+        bool monomial = false;
+
+        template <class T>
+        T at(const std::array<T, 5>& away) const;
     };
     correlations::ModeSet modes_;
     std::array<double, 5> log_centre_{};
