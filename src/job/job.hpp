@@ -48,7 +48,14 @@ struct Part {
     Place place;
 };
 
-struct StillAir {};
+/// Which law gives the film coefficient inside still-air channels: this project's fit over
+/// published limits, or one of the published laws. The default is chosen by evidence:
+/// docs/validation.md.
+enum class ChannelLaw { fin_channel, u_channel, parallel_plates, elenbaas };
+
+struct StillAir {
+    ChannelLaw channel_law = ChannelLaw::fin_channel;
+};
 
 /// Air led through the fins by a duct that fits them closely. Exactly one is given.
 struct DuctedAir {

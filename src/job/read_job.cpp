@@ -61,9 +61,22 @@ double not_negative(const Document& d, Mapping& m, std::string_view key, const Q
 
 // ---- air ----
 
+ChannelLaw read_channel_law(Mapping& m) {
+    static const std::vector<std::pair<std::string, ChannelLaw>> laws{
+        {"fin_channel", ChannelLaw::fin_channel},
+        {"u_channel", ChannelLaw::u_channel},
+        {"parallel_plates", ChannelLaw::parallel_plates},
+        {"elenbaas", ChannelLaw::elenbaas}};
+    const std::string text = m.optional_text("channel_law").value_or("fin_channel");
+    for (const auto& [name, law] : laws)
+        if (name == text) return law;
+    m.fail("channel_law", fmt::format("there is no channel law '{}'", text),
+           "write fin_channel, u_channel, parallel_plates or elenbaas");
+}
+
 Air read_air(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "air");
-    m.only({"state", "temperature", "altitude", "velocity", "flow"});
+    m.only({"state", "temperature", "altitude", "velocity", "flow", "channel_law"});
     Air air;
     air.temperature = m.number("temperature", quantity::temperature);
     if (air.temperature < 223.15 || air.temperature > 473.15)
@@ -80,9 +93,12 @@ Air read_air(const Document& d, const TreeNode& node) {
                    fmt::format("still air cannot have a {}; 'state: still' stands in line {}",
                                velocity ? "velocity" : "flow", m.place_of("state").line),
                    "write state: ducted, or leave this line out", m.place_of("state"));
-        air.state = StillAir{};
+        air.state = StillAir{read_channel_law(m)};
         return air;
     }
+    if (m.has("channel_law"))
+        m.fail("channel_law", "a channel law is chosen for still air only", "leave the line out",
+               m.place_of("state"));
     if (state != "ducted")
         m.fail("state", fmt::format("air state '{}' is not known", state), "write still or ducted");
     if (velocity && flow)

@@ -216,7 +216,29 @@ std::string alternatives_table(const Job& job, const Answer& answer) {
     return heading("Nearest alternatives, each optimised and rounded") + table.text();
 }
 
-std::string laws_used(const Rating& rating) {
+/// The same sink by each channel law, for still air: what the choice of law is worth.
+std::string by_each_channel_law(const Job& job, const Rating& rating) {
+    const auto* still = std::get_if<job::StillAir>(&job.air.state);
+    if (!still) return {};
+    using job::ChannelLaw;
+    constexpr std::pair<ChannelLaw, const char*> laws[] = {
+        {ChannelLaw::fin_channel, "fin_channel"},
+        {ChannelLaw::u_channel, "u_channel"},
+        {ChannelLaw::parallel_plates, "parallel_plates"},
+        {ChannelLaw::elenbaas, "elenbaas"}};
+    sink::Duty duty = sink::duty_of(job);
+    std::string text;
+    for (const auto& [law, name] : laws) {
+        std::get<sink::StillAir>(duty.surroundings.air).channel_law = law;
+        const double rise = sink::rate(rating.geometry, duty).hottest_pad_rise;
+        text += fmt::format("{}{} {} K{}", text.empty() ? "" : ", ", name, fixed(rise, 1),
+                            law == still->channel_law ? " (used)" : "");
+    }
+    return paragraph("Hottest pad's rise by each channel law: " + text +
+                     ". Choose with air: channel_law.");
+}
+
+std::string laws_used(const Job& job, const Rating& rating) {
     std::string lines, warnings;
     for (const sink::LawUse& use : rating.laws) {
         const auto* passport = correlations::find_passport(use.passport);
@@ -226,7 +248,8 @@ std::string laws_used(const Rating& rating) {
         for (const std::string& left : use.ranges_left())
             warnings += wrapped(left, page_width, "  ! ", "    ");
     }
-    std::string out = heading("Laws used (finwright laws NAME for each passport)") + lines;
+    std::string out = heading("Laws used (finwright laws NAME for each passport)") + lines +
+                      by_each_channel_law(job, rating);
     if (!warnings.empty()) out += heading("Outside a law's range") + warnings;
     return out;
 }
@@ -352,13 +375,13 @@ std::string size_page(const Job& job, const Answer& answer) {
            rounding_line(answer, job) + dimension_table(job, answer.rating.geometry) +
            budget(job, answer.rating) + heat_split(answer.rating) +
            binding_table(job, answer.binding) + alternatives_table(job, answer) +
-           laws_used(answer.rating) + caution_list(job, answer.rating);
+           laws_used(job, answer.rating) + caution_list(job, answer.rating);
 }
 
 std::string rate_page(const Job& job, const Rating& rating) {
     return title_lines(job) + heading("The sink as stated") + key_line(rating, job) +
            standing(job, rating) + dimension_table(job, rating.geometry) + budget(job, rating) +
-           heat_split(rating) + laws_used(rating) + caution_list(job, rating);
+           heat_split(rating) + laws_used(job, rating) + caution_list(job, rating);
 }
 
 std::string refusal_page(const Job& job, const Refusal& refusal) {

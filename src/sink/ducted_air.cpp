@@ -61,22 +61,17 @@ DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
 }
 
 template <class T>
-T DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
+HeatPaths<T> DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
     using std::expm1;
-    return -v.capacity_flow * expm1(-v.transfer_units) * base_rise;
-}
-
-template <class T>
-HeatPaths<T> DuctedSink<T>::shed(const T& base_rise) const {
     HeatPaths<T> q;
-    q.channels = heat(view(base_rise), base_rise);
+    q.channels = -v.capacity_flow * expm1(-v.transfer_units) * base_rise;
     return q;
 }
 
 template <class T>
-T DuctedSink<T>::pressure_drop(const T& base_rise) const {
-    const DuctedAirView<T> v = view(base_rise);
-    const T bulk_mean = surroundings_.air_temperature + 0.5 * heat(v, base_rise) / v.capacity_flow;
+T DuctedSink<T>::pressure_drop(const DuctedAirView<T>& v, const T& base_rise) const {
+    const T bulk_mean =
+        surroundings_.air_temperature + 0.5 * heat(v, base_rise).channels / v.capacity_flow;
     const auto air = correlations::air_at(bulk_mean, surroundings_.pressure);
     const T free_area = double(g_.fins - 1) * g_.mean_gap() * g_.height;
     const T mass_flux = mass_flow_ / free_area;

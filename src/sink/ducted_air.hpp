@@ -38,17 +38,16 @@ public:
     DuctedSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                const Material& material);
 
-    /// Heat by path at a base rise over the inlet air [K] -> [W].
-    HeatPaths<T> shed(const T& base_rise) const;
-
-    /// Static pressure the flow loses from before the fins to behind them [Pa].
-    T pressure_drop(const T& base_rise) const;
-
+    /// What the laws see at a base rise over the inlet air [K].
     DuctedAirView<T> view(const T& base_rise) const;
 
-private:
-    T heat(const DuctedAirView<T>& v, const T& base_rise) const;
+    /// Heat by path at that base rise [W].
+    HeatPaths<T> heat(const DuctedAirView<T>& v, const T& base_rise) const;
 
+    /// Static pressure the flow loses from before the fins to behind them [Pa].
+    T pressure_drop(const DuctedAirView<T>& v, const T& base_rise) const;
+
+private:
     Geometry<T> g_;
     Surroundings surroundings_;
     Material material_;

@@ -15,7 +15,7 @@ namespace {
 
 std::variant<StillAir, DuctVelocity, DuctFlow> air_of(const job::Air& air) {
     const auto* duct = std::get_if<job::DuctedAir>(&air.state);
-    if (!duct) return StillAir{};
+    if (!duct) return StillAir{std::get<job::StillAir>(air.state).channel_law};
     if (duct->velocity) return DuctVelocity{*duct->velocity};
     return DuctFlow{duct->flow.value()};
 }

@@ -10,13 +10,11 @@
 
 namespace finwright::sink {
 
-/// Which published law gives the film coefficient inside still-air channels.
-/// The default is chosen by evidence: docs/validation.md.
-enum class ChannelLaw { u_channel, parallel_plates, elenbaas };
+using ChannelLaw = job::ChannelLaw;
 
 /// Fins vertical, base vertical, room air at rest.
 struct StillAir {
-    ChannelLaw channel_law = ChannelLaw::u_channel;
+    ChannelLaw channel_law = ChannelLaw::fin_channel;
 };
 
 /// The air stated for a duct that fits the fins closely: its velocity before the fins, or its

@@ -25,6 +25,9 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
         {"air_conductivity", "air in the film", {v.film_temperature}},
     };
     switch (law) {
+    case ChannelLaw::fin_channel:
+        uses.push_back({"fin_channel", "channels", {v.elenbaas, v.plate, gap, g.height, g.length}});
+        break;
     case ChannelLaw::u_channel:
         uses.push_back({"u_channel", "channels", {v.rayleigh_radius, gap, g.height}});
         break;

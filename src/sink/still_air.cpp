@@ -37,10 +37,13 @@ T StillAirSink<T>::channel_coefficient(const StillAirView<T>& v, const T& conduc
     case ChannelLaw::elenbaas:
         return correlations::nusselt_elenbaas(v.elenbaas) * conductivity / gap;
     case ChannelLaw::u_channel:
+        return correlations::nusselt_u_channel(v.rayleigh_radius, gap, g_.height) * conductivity /
+               correlations::hydraulic_radius(gap, g_.height);
+    case ChannelLaw::fin_channel:
         break;
     }
-    return correlations::nusselt_u_channel(v.rayleigh_radius, gap, g_.height) * conductivity /
-           correlations::hydraulic_radius(gap, g_.height);
+    return correlations::nusselt_fin_channel(v.elenbaas, v.plate, gap, g_.height, g_.length) *
+           conductivity / gap;
 }
 
 template <class T>
@@ -59,9 +62,9 @@ StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
     v.elenbaas = grashof_unit * gap2 * gap2 / g_.length;
     v.rayleigh_radius = grashof_unit * radius2 * radius2 / g_.length;
     v.rayleigh_length = grashof_unit * g_.length * g_.length * g_.length;
+    v.plate = correlations::nusselt_vertical_laminar(v.rayleigh_length, v.prandtl);
     v.channel_film = channel_coefficient(v, air.conductivity);
-    v.outer_film = correlations::nusselt_vertical_laminar(v.rayleigh_length, v.prandtl) *
-                   air.conductivity / g_.length;
+    v.outer_film = v.plate * air.conductivity / g_.length;
     const T black = correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(ambient));
     v.channel_radiation = black * exchange_ / wetted_;
     v.outer_radiation = material_.emissivity * black;
@@ -91,7 +94,7 @@ StillAirView<T> StillAirSink<T>::view(const T& base_rise) const {
 }
 
 template <class T>
-HeatPaths<T> StillAirSink<T>::paths(const StillAirView<T>& v, const T& base_rise) const {
+HeatPaths<T> StillAirSink<T>::heat(const StillAirView<T>& v, const T& base_rise) const {
     const double n = g_.fins;
     const T face = g_.height * g_.length;
     // Effective areas: each fin face counts at its fin's mean rise, base strips and rim at the
@@ -110,11 +113,6 @@ HeatPaths<T> StillAirSink<T>::paths(const StillAirView<T>& v, const T& base_rise
     q.radiation =
         (inside * v.channel_radiation + (outside + ends + rim_) * v.outer_radiation) * base_rise;
     return q;
-}
-
-template <class T>
-HeatPaths<T> StillAirSink<T>::shed(const T& base_rise) const {
-    return paths(view(base_rise), base_rise);
 }
 
 template class StillAirSink<double>;

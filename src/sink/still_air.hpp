@@ -26,6 +26,7 @@ struct StillAirView {
     T rayleigh_radius = T(0.0);   ///< channel number on the hydraulic radius [-]
     T rayleigh_length = T(0.0);   ///< outer faces, on L [-]
     T prandtl = T(0.0);           ///< [-]
+    T plate = T(0.0);             ///< Nusselt number of the outer faces, on L [-]
     T channel_film = T(0.0);      ///< convection in the channels [W/(m2 K)]
     T channel_radiation = T(0.0); ///< radiation per wetted channel area [W/(m2 K)]
     T outer_film = T(0.0);        ///< convection on outer faces [W/(m2 K)]
@@ -40,17 +41,19 @@ public:
     StillAirSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                  const Material& material, ChannelLaw law);
 
-    /// Heat by path at a base rise over the air [K] -> [W].
-    HeatPaths<T> shed(const T& base_rise) const;
-
-    /// What the laws saw at that base rise.
+    /// What the laws see at a base rise over the air [K].
     StillAirView<T> view(const T& base_rise) const;
+
+    /// Heat by path at that base rise [W].
+    HeatPaths<T> heat(const StillAirView<T>& v, const T& base_rise) const;
+
+    /// Nothing drives the air but its own heat [Pa].
+    T pressure_drop(const StillAirView<T>&, const T&) const { return T(0.0); }
 
 private:
     StillAirView<T> films(const T& wall_rise) const;
     T channel_coefficient(const StillAirView<T>& v, const T& conductivity) const;
     void efficiencies(StillAirView<T>& v) const;
-    HeatPaths<T> paths(const StillAirView<T>& v, const T& base_rise) const;
 
     Geometry<T> g_;
     Surroundings surroundings_;

@@ -76,6 +76,8 @@ TEST_CASE("natural convection") {
                  [](const auto& x) { return nusselt_uniform_flux_middle(x[0]); });
     check_law<3>("u channel", {{el, {2e-3, 2e-2}, {1e-2, 0.1}}},
                  [](const auto& x) { return nusselt_u_channel(x[0], x[1], x[2]); });
+    check_law<5>("fin channel", {{el, {5.0, 200.0}, {2e-3, 2e-2}, {1e-2, 0.1}, {0.05, 0.3}}},
+                 [](const auto& x) { return nusselt_fin_channel(x[0], x[1], x[2], x[3], x[4]); });
     check_law<2>("vertical laminar", {{ra, pr}},
                  [](const auto& x) { return nusselt_vertical_laminar(x[0], x[1]); });
     check_law<2>("vertical", {{ra, pr}},
