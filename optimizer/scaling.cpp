@@ -6,8 +6,7 @@
 namespace finwright::optimizer {
 
 double to_scaled(const Variable& v, double x) {
-    if (v.scale == Scale::logarithmic) return std::log(x);
-    return v.upper > v.lower ? (x - v.lower) / (v.upper - v.lower) : 0.0;
+    return v.scale == Scale::logarithmic ? std::log(x) : (x - v.lower) / (v.upper - v.lower);
 }
 
 double from_scaled(const Variable& v, double u) {
