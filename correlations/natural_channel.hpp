@@ -87,13 +87,13 @@ T nusselt_u_channel(const T& rayleigh_radius, const T& gap, const T& height) {
 /// (tests/data/reference/natural_cfd.csv) by least squares of the logarithm; tests/validation fits
 /// them again.
 struct FinChannelFit {
-    double opening = 1.5653;       ///< the front opening as a plate, over the single-plate law
-    double opening_power = 0.0959; ///< of H/L in that
+    double opening = 1.5642;       ///< the front opening as a plate, over the single-plate law
+    double opening_power = 0.0952; ///< of H/L in that
     double base_weight =
-        0.5493; ///< the base strip's share of the fins' film when layers are separate
-    double layer_excess = 0.0933;   ///< thick layers above the single-plate law
-    double sharpness = 1.2183;      ///< exponent of the composite at S = H ...
-    double sharpness_fall = 0.2424; ///< ... and its fall with ln(S/H)
+        0.5457; ///< the base strip's share of the fins' film when layers are separate
+    double layer_excess = 0.0945;   ///< thick layers above the single-plate law
+    double sharpness = 1.1926;      ///< exponent of the composite where a/(1 + a/8) = 1 ...
+    double sharpness_fall = 0.2536; ///< ... and its fall with the logarithm of that
 };
 
 /// Channel of a row of vertical fins, open below, above and in front [-]: Nu = h S/k on the wetted
@@ -105,7 +105,7 @@ struct FinChannelFit {
 ///   plain plate; layers    = f plate (S/L)(2 H + w S)/(2 H + S), f = 1 + e/(1 + (plate S/(5
 ///   L))^2): separate layers, the
 ///               single-plate law where they are thin;
-///   Nu = ((developed + opening)^-n + layers^-n)^(-1/n), n = n1 - n2 ln a.
+///   Nu = ((developed + opening)^-n + layers^-n)^(-1/n), n = n1 - n2 ln(a/(1 + a/8)).
 /// `plate` is the vertical plate's Nusselt number on L (Churchill & Chu 1975). Fitted over
 /// El 2.6..4500, a 0.08..1.7, L/S 3..61, air; cross-validated error in the passport.
 template <class T>
@@ -113,14 +113,13 @@ T nusselt_fin_channel(const T& el, const T& plate, const T& gap, const T& height
                       const FinChannelFit& fit = {}) {
     using std::exp, std::log;
     const T a = gap / height;
-    const T log_a = log(a);
     const T thin = plate * gap / length;
     const T developed = el / (24.0 * (1.0 + 0.5 * a) * (1.0 + 0.315 * a));
     const T opening =
         fit.opening * exp(fit.opening_power * log(height / length)) * thin * a / (2.0 + a);
     const T layers = (1.0 + fit.layer_excess / (1.0 + 0.04 * thin * thin)) * thin *
                      (2.0 * height + fit.base_weight * gap) / (2.0 * height + gap);
-    const T n = fit.sharpness - fit.sharpness_fall * log_a;
+    const T n = fit.sharpness - fit.sharpness_fall * log(a / (1.0 + 0.125 * a));
     const T dense = log(developed + opening), open = log(layers);
     return exp(-log(exp(-n * dense) + exp(-n * open)) / n);
 }
