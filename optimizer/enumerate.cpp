@@ -14,6 +14,8 @@ namespace {
 // Combinations are solved in blocks of this many, each from its neighbour's end; blocks start cold
 // and are what threads share out, so that the result does not depend on their number.
 constexpr std::size_t block = 8;
+constexpr std::size_t rough_starts = 2;  // of the problem's own, in the first pass
+constexpr double finalist_share = 0.3;   // of the contenders' margin
 constexpr double nearly_feasible = 0.05; // a violation the first model may be to blame for
 
 std::vector<std::vector<int>> combinations(std::span<const IntegerRange> ranges) {
@@ -80,6 +82,7 @@ std::vector<std::vector<double>> starts_after(const Problem& problem, const Outc
     auto starts = problem.starts();
     if (neighbour.keeps_limits() && neighbour.x.size() == problem.variables().size())
         starts.front() = neighbour.x;
+    starts.resize(std::min(starts.size(), rough_starts));
     return starts;
 }
 
@@ -130,7 +133,8 @@ void solve_roughly(std::vector<Candidate>& candidates,
     Settings once = rough(settings);
     const std::size_t blocks = (problems.size() + block - 1) / block;
     in_parallel(blocks, threads, [&](std::size_t b) {
-        candidates[b * block].outcome = minimise(*problems[b * block], once);
+        Restarted cold(*problems[b * block], starts_after(*problems[b * block], {}));
+        candidates[b * block].outcome = minimise(cold, once);
     });
     once.hopeless_above = best_objective(candidates) + settings.hopeless_margin;
     in_parallel(blocks, threads, [&](std::size_t b) {
@@ -139,6 +143,61 @@ void solve_roughly(std::vector<Candidate>& candidates,
             Restarted warm(*problems[i], starts_after(*problems[i], candidates[i - 1].outcome));
             candidates[i].outcome = minimise(warm, once);
         }
+    });
+}
+
+/// Where a combination ended, and where its neighbours did if they ended lower: it may have missed
+/// their valley.
+std::vector<std::vector<double>> starts_for(const std::vector<Candidate>& candidates,
+                                            std::size_t i) {
+    const Outcome& own = candidates[i].outcome;
+    std::vector<std::vector<double>> starts{own.x};
+    for (std::size_t j : {i - 1, i + 1}) {
+        if (j >= candidates.size()) continue;
+        const Outcome& neighbour = candidates[j].outcome;
+        const bool lower = !own.keeps_limits() || neighbour.objective < own.objective;
+        if (neighbour.keeps_limits() && lower && neighbour.x.size() == own.x.size())
+            starts.push_back(neighbour.x);
+    }
+    return starts;
+}
+
+/// The full treatment for the listed combinations.
+void refine(std::vector<Candidate>& candidates,
+            const std::vector<std::unique_ptr<Problem>>& problems,
+            const std::vector<std::size_t>& list, const Settings& settings, int threads) {
+    std::vector<std::vector<std::vector<double>>> starts;
+    for (std::size_t i : list)
+        starts.push_back(starts_for(candidates, i));
+    in_parallel(list.size(), threads, [&](std::size_t k) {
+        Candidate& c = candidates[list[k]];
+        Restarted resumed(*problems[list[k]], starts[k]);
+        const int before = c.outcome.evaluations;
+        c.outcome = minimise(resumed, settings);
+        c.outcome.evaluations += before;
+        c.refined = true;
+    });
+}
+
+/// Those within a hair of the best, once more from the problem's last own start: another valley may
+/// lie a little lower.
+void try_finalists(std::vector<Candidate>& candidates,
+                   const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
+                   int threads) {
+    const double limit = best_objective(candidates) + finalist_share * settings.contender_margin;
+    std::vector<std::size_t> list;
+    for (std::size_t i = 0; i < candidates.size(); ++i)
+        if (candidates[i].outcome.keeps_limits() && candidates[i].outcome.objective <= limit)
+            list.push_back(i);
+    in_parallel(list.size(), threads, [&](std::size_t k) {
+        Candidate& c = candidates[list[k]];
+        Restarted other(*problems[list[k]], {problems[list[k]]->starts().back()});
+        Outcome outcome = minimise(other, settings);
+        outcome.evaluations += c.outcome.evaluations;
+        if (outcome.keeps_limits() && outcome.objective < c.outcome.objective)
+            c.outcome = std::move(outcome);
+        else
+            c.outcome.evaluations = outcome.evaluations;
     });
 }
 
@@ -158,14 +217,8 @@ MixedOutcome enumerate(std::span<const IntegerRange> ranges, const Factory& fact
 
     for (auto list = contenders(mixed.candidates, settings); !list.empty();
          list = contenders(mixed.candidates, settings))
-        in_parallel(list.size(), threads, [&](std::size_t k) {
-            Candidate& c = mixed.candidates[list[k]];
-            Restarted resumed(*problems[list[k]], {c.outcome.x});
-            const int before = c.outcome.evaluations;
-            c.outcome = minimise(resumed, settings);
-            c.outcome.evaluations += before;
-            c.refined = true;
-        });
+        refine(mixed.candidates, problems, list, settings, threads);
+    try_finalists(mixed.candidates, problems, settings, threads);
 
     for (std::size_t i = 0; i < mixed.candidates.size(); ++i) {
         const Outcome& o = mixed.candidates[i].outcome;

@@ -18,6 +18,7 @@ using Point = std::vector<double>;
 
 constexpr double not_a_number_objective = 1e10; // what NLopt sees where the model has no number
 constexpr double not_a_number_constraint = 1e3;
+constexpr double within = 0.25; // share of the tolerance a solve may use; the rest is the model's
 constexpr int restarts = 3;
 constexpr double anywhere = 1e30;
 // How far from its centre a model is trusted, scaled: at first, and by what it shrinks from round
@@ -46,6 +47,7 @@ class Solve {
 public:
     Solve(Problem& problem, const Settings& settings, const Budget& budget)
         : problem_(problem), settings_(settings), budget_(budget),
+          tolerance_(within * settings.constraint_tolerance),
           at_(problem.variables().size(), problem.constraint_count()),
           x_(problem.variables().size()) {}
 
@@ -68,9 +70,8 @@ public:
         solver.set_upper_bounds(high);
         solver.set_min_objective(&Solve::objective, this);
         if (problem_.constraint_count() > 0)
-            solver.add_inequality_mconstraint(
-                &Solve::constraints, this,
-                Point(problem_.constraint_count(), settings_.constraint_tolerance));
+            solver.add_inequality_mconstraint(&Solve::constraints, this,
+                                              Point(problem_.constraint_count(), tolerance_));
         solver.set_ftol_abs(settings_.objective_tolerance);
         solver.set_xtol_abs(settings_.step_tolerance);
         solver.set_maxeval(settings_.evaluations);
@@ -114,8 +115,8 @@ private:
 
     void keep_if_better() {
         const double violation = largest(at_.constraints);
-        const bool holds = violation <= settings_.constraint_tolerance;
-        const bool held = !best_.empty() && best_violation_ <= settings_.constraint_tolerance;
+        const bool holds = violation <= tolerance_;
+        const bool held = !best_.empty() && best_violation_ <= tolerance_;
         const bool better = best_.empty() ||
                             (holds && (!held || at_.objective < best_objective_)) ||
                             (!holds && !held && violation < best_violation_);
@@ -178,6 +179,7 @@ private:
     Problem& problem_;
     const Settings& settings_;
     const Budget& budget_;
+    const double tolerance_;
     Evaluation at_;
     Point x_, u_, best_;
     double best_violation_ = 0.0, best_objective_ = 0.0;

@@ -36,7 +36,9 @@ DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
     const T free_area = double(g_.fins - 1) * gap * g_.height;
     DuctedAirView<T> v;
     v.film_temperature = surroundings_.air_temperature + 0.5 * base_rise;
-    const auto air = correlations::air_at(v.film_temperature, surroundings_.pressure);
+    const auto air =
+        correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
+                             surroundings_.pressure);
     v.volume_flow = volume_flow_;
     v.approach_velocity = volume_flow_ / (g_.width() * g_.height);
     v.channel_velocity = volume_flow_ / free_area;
@@ -72,7 +74,8 @@ template <class T>
 T DuctedSink<T>::pressure_drop(const DuctedAirView<T>& v, const T& base_rise) const {
     const T bulk_mean =
         surroundings_.air_temperature + 0.5 * heat(v, base_rise).channels / v.capacity_flow;
-    const auto air = correlations::air_at(bulk_mean, surroundings_.pressure);
+    const auto air = correlations::air_at(
+        correlations::clamp(bulk_mean, coldest_film, hottest_film), surroundings_.pressure);
     const T free_area = double(g_.fins - 1) * g_.mean_gap() * g_.height;
     const T mass_flux = mass_flow_ / free_area;
     const T head = 0.5 * mass_flux * mass_flux / air.density;

@@ -52,4 +52,8 @@ struct Duty {
 /// The duty a job states. Pressure follows from the altitude.
 Duty duty_of(const job::Job& job);
 
+/// Where air properties stop following the temperature, so that the balance of a hopeless sink
+/// still settles [K].
+inline constexpr double coldest_film = 150.0, hottest_film = 1000.0;
+
 } // namespace finwright::sink

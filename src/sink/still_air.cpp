@@ -53,7 +53,9 @@ StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
     StillAirView<T> v;
     v.wall_rise = wall_rise;
     v.film_temperature = ambient + 0.5 * wall_rise;
-    const auto air = correlations::air_at(v.film_temperature, surroundings_.pressure);
+    const auto air =
+        correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
+                             surroundings_.pressure);
     v.prandtl = air.prandtl();
     const T grashof_unit =
         gravity * air.expansion * wall_rise / (air.kinematic_viscosity() * air.diffusivity());

@@ -16,7 +16,7 @@ namespace {
 
 constexpr double tie_break = 1e-4; // weight of ln(metal) beside the aim
 // Change of a pad's rise by re-centring, over the whole rise, that no longer matters [-]
-constexpr double stands_still = 5e-7;
+constexpr double stands_still = 5e-6;
 constexpr double rounding_slack =
     2e-3; // what the centred spreading model may err near its centre [-]
 constexpr double feasible_tolerance = 1e-9;
@@ -315,12 +315,13 @@ bool SearchProblem::feasible(std::span<const double> dimensions) const {
 }
 
 std::vector<std::vector<double>> SearchProblem::starts() const {
-    std::vector<double> middle, open;
+    std::vector<double> middle, open, brief;
     for (const Variable& v : variables_) {
         middle.push_back(std::sqrt(v.lower * v.upper));
         open.push_back(v.name == dimension_name(Dimension::gap) ? v.upper : middle.back());
+        brief.push_back(v.name == dimension_name(Dimension::length) ? v.lower : middle.back());
     }
-    return {middle, open};
+    return {middle, open, brief};
 }
 
 } // namespace finwright::sizing

@@ -24,11 +24,11 @@ namespace {
 constexpr std::size_t alternatives_shown = 5;
 constexpr double binds = 1e-4; // d ln(aim) / d ln(bound) below this is not worth a line [-]
 
-/// A limit counts as kept to a millionth: a tenth of a millikelvin in a hundred. Rounded designs
+/// A limit counts as kept to a hundred-thousandth: a millikelvin in a hundred. Rounded designs
 /// are held to their limits more strictly still (SearchProblem::feasible).
 optimizer::Settings search_settings() {
     optimizer::Settings settings;
-    settings.constraint_tolerance = 1e-6;
+    settings.constraint_tolerance = 1e-5;
     settings.recentres = 12;
     settings.hopeless_margin = 0.2; // of ln(aim): a fifth heavier
     return settings;
