@@ -10,6 +10,7 @@
 namespace finwright::cli {
 
 int size_command(const JobCommand& command) {
+    if (command.json_file) refuse_same_file(*command.json_file, command.job_file);
     const job::Job job = job::read_job(command.job_file);
     const sizing::Sizing sizing = sizing::size(job);
     if (command.json_file)

@@ -26,9 +26,17 @@ bool written(const fs::path& path, const std::string& text) {
 
 } // namespace
 
+void refuse_same_file(const fs::path& target, const fs::path& source) {
+    std::error_code absent;
+    if (fs::equivalent(target, source, absent)) refuse(target, "it is the job file itself");
+}
+
 void write_whole(const fs::path& target, const std::string& text) {
     if (fs::is_directory(target)) refuse(target, "it is a folder");
-    fs::path temporary = target;
+    if (fs::exists(target) && !fs::is_regular_file(target))
+        refuse(target, "it is not a plain file");
+    const fs::path real = fs::exists(target) ? fs::canonical(target) : target;
+    fs::path temporary = real;
     temporary += fmt::format(".{}.part", ::getpid());
     if (!written(temporary, text)) {
         const std::string why = std::strerror(errno);
@@ -37,7 +45,7 @@ void write_whole(const fs::path& target, const std::string& text) {
         refuse(target, why);
     }
     std::error_code error;
-    fs::rename(temporary, target, error);
+    fs::rename(temporary, real, error);
     if (error) {
         std::error_code ignored_if_absent;
         fs::remove(temporary, ignored_if_absent);

@@ -11,8 +11,11 @@ struct UnwritableFile : std::runtime_error {
     using std::runtime_error::runtime_error;
 };
 
-/// Writes to a temporary name beside the target, then renames. Throws UnwritableFile, leaving
-/// nothing behind.
+/// Throws UnwritableFile where the result would replace the file it was made from.
+void refuse_same_file(const std::filesystem::path& target, const std::filesystem::path& source);
+
+/// Writes to a temporary name beside the target, then renames; a link is followed. Throws
+/// UnwritableFile, leaving nothing behind, also where the target is no plain file.
 void write_whole(const std::filesystem::path& target, const std::string& text);
 
 } // namespace finwright::cli

@@ -124,8 +124,12 @@ std::string law_evaluated(const Passport& law, const std::vector<std::string>& v
         out += fmt::format("  {} = {} {}{}\n", s.symbol, inputs[i], s.unit,
                            outside ? "   ! outside " + range_of(s) : "");
     }
-    return out + fmt::format("  {} = {:.9g} {}\n", law.result.symbol, law.evaluate(inputs),
-                             law.result.unit);
+    const double value = law.evaluate(inputs);
+    if (!std::isfinite(value))
+        throw WrongLawInput(fmt::format("{} gives no number for these inputs; its ranges stand in "
+                                        "finwright laws {}",
+                                        law.name, law.name));
+    return out + fmt::format("  {} = {:.9g} {}\n", law.result.symbol, value, law.result.unit);
 }
 
 } // namespace finwright::sheets

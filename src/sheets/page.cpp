@@ -5,6 +5,7 @@
 #include "src/sheets/numbers_text.hpp"
 #include "src/sheets/plain_units.hpp"
 #include "src/sheets/text_table.hpp"
+#include "src/sizing/broken_limits.hpp"
 #include <algorithm>
 #include <cmath>
 #include <fmt/format.h>
@@ -21,6 +22,7 @@ using sizing::Refusal;
 namespace {
 
 constexpr std::size_t page_width = 100;
+constexpr double least_share_worth_saying = 0.01; // of the power [-]
 constexpr std::size_t parts_beside =
     5; ///< columns of the budget before it wraps into another block
 
@@ -254,7 +256,7 @@ std::string laws_used(const Job& job, const Rating& rating) {
     return out;
 }
 
-/// Which part comes nearest to what it is allowed, and whether the stated target is met.
+/// Which part comes nearest to what it is allowed, and which limits the stated sink breaks.
 std::string standing(const Job& job, const Rating& rating) {
     std::string text;
     const sink::PartRating* nearest = nullptr;
@@ -266,10 +268,8 @@ std::string standing(const Job& job, const Rating& rating) {
         text = fmt::format("{} is nearest to what it is allowed: {} K {}.", nearest->name,
                            fixed(std::abs(left), 1), left < 0.0 ? "TOO HOT" : "left");
     }
-    if (const auto target = job.limits.sink_resistance)
-        text += fmt::format("{}The target of {} °C/W is {}.", text.empty() ? "" : " ",
-                            significant(*target, 3),
-                            rating.sink_resistance() > *target ? "MISSED" : "met");
+    for (const std::string& breach : sizing::broken_limits(job, rating))
+        text += fmt::format("{}LIMIT BROKEN: {}.", text.empty() ? "" : " ", breach);
     return text.empty() ? text : paragraph(text);
 }
 
@@ -282,9 +282,10 @@ std::string caution_list(const Job& job, const Rating& rating) {
 
 std::vector<std::string> levers(const Job& job, const Refusal& refusal) {
     std::vector<std::string> list;
-    list.push_back(
-        fmt::format("Fewer watts: this sink serves {} W instead of {} W, all parts in proportion.",
-                    significant(refusal.possible_power, 3), significant(job.total_power(), 3)));
+    if (refusal.possible_power > least_share_worth_saying * job.total_power())
+        list.push_back(fmt::format(
+            "Fewer watts: this sink serves {} W instead of {} W, all parts in proportion.",
+            significant(refusal.possible_power, 3), significant(job.total_power(), 3)));
     for (std::size_t i = 0; i < job.parts.size(); ++i) {
         const job::Part& part = job.parts[i];
         if (part.name == refusal.part && part.interface > 0.0)

@@ -30,15 +30,24 @@ Shown shown(Measure measure) {
         return {" g", 1e3, 10e-3, 0};
     case Measure::pressure:
         return {" Pa", 1.0, 1.0, 1};
+    case Measure::velocity:
+        return {" m/s", 1.0, 1.0, 1};
     case Measure::rise:
         return {" K", 1.0, 1.0, 1};
     }
     return {"", 1.0, 1.0, 1};
 }
 
+/// By how much a limit is eased in the text: the measure's step, or a tenth of it where that is a
+/// large part of the limit itself.
+double easing(const BindingLimit& limit) {
+    const double step = shown(limit.measure).step;
+    return step > 0.2 * limit.bound ? 0.1 * step : step;
+}
+
 std::string eased_by(const BindingLimit& limit) {
     const Shown s = shown(limit.measure);
-    return fmt::format("{}{} {}", significant(s.step * s.factor, 2), s.unit,
+    return fmt::format("{}{} {}", significant(easing(limit) * s.factor, 2), s.unit,
                        limit.sense == Sense::at_most ? "more" : "less");
 }
 
@@ -106,12 +115,12 @@ std::string bound_text(const BindingLimit& limit) {
 
 std::string price_text(const BindingLimit& limit, Aim aim) {
     return fmt::format("{} saves {}", eased_by(limit),
-                       aim_change(aim, limit.worth * shown(limit.measure).step));
+                       aim_change(aim, limit.worth * easing(limit)));
 }
 
 std::string price_in_kelvin(const BindingLimit& limit) {
     return fmt::format("{} gains {} K", eased_by(limit),
-                       significant(limit.worth * shown(limit.measure).step, 2));
+                       significant(limit.worth * easing(limit), 2));
 }
 
 } // namespace finwright::sheets

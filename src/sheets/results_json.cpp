@@ -2,6 +2,7 @@
 
 #include "src/sheets/cautions.hpp"
 #include "src/sheets/plain_units.hpp"
+#include "src/sizing/broken_limits.hpp"
 #include <cmath>
 #include <nlohmann/json.hpp>
 
@@ -164,6 +165,7 @@ std::string results_json(const job::Job& job, const sizing::Answer& answer) {
 
 std::string results_json(const job::Job& job, const sink::Rating& rating) {
     return finished({{"result", "rated"},
+                     {"broken_limits", sizing::broken_limits(job, rating)},
                      {"job", job_json(job)},
                      {"geometry", geometry_json(rating.geometry)},
                      {"rating", rating_json(rating)},

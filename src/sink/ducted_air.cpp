@@ -87,6 +87,15 @@ T DuctedSink<T>::pressure_drop(const DuctedAirView<T>& v, const T& base_rise) co
             correlations::exit_loss(v.free_area_ratio, correlations::momentum_factor(v.reynolds)));
 }
 
+template <class T>
+T channel_velocity(const Geometry<T>& g, const Surroundings& surroundings) {
+    return stated_flow(g, surroundings) / (double(g.fins - 1) * g.mean_gap() * g.height);
+}
+
+template double channel_velocity(const Geometry<double>&, const Surroundings&);
+template correlations::Dual<5> channel_velocity(const Geometry<correlations::Dual<5>>&,
+                                                const Surroundings&);
+
 template class DuctedSink<double>;
 template class DuctedSink<correlations::Dual<6>>;
 

@@ -32,6 +32,10 @@ struct DuctedAirView {
     T transfer_units = T(0.0);     ///< UA/(m cp) [-]
 };
 
+/// Stated flow over the area free between the fins, at inlet density [m/s].
+template <class T>
+T channel_velocity(const Geometry<T>& g, const Surroundings& surroundings);
+
 template <class T>
 class DuctedSink {
 public:

@@ -17,6 +17,8 @@ namespace {
 constexpr double widest = 0.6, longest = 1.0, highest = 0.25, thickest_fin = 0.02,
                  thickest_base = 0.05, lowest_fin = 1e-3;
 constexpr int most_fins = 400;
+// Beyond what fans give, and where the laws for incompressible flow begin to err. [m/s]
+constexpr double fastest_channel = 30.0;
 // The width limit itself is a constraint; rooms reach a little beyond it so as not to state it
 // twice. [-]
 constexpr double beyond_width = 1.1;
@@ -148,6 +150,9 @@ void add_duty_limits(DesignSpace& space, const Job& job) {
     if (job.limits.pressure_drop)
         space.limits.push_back(
             {LimitKind::pressure_drop, *job.limits.pressure_drop, "pressure drop", "job"});
+    if (std::holds_alternative<job::DuctedAir>(job.air.state))
+        space.limits.push_back({LimitKind::channel_velocity, fastest_channel,
+                                "air velocity between the fins", "search range"});
     const auto allowed = allowed_pad_rises(job);
     for (std::size_t i = 0; i < allowed.size(); ++i) {
         if (!allowed[i]) continue;

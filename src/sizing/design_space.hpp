@@ -39,6 +39,7 @@ enum class LimitKind {
     circle,
     mass,
     pressure_drop,
+    channel_velocity,
     pad_rise,
     worst_pad ///< pad rise held below the worst-pad variable times its bound
 };

@@ -1,5 +1,6 @@
 #include "src/sizing/search_problem.hpp"
 
+#include "src/sink/ducted_air.hpp"
 #include "src/sink/placing.hpp"
 #include "src/sink/rating.hpp"
 #include <algorithm>
@@ -20,6 +21,7 @@ constexpr double stands_still = 5e-6;
 constexpr double rounding_slack =
     2e-3; // what the centred spreading model may err near its centre [-]
 constexpr double feasible_tolerance = 1e-9;
+constexpr double broken_tolerance = 1e-4;                 // what is worth naming [-]
 constexpr double least_ratio = 1e-4, largest_ratio = 1e4; // worst pad over its reference [-]
 
 const char* dimension_name(Dimension d) {
@@ -92,6 +94,8 @@ T constraint(const Limit& limit, const Measured<T>& m) {
         return at_most(m.duty.material.density * g.metal());
     case LimitKind::pressure_drop:
         return at_most(m.balance.pressure_drop);
+    case LimitKind::channel_velocity:
+        return at_most(sink::channel_velocity(g, m.duty.surroundings));
     case LimitKind::pad_rise:
         return at_most(m.pad_rises[limit.part]);
     case LimitKind::worst_pad:
@@ -312,6 +316,17 @@ bool SearchProblem::feasible(std::span<const double> dimensions) const {
     return std::none_of(space_.limits.begin(), space_.limits.end(), [&](const Limit& limit) {
         return limit.kind != LimitKind::worst_pad && constraint(limit, m) > feasible_tolerance;
     });
+}
+
+std::vector<const Limit*> SearchProblem::broken(std::span<const double> dimensions) const {
+    const Geometry<double> g = geometry(dimensions);
+    const sink::Balance<double> balance = sink::balance(g, duty_);
+    const Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance.base_rise), 1.0};
+    std::vector<const Limit*> list;
+    for (const Limit& limit : space_.limits)
+        if (limit.kind != LimitKind::worst_pad && constraint(limit, m) > broken_tolerance)
+            list.push_back(&limit);
+    return list;
 }
 
 std::vector<std::vector<double>> SearchProblem::starts() const {

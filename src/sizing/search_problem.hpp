@@ -46,6 +46,8 @@ public:
     double quick_objective(std::span<const double> dimensions) const;
     /// Whether every limit holds, or is missed by less than the centred spreading model may err.
     bool quickly_feasible(std::span<const double> dimensions) const;
+    /// The limits this point breaks, other than the worst pad's.
+    std::vector<const Limit*> broken(std::span<const double> dimensions) const;
     /// Whether every limit holds by the exact model.
     bool feasible(std::span<const double> dimensions) const;
 

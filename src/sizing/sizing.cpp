@@ -72,6 +72,23 @@ public:
         return list;
     }
 
+    /// The candidate that breaks its limits least.
+    const Candidate* least_violated() const {
+        const auto& all = mixed_.candidates;
+        const auto least =
+            std::min_element(all.begin(), all.end(), [](const auto& a, const auto& b) {
+                return a.outcome.worst_violation < b.outcome.worst_violation;
+            });
+        return least == all.end() ? nullptr : &*least;
+    }
+
+    /// A candidate the search left rough, given the full treatment.
+    Candidate refined(const Candidate& c) const {
+        if (c.refined) return c;
+        const auto p = problem(c.integers[0]);
+        return {c.integers, optimizer::minimise(*p, search_settings()), true};
+    }
+
     /// The problem of a candidate, its spreading centred where the search ended.
     std::unique_ptr<SearchProblem> settled(const Candidate& c) const {
         auto p = problem(c.integers[0]);
@@ -131,6 +148,8 @@ Measure measure_of(LimitKind kind) {
         return Measure::mass;
     case LimitKind::pressure_drop:
         return Measure::pressure;
+    case LimitKind::channel_velocity:
+        return Measure::velocity;
     case LimitKind::pad_rise:
     case LimitKind::worst_pad:
         return Measure::rise;
@@ -185,7 +204,7 @@ std::vector<BindingLimit> binding_limits(const SearchProblem& problem, const Out
 /// Rounds fin counts in the order of their unrounded aim until no unrounded one can beat the list.
 struct RoundedDesign {
     Design design;
-    const Candidate* candidate;
+    Candidate candidate;
     double objective;
 };
 
@@ -197,12 +216,14 @@ std::vector<RoundedDesign> rounded_designs(const Search& search, const job::Job&
                                                     : designs[alternatives_shown].objective;
     };
     const Aimed aim{job.sink.aim};
-    for (const Candidate* c : search.feasible()) {
-        if (c->outcome.objective >= worst_kept()) break;
-        const auto problem = search.settled(*c);
-        const auto rounded = round_design(*problem, c->outcome.x, worst_kept());
+    for (const Candidate* rough : search.feasible()) {
+        if (rough->outcome.objective >= worst_kept()) break;
+        const Candidate c = search.refined(*rough);
+        if (!c.outcome.keeps_limits()) continue;
+        const auto problem = search.settled(c);
+        const auto rounded = round_design(*problem, c.outcome.x, worst_kept());
         if (!rounded) continue;
-        const Geometry<double> optimum = problem->geometry(c->outcome.x);
+        const Geometry<double> optimum = problem->geometry(c.outcome.x);
         designs.push_back(
             {{optimum, aim.of(optimum, duty), rounded->geometry, aim.of(rounded->geometry, duty)},
              c,
@@ -240,9 +261,25 @@ Refusal no_room(const job::Job& job) {
     Refusal refusal;
     refusal.reason = fmt::format(
         "No fin count fits: the space, the dimensions stated under sink and what {} can make leave "
-        "no "
-        "geometry at all. Give more width, height or length, or choose another process.",
+        "no geometry at all. Give more width, height or length, or choose another process.",
         job.sink.process.name);
+    return refusal;
+}
+
+/// Limits that have nothing to do with heat shut every design out: names those the nearest one
+/// breaks.
+Refusal shut_out(const Search& search, const job::Job& job) {
+    const Candidate* nearest = search.least_violated();
+    if (!nearest) return no_room(job);
+    const auto problem = search.settled(*nearest);
+    std::string names;
+    for (const Limit* limit : problem->broken(nearest->outcome.x))
+        names += fmt::format("{}{} ({})", names.empty() ? "" : ", ", limit->name, limit->reason);
+    Refusal refusal;
+    refusal.reason = fmt::format("Whatever the temperatures, no design keeps all the other limits "
+                                 "together. The one that comes "
+                                 "nearest ({} fins) still breaks: {}. Ease one of them.",
+                                 nearest->integers[0], names.empty() ? "a limit by a hair" : names);
     return refusal;
 }
 
@@ -261,7 +298,7 @@ Refusal no_lattice_point(const Candidate* nearest) {
 Refusal refusal_of(const job::Job& job, const sink::Duty& duty, const SearchOptions& options) {
     const Search search(job, duty, Pursuit::excess, options);
     const auto nearest = search.feasible();
-    if (nearest.empty()) return no_room(job);
+    if (nearest.empty()) return shut_out(search, job);
     const auto problem = search.settled(*nearest.front());
     const Outcome& outcome = nearest.front()->outcome;
     const Geometry<double> g = problem->geometry(outcome.x);
@@ -326,9 +363,9 @@ Sizing size(const job::Job& job, const SearchOptions& options) {
     Answer answer;
     answer.design = designs.front().design;
     answer.rating = sink::rate(answer.design.rounded, duty);
-    const auto problem = search.settled(*designs.front().candidate);
+    const auto problem = search.settled(designs.front().candidate);
     answer.binding =
-        binding_limits(*problem, designs.front().candidate->outcome, answer.design.optimum_aim);
+        binding_limits(*problem, designs.front().candidate.outcome, answer.design.optimum_aim);
     for (std::size_t i = 1; i < designs.size() && i <= alternatives_shown; ++i)
         answer.alternatives.push_back(designs[i].design);
     const Candidate& least = *search.feasible().front();

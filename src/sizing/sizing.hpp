@@ -12,7 +12,7 @@
 namespace finwright::sizing {
 
 enum class Sense { at_most, at_least };
-enum class Measure { length, ratio, mass, pressure, rise };
+enum class Measure { length, ratio, mass, pressure, velocity, rise };
 
 /// A limit the design rests on, and what easing it would buy.
 struct BindingLimit {

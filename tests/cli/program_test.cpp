@@ -89,6 +89,28 @@ TEST_CASE("a full disk is an error with its own exit code") {
     CHECK(run_program("laws > /dev/full").exit_code == 5);
 }
 
+TEST_CASE("JSON never replaces a device, a link or the job itself") {
+    const Folder folder;
+    const auto job = folder.file("job.yaml", demo());
+    const auto before = text_of(job);
+    CHECK(run_program("size " + job + " --json " + job).exit_code == 5);
+    CHECK(text_of(job) == before);
+    CHECK(run_program("size " + job + " --json /dev/null").exit_code == 5);
+    const auto real = folder.file("real.json", "old");
+    fs::create_symlink(real, folder.path / "link.json");
+    CHECK(
+        run_program("size " + job + " --json " + (folder.path / "link.json").string()).exit_code ==
+        0);
+    CHECK(fs::is_symlink(folder.path / "link.json"));
+    CHECK(Json::parse(text_of(real)).contains("geometry"));
+}
+
+TEST_CASE("a law that gives no number says so") {
+    const auto run = run_program("laws elenbaas el=-3");
+    CHECK(run.exit_code == 2);
+    CHECK(run.errors.find("no number") != std::string::npos);
+}
+
 TEST_CASE("JSON: SI numbers that agree with each other and with the page") {
     const Folder folder;
     const auto target = (folder.path / "r.json").string();

@@ -3,11 +3,13 @@
 
 #include <array>
 #include <cstdio>
+#include <cstdlib>
 #include <fstream>
 #include <sstream>
 #include <stdexcept>
 #include <string>
 #include <sys/wait.h>
+#include <unistd.h>
 
 namespace finwright::tests {
 
@@ -25,7 +27,9 @@ inline std::string text_of(const std::string& path) {
 }
 
 inline Run run_program(const std::string& arguments) {
-    const std::string errors = std::tmpnam(nullptr);
+    char name[] = "/tmp/finwright_errors_XXXXXX";
+    close(mkstemp(name));
+    const std::string errors = name;
     const std::string command = std::string("cd '") + SOURCE_DIR + "' && '" + PROGRAM + "' " +
                                 arguments + " 2>'" + errors + "'";
     std::FILE* pipe = popen(command.c_str(), "r");

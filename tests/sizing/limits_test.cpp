@@ -1,5 +1,6 @@
 // Aims, fixed and bounded dimensions, binding limits and what easing them buys, refusals.
 #include "src/job/read_job.hpp"
+#include "src/sizing/broken_limits.hpp"
 #include "src/sizing/sizing.hpp"
 #include "src/sizing/stated_sink.hpp"
 #include "tests/near.hpp"
@@ -151,4 +152,40 @@ TEST_CASE("a rating names the dimension that is still open") {
     job::Job job = pump();
     CHECK_THROWS_WITH_AS(sizing::stated_sink(job), doctest::Contains("fins is still open"),
                          job::InputError);
+}
+
+TEST_CASE("limits that shut every design out whatever the temperatures are named") {
+    job::Job job = pump();
+    job.limits.mass = 5e-3;
+    auto sizing = sizing::size(job);
+    REQUIRE(std::holds_alternative<sizing::Refusal>(sizing));
+    CHECK(std::get<sizing::Refusal>(sizing).reason.find("mass (job)") != std::string::npos);
+}
+
+TEST_CASE("a flow without a pressure limit still gives air a fan could move") {
+    job::Job job = bench();
+    job.limits.pressure_drop.reset();
+    job.air.state = job::DuctedAir{std::nullopt, 40.0 / 3600.0};
+    const auto answer = answered(job);
+    const auto& view = std::get<sink::DuctedAirView<double>>(answer.rating.view);
+    CHECK(view.channel_velocity <= 30.0 + 1e-6);
+}
+
+TEST_CASE("a rating names every limit its sink breaks") {
+    job::Job job = bench();
+    const auto g = answered(job).design.rounded;
+    CHECK(sizing::broken_limits(job, sink::rate(g, sink::duty_of(job))).empty());
+    job.limits.mass = 0.1;
+    job.limits.pressure_drop = 1.0;
+    job.limits.space.width = 50e-3;
+    job.sink.process.smallest_gap = 10e-3;
+    CHECK(sizing::broken_limits(job, sink::rate(g, sink::duty_of(job))).size() == 4);
+}
+
+TEST_CASE("every alternative is optimised to the end: fixing its fin count finds nothing better") {
+    job::Job job = pump();
+    for (const auto& alternative : answered(job).alternatives) {
+        job.sink.fins = fixed(alternative.rounded.fins);
+        CHECK(alternative.optimum_aim <= answered(job).least_aim * (1.0 + 1e-3));
+    }
 }
