@@ -79,7 +79,7 @@ Air read_air(const Document& d, const TreeNode& node) {
     m.only({"state", "temperature", "altitude", "velocity", "flow", "channel_law"});
     Air air;
     air.temperature = m.number("temperature", quantity::temperature);
-    if (air.temperature < 223.15 || air.temperature > 473.15)
+    if (air.temperature < 223.149 || air.temperature > 473.151)
         m.fail("temperature", "the air temperature lies outside -50 to 200 degC",
                "check the unit: degC, degF or K");
     air.altitude = m.optional_number("altitude", quantity::length).value_or(0.0);

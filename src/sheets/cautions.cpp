@@ -16,8 +16,10 @@ constexpr double touch_long = 273.15 + 43.0,
 constexpr double gap_that_clogs = 2e-3;       // unfiltered air [m]
 constexpr double heavy = 0.4;                 // for leads to carry [kg]
 constexpr double sharp = 1e-3;                // fin edge [m]
-constexpr double worn_interface = 1.5;        // end of life, common practice [-]
-constexpr double clogged_flow = 0.7;          // filter loaded, common practice [-]
+constexpr double beyond_reading =
+    273.15 + 250.0;                    // a figure above it would say more than is known [K]
+constexpr double worn_interface = 1.5; // end of life, common practice [-]
+constexpr double clogged_flow = 0.7;   // filter loaded, common practice [-]
 
 double least_headroom(const Rating& rating) {
     double least = std::numeric_limits<double>::infinity();
@@ -31,6 +33,8 @@ std::string hottest_junction(const Rating& rating) {
         rating.parts.begin(), rating.parts.end(), [](const auto& a, const auto& b) {
             return a.junction_temperature < b.junction_temperature;
         });
+    if (hottest->junction_temperature > beyond_reading)
+        return fmt::format("{} far beyond 250 °C", hottest->name);
     return fmt::format("{} at {} °C", hottest->name, celsius(hottest->junction_temperature, 0));
 }
 

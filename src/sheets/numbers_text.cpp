@@ -35,6 +35,17 @@ std::string percent(double share, int decimals) {
     return fixed(share * 100.0, decimals);
 }
 
+std::string dimension(double metres, double step_metres) {
+    constexpr double printed_exactly = 5e-8; // [mm]
+    int decimals = decimals_for_step(step_metres);
+    for (; decimals < 3; ++decimals) {
+        const double scale = std::pow(10.0, decimals);
+        if (std::abs(std::round(metres * 1e3 * scale) / scale - metres * 1e3) < printed_exactly)
+            break;
+    }
+    return millimetres(metres, decimals);
+}
+
 int decimals_for_step(double step_metres) {
     for (int decimals = 1; decimals < 4; ++decimals) {
         const double scaled = step_metres * 1e3 * std::pow(10.0, decimals);

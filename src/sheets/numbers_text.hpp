@@ -12,6 +12,10 @@ std::string significant(double value, int digits);        ///< plain decimal, no
 std::string grams(double kilograms);                      ///< three digits or the whole gram
 std::string percent(double share, int decimals = 0);      ///< "34"
 
+/// A dimension in millimetres with the decimals its step asks for, or up to three where it is no
+/// multiple.
+std::string dimension(double metres, double step_metres);
+
 /// Decimals a dimension needs so that a multiple of the shop's step prints exactly, 1 to 4 [-]
 int decimals_for_step(double step_metres);
 

@@ -108,7 +108,7 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     const job::Steps& steps = job.sink.steps;
     TextTable table;
     table.left(3);
-    const auto mm = [](double v, double step) { return millimetres(v, decimals_for_step(step)); };
+    const auto mm = [](double v, double step) { return dimension(v, step); };
     table.row({"fins", fmt::format("{}", g.fins), "", "N"});
     table.row({"fin height off the base", mm(g.height, steps.fin_height), "mm", "H"});
     if (g.draft_tangent > 0.0) {
@@ -118,8 +118,7 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     } else {
         table.row({"fin thickness", mm(g.thickness, steps.fin_thickness), "mm", "t"});
     }
-    table.row({g.draft_tangent > 0.0 ? "gap at the root" : "gap",
-               job.sink.width.fixed() ? millimetres(g.gap, 3) : mm(g.gap, steps.gap), "mm", "S"});
+    table.row({g.draft_tangent > 0.0 ? "gap at the root" : "gap", mm(g.gap, steps.gap), "mm", "S"});
     table.row({"base thickness", mm(g.base, steps.base_thickness), "mm", "tb"});
     table.row({"width across the fins", mm(g.width(), std::min(steps.gap, steps.fin_thickness)),
                "mm", "W"});
@@ -153,7 +152,13 @@ std::string key_line(const Rating& rating, const Job& job) {
             significant(rating.pressure_drop, 3), significant(view.channel_velocity, 3),
             significant(view.volume_flow * 3600.0, 3), celsius(rating.outlet_temperature()));
     }
-    return paragraph(text);
+    std::string page = paragraph(text);
+    if (!std::holds_alternative<job::StillAir>(job.air.state))
+        page += paragraph(fmt::format(
+            "The duct is taken to close around the fins: {} x {} mm. Air that can pass beside them "
+            "is lost to them and not counted here.",
+            millimetres(rating.geometry.width()), millimetres(rating.geometry.height)));
+    return page;
 }
 
 std::string heat_split(const Rating& rating) {
@@ -288,15 +293,17 @@ std::vector<std::string> levers(const Job& job, const Refusal& refusal) {
             significant(refusal.possible_power, 3), significant(job.total_power(), 3)));
     for (std::size_t i = 0; i < job.parts.size(); ++i) {
         const job::Part& part = job.parts[i];
-        if (part.name == refusal.part && part.interface > 0.0)
+        if (part.name == refusal.part && part.interface > 0.0 && refusal.closest &&
+            refusal.closest->parts[i].headroom().value_or(0.0) < 0.0)
             list.push_back(
                 fmt::format("A better interface: {} loses {} K in it; halving it gains {} K.",
                             part.name, fixed(part.interface * part.power, 1),
                             fixed(0.5 * part.interface * part.power, 1)));
     }
     for (const BindingLimit& limit : refusal.binding)
-        list.push_back(fmt::format("More room: {} {}: {}.", limit.name, bound_text(limit),
-                                   price_in_kelvin(limit)));
+        if (limit.reason != "search range")
+            list.push_back(fmt::format("Ease a limit: {} {}: {}.", limit.name, bound_text(limit),
+                                       price_in_kelvin(limit)));
     if (std::holds_alternative<job::StillAir>(job.air.state))
         list.push_back("Moving air: state it as ducted with a velocity or a flow and size again.");
     else
@@ -390,8 +397,14 @@ std::string refusal_page(const Job& job, const Refusal& refusal) {
         title_lines(job) + heading("Not possible as stated") + paragraph(refusal.reason);
     if (!refusal.closest) return out;
     const Rating& closest = *refusal.closest;
-    out += paragraph(fmt::format("{} is {} K too hot on the sink that comes nearest:", refusal.part,
-                                 fixed(refusal.shortfall, 1)));
+    if (const auto target = job.limits.sink_resistance;
+        target && closest.sink_resistance() > *target)
+        out += paragraph(fmt::format("The nearest sink has {} °C/W, the target is {} °C/W.",
+                                     significant(closest.sink_resistance(), 3),
+                                     significant(*target, 3)));
+    out += paragraph(fmt::format(
+        "The pad of {} is {} K hotter than it may be on the sink that comes nearest:", refusal.part,
+        fixed(refusal.shortfall, 1)));
     out += key_line(closest, job) + dimension_table(job, closest.geometry) + budget(job, closest);
     out += heading("What is left to try");
     for (const std::string& lever : levers(job, refusal))

@@ -1,5 +1,6 @@
 #include "src/sheets/results_json.hpp"
 
+#include "correlations/registry.hpp"
 #include "src/sheets/cautions.hpp"
 #include "src/sheets/plain_units.hpp"
 #include "src/sizing/broken_limits.hpp"
@@ -71,12 +72,22 @@ Json view_json(const sink::DuctedAirView<double>& v) {
             {"transfer_units", v.transfer_units}};
 }
 
+/// Inputs as "symbol unit": value, in the order of the passport.
+Json inputs_json(const sink::LawUse& use) {
+    const auto* law = correlations::find_passport(use.passport);
+    Json inputs = Json::object();
+    for (std::size_t i = 0; i < use.inputs.size(); ++i)
+        inputs[std::string(law->inputs[i].symbol) + " " + std::string(law->inputs[i].unit)] =
+            use.inputs[i];
+    return inputs;
+}
+
 Json laws_json(const std::vector<sink::LawUse>& laws) {
     Json list = Json::array();
     for (const auto& use : laws)
         list.push_back({{"law", use.passport},
                         {"role", use.role},
-                        {"inputs", use.inputs},
+                        {"inputs", inputs_json(use)},
                         {"outside_range", use.ranges_left()}});
     return list;
 }
@@ -105,6 +116,64 @@ Json rating_json(const sink::Rating& r) {
             {"laws", laws_json(r.laws)}};
 }
 
+const char* si_unit(sizing::Measure measure) {
+    switch (measure) {
+    case sizing::Measure::length:
+        return "m";
+    case sizing::Measure::ratio:
+        return "1";
+    case sizing::Measure::mass:
+        return "kg";
+    case sizing::Measure::pressure:
+        return "Pa";
+    case sizing::Measure::velocity:
+        return "m/s";
+    case sizing::Measure::rise:
+        return "K";
+    }
+    return "";
+}
+
+const char* si_unit(job::Aim aim) {
+    switch (aim) {
+    case job::Aim::mass:
+        return "kg";
+    case job::Aim::volume:
+        return "m3";
+    case job::Aim::height:
+        return "m";
+    case job::Aim::footprint:
+        return "m2";
+    case job::Aim::resistance:
+        return "K/W";
+    case job::Aim::pressure_drop:
+        return "Pa";
+    }
+    return "";
+}
+
+Json parts_json(const job::Job& job) {
+    Json list = Json::array();
+    for (const job::Part& part : job.parts)
+        list.push_back({{"name", part.name},
+                        {"power_W", part.power},
+                        {"junction_limit_K", optional_json(part.junction_limit)},
+                        {"junction_to_case_K_W", part.junction_to_case},
+                        {"interface_K_W", part.interface},
+                        {"pad_across_m", part.pad_across},
+                        {"pad_along_m", part.pad_along}});
+    return list;
+}
+
+Json limits_json(const job::Limits& limits) {
+    return {{"sink_resistance_K_W", optional_json(limits.sink_resistance)},
+            {"mass_kg", optional_json(limits.mass)},
+            {"pressure_drop_Pa", optional_json(limits.pressure_drop)},
+            {"space_width_m", optional_json(limits.space.width)},
+            {"space_height_m", optional_json(limits.space.height)},
+            {"space_length_m", optional_json(limits.space.length)}};
+}
+
 Json job_json(const job::Job& job) {
     return {{"title", job.title},
             {"file", job.file},
@@ -119,7 +188,10 @@ Json job_json(const job::Job& job) {
             {"density_kg_m3", job.sink.alloy.density},
             {"finish", job.sink.finish.name},
             {"emissivity", job.sink.finish.emissivity},
-            {"aim", aim_name(job.sink.aim)}};
+            {"aim", aim_name(job.sink.aim)},
+            {"aim_unit", si_unit(job.sink.aim)},
+            {"parts", parts_json(job)},
+            {"limits", limits_json(job.limits)}};
 }
 
 Json binding_json(const std::vector<sizing::BindingLimit>& binding, const char* worth_key) {
@@ -128,7 +200,8 @@ Json binding_json(const std::vector<sizing::BindingLimit>& binding, const char* 
         list.push_back({{"name", b.name},
                         {"reason", b.reason},
                         {"sense", b.sense == sizing::Sense::at_most ? "at most" : "at least"},
-                        {"bound_SI", b.bound},
+                        {"bound", b.bound},
+                        {"bound_unit", si_unit(b.measure)},
                         {worth_key, b.worth}});
     return list;
 }
