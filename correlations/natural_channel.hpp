@@ -96,8 +96,8 @@ struct FinChannelFit {
     double sharpness_fall = 0.2536; ///< ... and its fall with the logarithm of that
 };
 
-/// Channel of a row of vertical fins, open below, above and in front [-]: Nu = h S/k on the wetted
-/// area, fins and base at one temperature. Composite of this project over published limits:
+/// Channel of a row of vertical fins, open below, above and in front. Composite of this project
+/// over published limits, Nu = h S/k on the wetted area, fins and base at one temperature [-]:
 ///   developed = El/(24 (1 + a/2)(1 + 0.315 a)), a = S/H: plates (Elenbaas 1942) carrying the base
 ///   strip, slowed
 ///               by the base as a half duct is (Shah & London 1978);
@@ -107,21 +107,43 @@ struct FinChannelFit {
 ///               single-plate law where they are thin;
 ///   Nu = ((developed + opening)^-n + layers^-n)^(-1/n), n = n1 - n2 ln(a/(1 + a/8)).
 /// `plate` is the vertical plate's Nusselt number on L (Churchill & Chu 1975). Fitted over
-/// El 2.6..4500, a 0.08..1.7, L/S 3..61, air; cross-validated error in the passport.
+/// El 2.6..4500, a 0.08..1.7, L/S 3..61, air; cross-validated error in the passport. What the
+/// geometry alone decides is worked out once.
+template <class T>
+class FinChannel {
+public:
+    FinChannel() = default;
+    FinChannel(const T& gap, const T& height, const T& length, const FinChannelFit& fit = {})
+        : layer_excess_(fit.layer_excess) {
+        using std::exp, std::log;
+        const T a = gap / height;
+        slenderness_ = gap / length;
+        developed_ = 1.0 / (24.0 * (1.0 + 0.5 * a) * (1.0 + 0.315 * a));
+        opening_ = fit.opening * exp(fit.opening_power * log(height / length)) * a / (2.0 + a);
+        layers_ = (2.0 * height + fit.base_weight * gap) / (2.0 * height + gap);
+        sharpness_ = fit.sharpness - fit.sharpness_fall * log(a / (1.0 + 0.125 * a));
+    }
+
+    /// At the channel's Elenbaas number and the plate's Nusselt number [-].
+    T nusselt(const T& el, const T& plate) const {
+        using std::exp, std::log, std::log1p;
+        const T thin = plate * slenderness_;
+        const T dense = developed_ * el + opening_ * thin;
+        const T layers = (1.0 + layer_excess_ / (1.0 + 0.04 * thin * thin)) * thin * layers_;
+        const T ratio = exp(sharpness_ * log(layers / dense));
+        return layers * exp(-log1p(ratio) / sharpness_);
+    }
+
+private:
+    double layer_excess_ = 0.0;
+    T slenderness_, developed_, opening_, layers_, sharpness_;
+};
+
+/// FinChannel for one use [-].
 template <class T>
 T nusselt_fin_channel(const T& el, const T& plate, const T& gap, const T& height, const T& length,
                       const FinChannelFit& fit = {}) {
-    using std::exp, std::log;
-    const T a = gap / height;
-    const T thin = plate * gap / length;
-    const T developed = el / (24.0 * (1.0 + 0.5 * a) * (1.0 + 0.315 * a));
-    const T opening =
-        fit.opening * exp(fit.opening_power * log(height / length)) * thin * a / (2.0 + a);
-    const T layers = (1.0 + fit.layer_excess / (1.0 + 0.04 * thin * thin)) * thin *
-                     (2.0 * height + fit.base_weight * gap) / (2.0 * height + gap);
-    const T n = fit.sharpness - fit.sharpness_fall * log(a / (1.0 + 0.125 * a));
-    const T dense = log(developed + opening), open = log(layers);
-    return exp(-log(exp(-n * dense) + exp(-n * open)) / n);
+    return FinChannel<T>(gap, height, length, fit).nusselt(el, plate);
 }
 
 } // namespace finwright::correlations

@@ -1,7 +1,6 @@
 #include "src/sink/still_air.hpp"
 
 #include "correlations/air.hpp"
-#include "correlations/natural_channel.hpp"
 #include "correlations/natural_face.hpp"
 #include "correlations/numbers/dual.hpp"
 #include "correlations/radiation.hpp"
@@ -17,7 +16,8 @@ constexpr int passes = 3;
 template <class T>
 StillAirSink<T>::StillAirSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                               const Material& material, ChannelLaw law)
-    : g_(geometry), surroundings_(surroundings), material_(material), law_(law) {
+    : g_(geometry), fin_channel_(geometry.mean_gap(), geometry.height, geometry.length),
+      surroundings_(surroundings), material_(material), law_(law) {
     const T gap = g_.mean_gap();
     wetted_ = (2.0 * g_.height + g_.gap) * g_.length;
     exchange_ = correlations::channel_radiation_conductance(
@@ -42,8 +42,7 @@ T StillAirSink<T>::channel_coefficient(const StillAirView<T>& v, const T& conduc
     case ChannelLaw::fin_channel:
         break;
     }
-    return correlations::nusselt_fin_channel(v.elenbaas, v.plate, gap, g_.height, g_.length) *
-           conductivity / gap;
+    return fin_channel_.nusselt(v.elenbaas, v.plate) * conductivity / gap;
 }
 
 template <class T>

@@ -11,6 +11,7 @@
 // follows from the fins' efficiency by a fixed number of passes: each shrinks the error about
 // tenfold, three leave < 1e-4.
 
+#include "correlations/natural_channel.hpp"
 #include "src/sink/duty.hpp"
 #include "src/sink/geometry.hpp"
 #include "src/sink/heat_paths.hpp"
@@ -56,6 +57,7 @@ private:
     void efficiencies(StillAirView<T>& v) const;
 
     Geometry<T> g_;
+    correlations::FinChannel<T> fin_channel_;
     Surroundings surroundings_;
     Material material_;
     ChannelLaw law_;
