@@ -1,5 +1,4 @@
-// Multipliers against what easing a limit really buys, and the published derivative check of every
-// test problem.
+// Multipliers against what easing a limit really buys.
 #include "optimizer/minimise.hpp"
 #include "optimizer/multipliers.hpp"
 #include "tests/near.hpp"
@@ -13,7 +12,7 @@ using X = std::span<const Num>;
 
 namespace {
 
-/// HS 43 with its first bound moved: an active nonlinear limit.
+/// A small problem of our own with a movable nonlinear limit and bound.
 Outcome solved(double first, double lower) {
     FormulaProblem problem(
         {{"a", lower, 9.0, Scale::logarithmic}, {"b", 0.1, 9.0, Scale::logarithmic}},
