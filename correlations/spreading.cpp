@@ -1,6 +1,7 @@
 #include "correlations/spreading.hpp"
 
 #include <algorithm>
+#include <numeric>
 
 namespace finwright::correlations {
 
@@ -33,55 +34,47 @@ std::vector<T> mode_means(const T& centre, const T& size, const T& side, int las
     return means;
 }
 
-/// One mode's rise per flux and how it changes.
-struct ModeResistance {
-    double value; ///< G(z)/(k z) [m2 K/W]
-    double by_z, by_thickness, by_film;
-};
-
-ModeResistance mode_resistance(double z, double thickness, double k, double film) {
-    const double t = std::tanh(z * thickness);
-    const double kz = k * z, r = kz / film;
-    const double d = 1.0 + r * t;
-    const double sech2 = 1.0 - t * t;
-    const double scale = 1.0 / (d * d * kz);
-    const double value = (t + r) / (d * kz);
-    const double by_tanh = (1.0 - r * r) * scale, by_ratio = sech2 * scale;
-    return {value, by_tanh * thickness * sech2 + by_ratio * k / film - value / z,
-            by_tanh * z * sech2, -by_ratio * r / film};
+/// tanh for x > 0, faster than the library's: the difference loses two digits at
+/// x = 0.01, about the least that occurs.
+double tanh_above_zero(double x) {
+    return 1.0 - 2.0 / (std::exp(2.0 * x) + 1.0);
 }
 
-double resistance_of(double z_squared, const Slab<double>& slab) {
+double resistance_of(double z_squared, const Slab& slab) {
     const double z = std::sqrt(z_squared);
-    const double t = std::tanh(z * slab.thickness);
+    const double t = tanh_above_zero(z * slab.thickness);
     const double kz = slab.conductivity * z, r = kz / slab.film;
     return (t + r) / ((1.0 + r * t) * kz);
 }
 
-template <std::size_t N>
-Dual<N> resistance_of(const Dual<N>& z_squared, const Slab<Dual<N>>& slab) {
-    const double z = std::sqrt(z_squared.value);
-    const ModeResistance mode =
-        mode_resistance(z, slab.thickness.value, slab.conductivity, slab.film.value);
-    Dual<N> out(mode.value);
-    const double by_z_squared = 0.5 * mode.by_z / z;
-    for (std::size_t i = 0; i < N; ++i)
-        out.slope[i] = by_z_squared * z_squared.slope[i] +
-                       mode.by_thickness * slab.thickness.slope[i] +
-                       mode.by_film * slab.film.slope[i];
-    return out;
+/// One mode's rise per flux G(z)/(k z) [m2 K/W] and how it changes.
+struct ModeResistance {
+    double value;
+    double by_z_squared, by_thickness, by_film;
+};
+
+ModeResistance resistance_with_slopes(double z_squared, const Slab& slab) {
+    const double z = std::sqrt(z_squared);
+    const double t = tanh_above_zero(z * slab.thickness);
+    const double kz = slab.conductivity * z, r = kz / slab.film;
+    const double d = 1.0 + r * t;
+    const double sech2 = 1.0 - t * t;
+    const double scale = 1.0 / (d * d * kz);
+    const double value = (t + r) * d * scale;
+    const double by_tanh = (1.0 - r * r) * scale * sech2, by_ratio = sech2 * scale * r;
+    return {value, 0.5 * (by_tanh * slab.thickness * z + by_ratio - value) / z_squared, by_tanh * z,
+            -by_ratio / slab.film};
 }
 
 /// Calls visit(m, n, weight, z^2) for every mode but the uniform one.
-template <class T, class Visit>
-void for_each_mode(const Slab<T>& slab, const ModeSet& modes, Visit&& visit) {
-    const T across = pi / slab.width, along = pi / slab.length;
-    const T across2 = across * across, along2 = along * along;
+template <class Visit>
+void for_each_mode(const Slab& slab, const ModeSet& modes, Visit&& visit) {
+    const double across = pi / slab.width, along = pi / slab.length;
     for (int m = 0, last_m = modes.last_across(); m <= last_m; ++m) {
-        const T from_m = double(m) * double(m) * across2;
+        const double from_m = m * m * across * across;
         const int last_n = modes.last_along(m);
         for (int n = m == 0 ? 1 : 0; n <= last_n; ++n)
-            visit(m, n, m > 0 && n > 0 ? 4.0 : 2.0, T(from_m + double(n) * double(n) * along2));
+            visit(m, n, m > 0 && n > 0 ? 4.0 : 2.0, from_m + n * n * along * along);
     }
 }
 
@@ -91,37 +84,48 @@ struct PadModes {
 };
 
 template <class T>
-std::vector<PadModes<T>> pad_modes(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
+std::vector<PadModes<T>> pad_modes(const T& width, const T& length, const std::vector<Pad<T>>& pads,
                                    const ModeSet& modes) {
     std::vector<PadModes<T>> list;
     for (const Pad<T>& pad : pads)
-        list.push_back({mode_means(pad.x, pad.across, slab.width, modes.last_across()),
-                        mode_means(pad.y, pad.along, slab.length, modes.last_along(0))});
+        list.push_back({mode_means(pad.x, pad.across, width, modes.last_across()),
+                        mode_means(pad.y, pad.along, length, modes.last_along(0))});
     return list;
 }
 
-template <class T>
-T uniform_resistance(const Slab<T>& slab) {
+double uniform_resistance(const Slab& slab) {
     return slab.thickness / slab.conductivity + 1.0 / slab.film;
 }
+
+/// One row of modes (all with the same m) seen from one pad: the sum over n, its slopes by width
+/// and length that do not pass through the pad's own mean across, and those by thickness and film.
+struct Row {
+    double value = 0.0, by_width = 0.0, by_length = 0.0, by_thickness = 0.0, by_film = 0.0;
+};
 
 } // namespace
 
 template <class T>
-ModeSet ModeSet::up_to(double half_waves, const Slab<T>& slab, const std::vector<Pad<T>>& pads) {
+ModeSet ModeSet::up_to(double half_waves, const Slab& slab, const std::vector<Pad<T>>& pads) {
     ModeSet modes;
     modes.half_waves_ = half_waves;
     for (const Pad<T>& pad : pads) {
-        modes.share_across_ =
-            std::min(modes.share_across_, value_of(pad.across) / value_of(slab.width));
-        modes.share_along_ =
-            std::min(modes.share_along_, value_of(pad.along) / value_of(slab.length));
+        modes.share_across_ = std::min(modes.share_across_, value_of(pad.across) / slab.width);
+        modes.share_along_ = std::min(modes.share_along_, value_of(pad.along) / slab.length);
     }
     return modes;
 }
 
-template ModeSet ModeSet::up_to(double, const Slab<double>&, const std::vector<Pad<double>>&);
-template ModeSet ModeSet::up_to(double, const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&);
+template ModeSet ModeSet::up_to(double, const Slab&, const std::vector<Pad<double>>&);
+template ModeSet ModeSet::up_to(double, const Slab&, const std::vector<Pad<Dual<1>>>&);
+
+template <class T>
+ModeSet ModeSet::for_means(const Slab& slab, const std::vector<Pad<T>>& pads) {
+    return up_to(half_waves_for_means, slab, pads);
+}
+
+template ModeSet ModeSet::for_means(const Slab&, const std::vector<Pad<double>>&);
+template ModeSet ModeSet::for_means(const Slab&, const std::vector<Pad<Dual<1>>>&);
 
 int ModeSet::last(double half_waves, double share) {
     return std::clamp(int(std::ceil(half_waves / share)), fewest_modes, most_modes);
@@ -135,64 +139,108 @@ int ModeSet::last_along(int m) const {
     return last(half_waves_ / std::max(1.0, m * share_across_), share_along_);
 }
 
-template <class T>
-std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
-                              const std::vector<double>& powers) {
-    return pad_mean_rises(slab, pads, powers, ModeSet::up_to(half_waves_for_means, slab, pads));
-}
-
-template <class T>
-std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
-                              const std::vector<double>& powers, const ModeSet& modes) {
+std::vector<double> pad_mean_rises(const Slab& slab, const std::vector<Pad<double>>& pads,
+                                   const std::vector<double>& powers, const ModeSet& modes) {
     const std::size_t count = pads.size();
-    const auto means = pad_modes(slab, pads, modes);
-    double total = 0.0;
-    for (double power : powers)
-        total += power;
-
-    std::vector<T> rises(count, total * uniform_resistance(slab));
-    std::vector<T> row(count, T(0.0)), loaded(count, T(0.0));
-    int row_of = -1;
-    const auto close_row = [&] {
-        for (std::size_t i = 0; i < count && row_of >= 0; ++i)
-            rises[i] += means[i].across[std::size_t(row_of)] * row[i];
-    };
-    for_each_mode(slab, modes, [&](int m, int n, double weight, const T& z_squared) {
-        if (m != row_of) {
-            close_row();
-            row_of = m;
-            for (std::size_t i = 0; i < count; ++i) {
-                row[i] = T(0.0);
-                loaded[i] = powers[i] * means[i].across[std::size_t(m)];
-            }
-        }
-        T flux(0.0);
+    const auto means = pad_modes(slab.width, slab.length, pads, modes);
+    std::vector<double> rises(count, std::accumulate(powers.begin(), powers.end(), 0.0) *
+                                         uniform_resistance(slab));
+    for_each_mode(slab, modes, [&](int m, int n, double weight, double z_squared) {
+        double flux = 0.0;
         for (std::size_t i = 0; i < count; ++i)
-            flux += loaded[i] * means[i].along[std::size_t(n)];
-        const T rise = weight * resistance_of(z_squared, slab) * flux;
+            flux += powers[i] * means[i].across[std::size_t(m)] * means[i].along[std::size_t(n)];
+        const double rise = weight * resistance_of(z_squared, slab) * flux;
         for (std::size_t i = 0; i < count; ++i)
-            row[i] += rise * means[i].along[std::size_t(n)];
+            rises[i] += rise * means[i].across[std::size_t(m)] * means[i].along[std::size_t(n)];
     });
-    close_row();
-    const T area = slab.width * slab.length;
-    for (T& rise : rises)
-        rise /= area;
+    for (double& rise : rises)
+        rise /= slab.width * slab.length;
     return rises;
 }
 
-template std::vector<double> pad_mean_rises(const Slab<double>&, const std::vector<Pad<double>>&,
-                                            const std::vector<double>&);
-template std::vector<double> pad_mean_rises(const Slab<double>&, const std::vector<Pad<double>>&,
-                                            const std::vector<double>&, const ModeSet&);
-template std::vector<Dual<5>> pad_mean_rises(const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&,
-                                             const std::vector<double>&);
-template std::vector<Dual<5>> pad_mean_rises(const Slab<Dual<5>>&, const std::vector<Pad<Dual<5>>>&,
-                                             const std::vector<double>&, const ModeSet&);
+std::vector<double> pad_mean_rises(const Slab& slab, const std::vector<Pad<double>>& pads,
+                                   const std::vector<double>& powers) {
+    return pad_mean_rises(slab, pads, powers, ModeSet::for_means(slab, pads));
+}
 
-double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,
+std::vector<Dual<4>> pad_mean_rises_with_slopes(const Slab& slab,
+                                                const std::vector<Pad<Dual<1>>>& pads,
+                                                const std::vector<double>& powers,
+                                                const ModeSet& modes) {
+    const std::size_t count = pads.size();
+    const auto means =
+        pad_modes(Dual<1>::variable(slab.width, 0), Dual<1>::variable(slab.length, 0), pads, modes);
+    const double total = std::accumulate(powers.begin(), powers.end(), 0.0);
+    Dual<4> uniform(total * uniform_resistance(slab));
+    uniform.slope[2] = total / slab.conductivity;
+    uniform.slope[3] = -total / (slab.film * slab.film);
+    std::vector<Dual<4>> rises(count, uniform);
+
+    // The slope of z^2 = (m pi/W)^2 + (n pi/L)^2 by W is -2 (m pi/W)^2/W, and so by L.
+    const double along = pi / slab.length;
+    std::vector<Row> rows(count);
+    std::vector<Dual<1>> loaded(count);
+    const auto open_row = [&](std::size_t m) {
+        std::fill(rows.begin(), rows.end(), Row{});
+        for (std::size_t i = 0; i < count; ++i)
+            loaded[i] = powers[i] * means[i].across[m];
+    };
+    const auto close_row = [&](std::size_t m) {
+        for (std::size_t i = 0; i < count; ++i) {
+            const Dual<1>& across = means[i].across[m];
+            const Row& row = rows[i];
+            rises[i].value += across.value * row.value;
+            rises[i].slope[0] += across.slope[0] * row.value + across.value * row.by_width;
+            rises[i].slope[1] += across.value * row.by_length;
+            rises[i].slope[2] += across.value * row.by_thickness;
+            rises[i].slope[3] += across.value * row.by_film;
+        }
+    };
+    int open = 0;
+    open_row(0);
+    for_each_mode(slab, modes, [&](int m, int n, double weight, double z_squared) {
+        if (m != open) {
+            close_row(std::size_t(open));
+            open_row(std::size_t(m));
+            open = m;
+        }
+        double flux = 0.0, flux_by_width = 0.0, flux_by_length = 0.0;
+        for (std::size_t i = 0; i < count; ++i) {
+            const Dual<1>& mean = means[i].along[std::size_t(n)];
+            flux += loaded[i].value * mean.value;
+            flux_by_width += loaded[i].slope[0] * mean.value;
+            flux_by_length += loaded[i].value * mean.slope[0];
+        }
+        const ModeResistance r = resistance_with_slopes(z_squared, slab);
+        const double from_n = n * n * along * along, from_m = z_squared - from_n;
+        const double rise = weight * r.value * flux;
+        const double by_z_squared = -2.0 * weight * r.by_z_squared * flux;
+        const double by_width =
+            weight * r.value * flux_by_width + by_z_squared * from_m / slab.width;
+        const double by_length =
+            weight * r.value * flux_by_length + by_z_squared * from_n / slab.length;
+        for (std::size_t i = 0; i < count; ++i) {
+            const Dual<1>& mean = means[i].along[std::size_t(n)];
+            rows[i].value += rise * mean.value;
+            rows[i].by_width += by_width * mean.value;
+            rows[i].by_length += by_length * mean.value + rise * mean.slope[0];
+            rows[i].by_thickness += weight * r.by_thickness * flux * mean.value;
+            rows[i].by_film += weight * r.by_film * flux * mean.value;
+        }
+    });
+    close_row(std::size_t(open));
+    for (Dual<4>& rise : rises) {
+        rise /= slab.width * slab.length;
+        rise.slope[0] -= rise.value / slab.width;
+        rise.slope[1] -= rise.value / slab.length;
+    }
+    return rises;
+}
+
+double surface_rise(const Slab& slab, const std::vector<Pad<double>>& pads,
                     const std::vector<double>& powers, double x, double y) {
     const ModeSet modes = ModeSet::up_to(half_waves_at_a_point, slab, pads);
-    const auto means = pad_modes(slab, pads, modes);
+    const auto means = pad_modes(slab.width, slab.length, pads, modes);
     double rise = 0.0;
     for (double power : powers)
         rise += power * uniform_resistance(slab);
@@ -206,9 +254,9 @@ double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pa
     return rise / (slab.width * slab.length);
 }
 
-double mean_rise_two_layers(const Slab<double>& base, const Layer& top, const Pad<double>& pad) {
+double mean_rise_two_layers(const Slab& base, const Layer& top, const Pad<double>& pad) {
     const ModeSet modes = ModeSet::up_to(half_waves_at_a_point, base, std::vector{pad});
-    const auto means = pad_modes(base, {pad}, modes).front();
+    const auto means = pad_modes(base.width, base.length, {pad}, modes).front();
     double rise = top.thickness / top.conductivity + uniform_resistance(base);
     for_each_mode(base, modes, [&](int m, int n, double weight, double z_squared) {
         const double z = std::sqrt(z_squared), below = resistance_of(z_squared, base);

@@ -34,13 +34,12 @@ T spreading_largest(const T& eps, const T& tau, const T& bi) {
 }
 
 /// A base cooled with one film coefficient over its far side. SI.
-template <class T>
 struct Slab {
-    T width;             ///< along x [m]
-    T length;            ///< along y [m]
-    T thickness;         ///< [m]
+    double width;        ///< along x [m]
+    double length;       ///< along y [m]
+    double thickness;    ///< [m]
     double conductivity; ///< [W/(m K)]
-    T film;              ///< heat per base area and kelvin on the far side [W/(m2 K)]
+    double film;         ///< heat per base area and kelvin on the far side [W/(m2 K)]
 };
 
 /// A rectangular pad of uniform flux on the base.
@@ -56,7 +55,10 @@ struct Pad {
 class ModeSet {
 public:
     template <class T>
-    static ModeSet up_to(double half_waves, const Slab<T>& slab, const std::vector<Pad<T>>& pads);
+    static ModeSet up_to(double half_waves, const Slab& slab, const std::vector<Pad<T>>& pads);
+    /// Eight half waves: what is cut off of a mean is about 1e-3 of its spreading part.
+    template <class T>
+    static ModeSet for_means(const Slab& slab, const std::vector<Pad<T>>& pads);
 
     int last_across() const;
     int last_along(int m) const;
@@ -69,20 +71,24 @@ private:
 /// Mean rise of each pad for a power in every pad, the one-dimensional part (t/k + 1/h)/(W L)
 /// included [K]. Double Fourier series of Muzychka, Culham & Yovanovich 2003 (from memory; agrees
 /// with finite volumes to 1e-4): sum over modes of w G(z)/(k z) times the mode's means over the
-/// pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)). Eight half
-/// waves: what is cut off is about 1e-3 of the spreading part.
-template <class T>
-std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
-                              const std::vector<double>& powers);
+/// pads, z^2 = (m pi/W)^2 + (n pi/L)^2, G = (tanh(z t) + k z/h)/(1 + (k z/h) tanh(z t)).
+std::vector<double> pad_mean_rises(const Slab& slab, const std::vector<Pad<double>>& pads,
+                                   const std::vector<double>& powers, const ModeSet& modes);
 
-/// The same over a stated set of modes: coarser and cheaper, or the same modes while dimensions
-/// vary.
-template <class T>
-std::vector<T> pad_mean_rises(const Slab<T>& slab, const std::vector<Pad<T>>& pads,
-                              const std::vector<double>& powers, const ModeSet& modes);
+/// The same over the modes for means.
+std::vector<double> pad_mean_rises(const Slab& slab, const std::vector<Pad<double>>& pads,
+                                   const std::vector<double>& powers);
+
+/// The same with its slopes by the slab's width, length, thickness and film, in this order. A pad's
+/// x and side across may move with the width (their slope is by it), its y and side along with the
+/// length.
+std::vector<Dual<4>> pad_mean_rises_with_slopes(const Slab& slab,
+                                                const std::vector<Pad<Dual<1>>>& pads,
+                                                const std::vector<double>& powers,
+                                                const ModeSet& modes);
 
 /// Rise of the base's surface at (x, y) for a power in each pad [K].
-double surface_rise(const Slab<double>& slab, const std::vector<Pad<double>>& pads,
+double surface_rise(const Slab& slab, const std::vector<Pad<double>>& pads,
                     const std::vector<double>& powers, double x, double y);
 
 /// Mean rise of one pad per watt when a thin layer of the same sides lies on the base [K/W]: the
@@ -92,6 +98,6 @@ struct Layer {
     double thickness;    ///< [m]
     double conductivity; ///< [W/(m K)]
 };
-double mean_rise_two_layers(const Slab<double>& base, const Layer& top, const Pad<double>& pad);
+double mean_rise_two_layers(const Slab& base, const Layer& top, const Pad<double>& pad);
 
 } // namespace finwright::correlations

@@ -55,7 +55,7 @@ std::vector<Passport> conduction_passports() {
          "1e-4 against finite volumes; uniform film, uniform flux",
          true,
          [](In x) {
-             const Slab<double> slab{x[0], x[1], x[2], x[3], x[4]};
+             const Slab slab{x[0], x[1], x[2], x[3], x[4]};
              return pad_mean_rises(slab, {Pad<double>{x[5], x[6], x[7], x[8]}}, {1.0})[0];
          }},
         {"layer",

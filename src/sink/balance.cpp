@@ -21,12 +21,13 @@ auto with_model(const Geometry<T>& g, const Duty& duty, Visitor&& visit) {
     return visit(DuctedSink<T>(g, duty.surroundings, duty.material));
 }
 
-/// Secant in (log rise, log heat): the curve is almost a straight line there.
+/// Secant in (log rise, log heat): the curve is almost a straight line there. The rise is the one
+/// the model's view is stated by.
 template <class Model>
 double balanced_rise(const Model& model, double power, double guess) {
     const auto log_heat = [&](double log_rise) {
         const double rise = std::exp(log_rise);
-        return std::log(model.heat(model.view(rise), rise).total() / power);
+        return std::log(model.heat(model.view(rise)).total() / power);
     };
     double x0 = std::log(guess), f0 = log_heat(x0);
     double x1 = x0 - f0 / 1.2, f1 = log_heat(x1);
@@ -79,30 +80,31 @@ Geometry<double> plain(const Geometry<T>& g) {
 template Geometry<double> plain(const Geometry<double>&);
 template Geometry<double> plain(const Geometry<Dual<5>>&);
 
-HeatPaths<double> shed(const Geometry<double>& g, const Duty& duty, double base_rise) {
+HeatPaths<double> shed(const Geometry<double>& g, const Duty& duty, double driving_rise) {
     require_room(g);
-    return with_model(
-        g, duty, [&](const auto& model) { return model.heat(model.view(base_rise), base_rise); });
+    return with_model(g, duty,
+                      [&](const auto& model) { return model.heat(model.view(driving_rise)); });
 }
 
 Balance<double> balance(const Geometry<double>& g, const Duty& duty, double guess) {
     require_room(g);
     return with_model(g, duty, [&](const auto& model) {
         const double rise = balanced_rise(model, duty.power(), guess);
-        return Balance<double>{rise, model.pressure_drop(model.view(rise), rise)};
+        const auto view = model.view(rise);
+        return Balance<double>{view.base_rise, model.pressure_drop(view), rise};
     });
 }
 
 Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty, double guess) {
-    const double rise = balance(plain(g), duty, guess).base_rise;
+    const double rise = balance(plain(g), duty, guess).driving_rise;
     return with_model(widened(g), duty, [&](const auto& model) {
-        const auto rise6 = Dual<6>::variable(rise, 5);
-        const auto view = model.view(rise6);
-        const Dual<6> heat = model.heat(view, rise6).total();
+        const auto view = model.view(Dual<6>::variable(rise, 5));
+        const Dual<6> heat = model.heat(view).total();
         Dual<5> implicit(rise);
         for (std::size_t i = 0; i < 5; ++i)
             implicit.slope[i] = -heat.slope[i] / heat.slope[5];
-        return Balance<Dual<5>>{implicit, along(model.pressure_drop(view, rise6), implicit)};
+        return Balance<Dual<5>>{along(view.base_rise, implicit),
+                                along(model.pressure_drop(view), implicit), implicit};
     });
 }
 

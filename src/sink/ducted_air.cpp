@@ -35,6 +35,7 @@ DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
     const T gap = g_.mean_gap();
     const T free_area = double(g_.fins - 1) * gap * g_.height;
     DuctedAirView<T> v;
+    v.base_rise = base_rise;
     v.film_temperature = surroundings_.air_temperature + 0.5 * base_rise;
     const auto air =
         correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
@@ -63,17 +64,16 @@ DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {
 }
 
 template <class T>
-HeatPaths<T> DuctedSink<T>::heat(const DuctedAirView<T>& v, const T& base_rise) const {
+HeatPaths<T> DuctedSink<T>::heat(const DuctedAirView<T>& v) const {
     using std::expm1;
     HeatPaths<T> q;
-    q.channels = -v.capacity_flow * expm1(-v.transfer_units) * base_rise;
+    q.channels = -v.capacity_flow * expm1(-v.transfer_units) * v.base_rise;
     return q;
 }
 
 template <class T>
-T DuctedSink<T>::pressure_drop(const DuctedAirView<T>& v, const T& base_rise) const {
-    const T bulk_mean =
-        surroundings_.air_temperature + 0.5 * heat(v, base_rise).channels / v.capacity_flow;
+T DuctedSink<T>::pressure_drop(const DuctedAirView<T>& v) const {
+    const T bulk_mean = surroundings_.air_temperature + 0.5 * heat(v).channels / v.capacity_flow;
     const auto air = correlations::air_at(
         correlations::clamp(bulk_mean, coldest_film, hottest_film), surroundings_.pressure);
     const T free_area = double(g_.fins - 1) * g_.mean_gap() * g_.height;

@@ -16,6 +16,7 @@ namespace finwright::sink {
 
 template <class T>
 struct DuctedAirView {
+    T base_rise = T(0.0);          ///< at the fins' roots [K]
     T film_temperature = T(0.0);   ///< [K]
     T approach_velocity = T(0.0);  ///< before the fins, inlet density [m/s]
     T channel_velocity = T(0.0);   ///< between the fins, inlet density [m/s]
@@ -45,11 +46,11 @@ public:
     /// What the laws see at a base rise over the inlet air [K].
     DuctedAirView<T> view(const T& base_rise) const;
 
-    /// Heat by path at that base rise [W].
-    HeatPaths<T> heat(const DuctedAirView<T>& v, const T& base_rise) const;
+    /// Heat by path [W].
+    HeatPaths<T> heat(const DuctedAirView<T>& v) const;
 
     /// Static pressure the flow loses from before the fins to behind them [Pa].
-    T pressure_drop(const DuctedAirView<T>& v, const T& base_rise) const;
+    T pressure_drop(const DuctedAirView<T>& v) const;
 
 private:
     Geometry<T> g_;

@@ -78,9 +78,9 @@ std::vector<correlations::Pad<T>> pads_on_base(const std::vector<job::Part>& par
 
 template std::vector<correlations::Pad<double>> pads_on_base(const std::vector<job::Part>&,
                                                              const double&, const double&);
-template std::vector<correlations::Pad<correlations::Dual<5>>>
-pads_on_base(const std::vector<job::Part>&, const correlations::Dual<5>&,
-             const correlations::Dual<5>&);
+template std::vector<correlations::Pad<correlations::Dual<1>>>
+pads_on_base(const std::vector<job::Part>&, const correlations::Dual<1>&,
+             const correlations::Dual<1>&);
 
 SmallestBase smallest_base(const std::vector<job::Part>& parts) {
     const std::vector<Centre> centres = centres_of(parts);

@@ -5,6 +5,8 @@
 
 namespace finwright::sink {
 
+using correlations::Dual;
+
 namespace {
 
 PartRating rate_part(const job::Part& part, double pad_temperature, double margin) {
@@ -53,17 +55,17 @@ std::vector<LawUse> ducted_air_laws(const DuctedAirView<double>& v, const Geomet
 }
 
 /// Rates the flow side: what the films see, what the air loses, which laws say so.
-void rate_air(Rating& rating, const Duty& duty) {
+void rate_air(Rating& rating, const Duty& duty, double driving_rise) {
     const Geometry<double>& g = rating.geometry;
     if (const auto* still = std::get_if<StillAir>(&duty.surroundings.air)) {
         const StillAirSink<double> model(g, duty.surroundings, duty.material, still->channel_law);
-        const auto view = model.view(rating.base_rise);
+        const auto view = model.view(driving_rise);
         rating.laws = still_air_laws(view, g, still->channel_law);
         rating.view = view;
         return;
     }
     const DuctedSink<double> model(g, duty.surroundings, duty.material);
-    const auto view = model.view(rating.base_rise);
+    const auto view = model.view(driving_rise);
     rating.laws = ducted_air_laws(view, g);
     rating.view = view;
 }
@@ -78,19 +80,24 @@ void rate_parts(Rating& rating, const Duty& duty) {
 
 /// The base as the spreading series sees it.
 template <class T>
-struct LoadedBase {
-    correlations::Slab<T> slab;
-    std::vector<correlations::Pad<T>> pads;
-    std::vector<double> powers;
+correlations::Slab slab_of(const Geometry<T>& g, const Duty& duty, const T& film) {
+    using correlations::value_of;
+    return {value_of(g.width()), value_of(g.length), value_of(g.base), duty.material.conductivity,
+            value_of(film)};
+}
 
-    LoadedBase(const Geometry<T>& g, const Duty& duty, const T& base_rise)
-        : slab{g.width(), g.length, g.base, duty.material.conductivity,
-               duty.power() / (base_rise * g.footprint())},
-          pads(pads_on_base(duty.parts, slab.width, slab.length)) {
-        for (const job::Part& part : duty.parts)
-            powers.push_back(part.power);
-    }
-};
+/// Heat per base area and kelvin that holds the base at this mean rise [W/(m2 K)].
+template <class T>
+T base_film(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
+    return duty.power() / (base_rise * g.footprint());
+}
+
+std::vector<double> powers_of(const Duty& duty) {
+    std::vector<double> powers;
+    for (const job::Part& part : duty.parts)
+        powers.push_back(part.power);
+    return powers;
+}
 
 } // namespace
 
@@ -99,31 +106,44 @@ double Rating::outlet_temperature() const {
     return duct ? air_temperature + power / duct->capacity_flow : air_temperature;
 }
 
-template <class T>
-std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
-    const LoadedBase<T> base(g, duty, base_rise);
-    return correlations::pad_mean_rises(base.slab, base.pads, base.powers);
-}
-
-template <class T>
-std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise,
-                         const correlations::ModeSet& modes) {
-    const LoadedBase<T> base(g, duty, base_rise);
-    return correlations::pad_mean_rises(base.slab, base.pads, base.powers, modes);
-}
-
 correlations::ModeSet modes_up_to(double half_waves, const Geometry<double>& g, const Duty& duty) {
-    const LoadedBase<double> base(g, duty, 1.0);
-    return correlations::ModeSet::up_to(half_waves, base.slab, base.pads);
+    const auto pads = pads_on_base(duty.parts, g.width(), g.length);
+    return correlations::ModeSet::up_to(half_waves, slab_of(g, duty, 1.0), pads);
 }
 
-using D5 = correlations::Dual<5>;
-template std::vector<double> pad_rises(const Geometry<double>&, const Duty&, const double&);
-template std::vector<double> pad_rises(const Geometry<double>&, const Duty&, const double&,
-                                       const correlations::ModeSet&);
-template std::vector<D5> pad_rises(const Geometry<D5>&, const Duty&, const D5&);
-template std::vector<D5> pad_rises(const Geometry<D5>&, const Duty&, const D5&,
-                                   const correlations::ModeSet&);
+correlations::ModeSet modes_for_means(const Geometry<double>& g, const Duty& duty) {
+    const auto pads = pads_on_base(duty.parts, g.width(), g.length);
+    return correlations::ModeSet::for_means(slab_of(g, duty, 1.0), pads);
+}
+
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise,
+                              const correlations::ModeSet& modes) {
+    const auto slab = slab_of(g, duty, base_film(g, duty, base_rise));
+    const auto pads = pads_on_base(duty.parts, slab.width, slab.length);
+    return correlations::pad_mean_rises(slab, pads, powers_of(duty), modes);
+}
+
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise) {
+    return pad_rises(g, duty, base_rise, modes_for_means(g, duty));
+}
+
+std::vector<Dual<5>> pad_rises(const Geometry<Dual<5>>& g, const Duty& duty,
+                               const Dual<5>& base_rise, const correlations::ModeSet& modes) {
+    const Dual<5> width = g.width(), film = base_film(g, duty, base_rise);
+    const auto slab = slab_of(g, duty, film);
+    const auto pads = pads_on_base(duty.parts, Dual<1>::variable(slab.width, 0),
+                                   Dual<1>::variable(slab.length, 0));
+    std::vector<Dual<5>> rises;
+    for (const Dual<4>& rise :
+         correlations::pad_mean_rises_with_slopes(slab, pads, powers_of(duty), modes)) {
+        Dual<5> total(rise.value);
+        for (std::size_t k = 0; k < 5; ++k)
+            total.slope[k] = rise.slope[0] * width.slope[k] + rise.slope[1] * g.length.slope[k] +
+                             rise.slope[2] * g.base.slope[k] + rise.slope[3] * film.slope[k];
+        rises.push_back(total);
+    }
+    return rises;
+}
 
 Rating rate(const Geometry<double>& g, const Duty& duty) {
     const Balance<double> settled = balance(g, duty);
@@ -134,8 +154,8 @@ Rating rate(const Geometry<double>& g, const Duty& duty) {
     rating.mass = g.metal() * duty.material.density;
     rating.base_rise = settled.base_rise;
     rating.pressure_drop = settled.pressure_drop;
-    rating.heat = shed(g, duty, settled.base_rise);
-    rate_air(rating, duty);
+    rating.heat = shed(g, duty, settled.driving_rise);
+    rate_air(rating, duty, settled.driving_rise);
     rate_parts(rating, duty);
     return rating;
 }

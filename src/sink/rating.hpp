@@ -53,16 +53,20 @@ struct Rating {
 };
 
 /// Rise of the base under each pad over the inlet air, spreading included [K].
-template <class T>
-std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise);
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise);
 
-/// The same with a stated set of the base's modes.
-template <class T>
-std::vector<T> pad_rises(const Geometry<T>& g, const Duty& duty, const T& base_rise,
-                         const correlations::ModeSet& modes);
+/// The same with a stated set of the base's modes, and with its slopes.
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise,
+                              const correlations::ModeSet& modes);
+std::vector<correlations::Dual<5>> pad_rises(const Geometry<correlations::Dual<5>>& g,
+                                             const Duty& duty,
+                                             const correlations::Dual<5>& base_rise,
+                                             const correlations::ModeSet& modes);
 
-/// The base's modes up to so many half waves over the smallest pad.
+/// The base's modes up to so many half waves over the smallest pad, and those a pad's mean rise
+/// needs.
 correlations::ModeSet modes_up_to(double half_waves, const Geometry<double>& g, const Duty& duty);
+correlations::ModeSet modes_for_means(const Geometry<double>& g, const Duty& duty);
 
 /// The whole rating. Throws std::domain_error for impossible geometry.
 Rating rate(const Geometry<double>& g, const Duty& duty);

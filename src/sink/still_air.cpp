@@ -10,7 +10,6 @@ namespace finwright::sink {
 
 namespace {
 constexpr double gravity = 9.80665; // standard acceleration of free fall, ISO 80000-3 [m/s2]
-constexpr int passes = 3;
 } // namespace
 
 template <class T>
@@ -46,7 +45,7 @@ T StillAirSink<T>::channel_coefficient(const StillAirView<T>& v, const T& conduc
 }
 
 template <class T>
-StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
+StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
     const double ambient = surroundings_.air_temperature;
     const T gap = g_.mean_gap();
     StillAirView<T> v;
@@ -69,33 +68,25 @@ StillAirView<T> StillAirSink<T>::films(const T& wall_rise) const {
     const T black = correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(ambient));
     v.channel_radiation = black * exchange_ / wetted_;
     v.outer_radiation = material_.emissivity * black;
+    conduct(v);
     return v;
 }
 
 template <class T>
-void StillAirSink<T>::efficiencies(StillAirView<T>& v) const {
+void StillAirSink<T>::conduct(StillAirView<T>& v) const {
     const T face = g_.height * g_.length;
     const T inside = v.channel_film + v.channel_radiation;
     const T outside = v.outer_film + v.outer_radiation;
     const T ends = (tip_ + edges_) * outside;
     v.inner_efficiency = efficiency(T(2.0 * face * inside + ends), fin_shape_);
     v.outer_efficiency = efficiency(T(face * (inside + outside) + ends), fin_shape_);
-}
-
-template <class T>
-StillAirView<T> StillAirSink<T>::view(const T& base_rise) const {
     const T fin_share = 2.0 * g_.height / (2.0 * g_.height + g_.gap);
-    StillAirView<T> v = films(base_rise);
-    efficiencies(v);
-    for (int i = 1; i < passes; ++i) {
-        v = films(T(base_rise * (1.0 - fin_share * (1.0 - v.inner_efficiency))));
-        efficiencies(v);
-    }
-    return v;
+    v.base_rise = v.wall_rise / (1.0 - fin_share * (1.0 - v.inner_efficiency));
 }
 
 template <class T>
-HeatPaths<T> StillAirSink<T>::heat(const StillAirView<T>& v, const T& base_rise) const {
+HeatPaths<T> StillAirSink<T>::heat(const StillAirView<T>& v) const {
+    const T& base_rise = v.base_rise;
     const double n = g_.fins;
     const T face = g_.height * g_.length;
     // Effective areas: each fin face counts at its fin's mean rise, base strips and rim at the

@@ -1,5 +1,6 @@
 #pragma once
-// Heat shed in still air, base and fins vertical, at a stated rise of the base over the air.
+// Heat shed in still air, base and fins vertical, at a stated rise of the channel walls over the
+// air.
 //
 // Model. The base is isothermal (spreading is added elsewhere); its back carries the parts and
 // sheds nothing. Inner channels follow a vertical-channel law (duty.hpp), every other face the
@@ -7,9 +8,9 @@
 // because the same rising film bathes them. Radiation: channels as grey one-zone cavities through
 // their exact openings, outer surfaces with view factor 1. A fin is conducted with convection and
 // radiation together, its tip and end faces added to its conductance and half its thickness to its
-// height (Harper & Brown). Properties at the film temperature of the channel wall, whose mean rise
-// follows from the fins' efficiency by a fixed number of passes: each shrinks the error about
-// tenfold, three leave < 1e-4.
+// height (Harper & Brown). Properties at the film temperature of the channel wall. Its mean rise is
+// what everything is stated by: the films follow from it, the fins' efficiency from the films, and
+// the base's rise from the efficiency, with nothing to iterate.
 
 #include "correlations/natural_channel.hpp"
 #include "src/sink/duty.hpp"
@@ -22,6 +23,7 @@ namespace finwright::sink {
 template <class T>
 struct StillAirView {
     T wall_rise = T(0.0);         ///< mean over the channel walls [K]
+    T base_rise = T(0.0);         ///< at the fins' roots [K]
     T film_temperature = T(0.0);  ///< [K]
     T elenbaas = T(0.0);          ///< channel number on the gap [-]
     T rayleigh_radius = T(0.0);   ///< channel number on the hydraulic radius [-]
@@ -42,19 +44,18 @@ public:
     StillAirSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                  const Material& material, ChannelLaw law);
 
-    /// What the laws see at a base rise over the air [K].
-    StillAirView<T> view(const T& base_rise) const;
+    /// What the laws see at a mean rise of the channel walls over the air [K].
+    StillAirView<T> view(const T& wall_rise) const;
 
-    /// Heat by path at that base rise [W].
-    HeatPaths<T> heat(const StillAirView<T>& v, const T& base_rise) const;
+    /// Heat by path [W].
+    HeatPaths<T> heat(const StillAirView<T>& v) const;
 
     /// Nothing drives the air but its own heat [Pa].
-    T pressure_drop(const StillAirView<T>&, const T&) const { return T(0.0); }
+    T pressure_drop(const StillAirView<T>&) const { return T(0.0); }
 
 private:
-    StillAirView<T> films(const T& wall_rise) const;
     T channel_coefficient(const StillAirView<T>& v, const T& conductivity) const;
-    void efficiencies(StillAirView<T>& v) const;
+    void conduct(StillAirView<T>& v) const;
 
     Geometry<T> g_;
     correlations::FinChannel<T> fin_channel_;

@@ -236,7 +236,7 @@ void SearchProblem::evaluate(std::span<const double> x, Evaluation& out) {
     const Geometry<Dual5> g = seeded(x);
     const std::size_t n = variables_.size(), dims = free_.size();
     const sink::Balance<Dual5> balance = sink::balance(g, duty_, last_rise_);
-    last_rise_ = balance.base_rise.value;
+    last_rise_ = balance.driving_rise.value;
     Measured<Dual5> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance.base_rise),
                       Dual5(1.0)};
     if (pursues_worst_pad()) m.worst = Dual5(x[dims]);

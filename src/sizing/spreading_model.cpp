@@ -31,7 +31,8 @@ void SpreadingModel::centre(const sink::Geometry<double>& plain, const sink::Dut
     const sink::Geometry<Dual5> g = independent(plain);
     const Dual5 base_rise = sink::balance(g, duty).base_rise;
     modes_ = sink::modes_up_to(coarse_half_waves, plain, duty);
-    const std::vector<Dual5> full = sink::pad_rises(g, duty, base_rise);
+    const std::vector<Dual5> full =
+        sink::pad_rises(g, duty, base_rise, sink::modes_for_means(plain, duty));
     const std::vector<Dual5> coarse = sink::pad_rises(g, duty, base_rise, modes_);
     const auto values = dimensions_of(plain);
     for (std::size_t k = 0; k < 5; ++k)

@@ -11,7 +11,7 @@ using finwright::tests::near;
 
 namespace {
 
-const Slab<double> slab{0.1, 0.08, 0.005, 200.0, 50.0};
+const Slab slab{0.1, 0.08, 0.005, 200.0, 50.0};
 const Pad<double> first{0.03, 0.05, 0.02, 0.02}, second{0.08, 0.03, 0.015, 0.02};
 
 double alone(const Pad<double>& pad) {
@@ -82,7 +82,7 @@ TEST_CASE("a pad over the whole base spreads nothing, SP-15") {
 }
 
 TEST_CASE("a small pad on a thick base tends to the half space, SP-31a (Carslaw & Jaeger)") {
-    const Slab<double> deep{1.0, 1.0, 1.0, 1.0, 1e6};
+    const Slab deep{1.0, 1.0, 1.0, 1.0, 1e6};
     const double side = 0.02;
     const double spreading =
         pad_mean_rises(deep, {Pad<double>{0.5, 0.5, side, side}}, {1.0})[0] - 1.0;

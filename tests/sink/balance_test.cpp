@@ -51,7 +51,8 @@ Values values(const sink::Geometry<double>& g, const sink::Duty& duty) {
 /// Slopes against central differences, on the scale of value per dimension.
 void check_slopes(const sink::Geometry<double>& g, const sink::Duty& duty) {
     const auto balance = sink::balance(seeded(g), duty);
-    const auto pads = sink::pad_rises(seeded(g), duty, balance.base_rise);
+    const auto pads =
+        sink::pad_rises(seeded(g), duty, balance.base_rise, sink::modes_for_means(g, duty));
     const Values at = values(g, duty);
     for (int i = 0; i < 5; ++i) {
         auto high = g, low = g;

@@ -256,7 +256,7 @@ void radiation() {
 
 void spreading() {
     say("## Spreading in the base\n");
-    const Slab<double> slab{0.1, 0.08, 0.005, 200.0, 50.0};
+    const Slab slab{0.1, 0.08, 0.005, 200.0, 50.0};
     const auto one = pad_mean_rises(slab, {Pad<double>{0.03, 0.05, 0.02, 0.02}}, {1.0});
     say(fmt::format("Series of Muzychka, Culham & Yovanovich 2003 (a 20 x 20 mm pad on 100 x 80 x "
                     "5 mm): {:.4f} K/W, finite volumes 2.7480",
