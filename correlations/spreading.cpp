@@ -54,16 +54,17 @@ struct ModeResistance {
 };
 
 ModeResistance resistance_with_slopes(double z_squared, const Slab& slab) {
-    const double z = std::sqrt(z_squared);
+    const double z = std::sqrt(z_squared), inverse_z = 1.0 / z;
     const double t = tanh_above_zero(z * slab.thickness);
-    const double kz = slab.conductivity * z, r = kz / slab.film;
-    const double d = 1.0 + r * t;
+    const double r = slab.conductivity / slab.film * z;
+    const double inverse_d = 1.0 / (1.0 + r * t);
     const double sech2 = 1.0 - t * t;
-    const double scale = 1.0 / (d * d * kz);
-    const double value = (t + r) * d * scale;
-    const double by_tanh = (1.0 - r * r) * scale * sech2, by_ratio = sech2 * scale * r;
-    return {value, 0.5 * (by_tanh * slab.thickness * z + by_ratio - value) / z_squared, by_tanh * z,
-            -by_ratio / slab.film};
+    const double over_d = inverse_d * inverse_z / slab.conductivity;
+    const double value = (t + r) * over_d;
+    const double by_tanh = (1.0 - r * r) * over_d * inverse_d * sech2;
+    const double by_ratio = sech2 * over_d * inverse_d * r;
+    return {value, 0.5 * (by_tanh * slab.thickness * z + by_ratio - value) * inverse_z * inverse_z,
+            by_tanh * z, -by_ratio / slab.film};
 }
 
 /// Calls visit(m, n, weight, z^2) for every mode but the uniform one.
@@ -219,13 +220,15 @@ std::vector<Dual<4>> pad_mean_rises_with_slopes(const Slab& slab,
             weight * r.value * flux_by_width + by_z_squared * from_m / slab.width;
         const double by_length =
             weight * r.value * flux_by_length + by_z_squared * from_n / slab.length;
+        const double by_thickness = weight * r.by_thickness * flux;
+        const double by_film = weight * r.by_film * flux;
         for (std::size_t i = 0; i < count; ++i) {
             const Dual<1>& mean = means[i].along[std::size_t(n)];
             rows[i].value += rise * mean.value;
             rows[i].by_width += by_width * mean.value;
             rows[i].by_length += by_length * mean.value + rise * mean.slope[0];
-            rows[i].by_thickness += weight * r.by_thickness * flux * mean.value;
-            rows[i].by_film += weight * r.by_film * flux * mean.value;
+            rows[i].by_thickness += by_thickness * mean.value;
+            rows[i].by_film += by_film * mean.value;
         }
     });
     close_row(std::size_t(open));

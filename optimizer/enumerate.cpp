@@ -2,6 +2,9 @@
 
 #include <algorithm>
 #include <atomic>
+#include <chrono>
+#include <cmath>
+#include <cstdlib>
 #include <exception>
 #include <limits>
 #include <mutex>
@@ -14,9 +17,8 @@ namespace {
 // Combinations are solved in blocks of this many, each from its neighbour's end; blocks start cold
 // and are what threads share out, so that the result does not depend on their number.
 constexpr std::size_t block = 8;
-constexpr std::size_t rough_starts = 2;  // of the problem's own, in the first pass
-constexpr double finalist_share = 0.3;   // of the contenders' margin
 constexpr double nearly_feasible = 0.05; // a violation the first model may be to blame for
+constexpr double rough_residual = 0.01;  // stationary enough for a violation far from zero
 
 std::vector<std::vector<int>> combinations(std::span<const IntegerRange> ranges) {
     std::vector<std::vector<int>> all{{}};
@@ -31,6 +33,22 @@ std::vector<std::vector<int>> combinations(std::span<const IntegerRange> ranges)
     }
     return all;
 }
+
+/// The time all solves share.
+class Deadline {
+public:
+    explicit Deadline(const Settings& settings) : time_(settings.time) {}
+
+    Settings left_of(Settings settings) const {
+        if (time_) settings.time = *time_ - (Clock::now() - begun_);
+        return settings;
+    }
+
+private:
+    using Clock = std::chrono::steady_clock;
+    std::optional<std::chrono::duration<double>> time_;
+    Clock::time_point begun_ = Clock::now();
+};
 
 /// Runs work(i) for i < count on `threads` threads; the first exception comes back to the caller.
 template <class Work>
@@ -82,14 +100,13 @@ std::vector<std::vector<double>> starts_after(const Problem& problem, const Outc
     auto starts = problem.starts();
     if (neighbour.keeps_limits() && neighbour.x.size() == problem.variables().size())
         starts.front() = neighbour.x;
-    starts.resize(std::min(starts.size(), rough_starts));
     return starts;
 }
 
 /// Enough to tell which combinations deserve the full treatment.
 Settings rough(Settings settings) {
     settings.recentres = 0;
-    settings.repairs = 0;
+    settings.repair = false;
     settings.residual_tolerance = std::numeric_limits<double>::infinity();
     settings.objective_tolerance = std::max(settings.objective_tolerance, 1e-5);
     settings.step_tolerance = std::max(settings.step_tolerance, 1e-4);
@@ -129,82 +146,176 @@ std::vector<std::size_t> contenders(const std::vector<Candidate>& candidates, co
 /// head.
 void solve_roughly(std::vector<Candidate>& candidates,
                    const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
-                   int threads) {
+                   const Deadline& deadline, int threads) {
     Settings once = rough(settings);
     const std::size_t blocks = (problems.size() + block - 1) / block;
     in_parallel(blocks, threads, [&](std::size_t b) {
-        Restarted cold(*problems[b * block], starts_after(*problems[b * block], {}));
-        candidates[b * block].outcome = minimise(cold, once);
+        candidates[b * block].outcome = minimise(*problems[b * block], deadline.left_of(once));
     });
     once.hopeless_above = best_objective(candidates) + settings.hopeless_margin;
     in_parallel(blocks, threads, [&](std::size_t b) {
         const std::size_t end = std::min(problems.size(), (b + 1) * block);
         for (std::size_t i = b * block + 1; i < end; ++i) {
             Restarted warm(*problems[i], starts_after(*problems[i], candidates[i - 1].outcome));
-            candidates[i].outcome = minimise(warm, once);
+            candidates[i].outcome = minimise(warm, deadline.left_of(once));
         }
     });
 }
 
-/// Where a combination ended, and where its neighbours did if they ended lower: it may have missed
-/// their valley.
-std::vector<std::vector<double>> starts_for(const std::vector<Candidate>& candidates,
-                                            std::size_t i) {
-    const Outcome& own = candidates[i].outcome;
-    std::vector<std::vector<double>> starts{own.x};
-    for (std::size_t j : {i - 1, i + 1}) {
-        if (j >= candidates.size()) continue;
-        const Outcome& neighbour = candidates[j].outcome;
-        const bool lower = !own.keeps_limits() || neighbour.objective < own.objective;
-        if (neighbour.keeps_limits() && lower && neighbour.x.size() == own.x.size())
-            starts.push_back(neighbour.x);
-    }
-    return starts;
+Outcome minimise_from(const std::vector<double>& x, Problem& problem, const Settings& settings) {
+    Restarted moved(problem, {x});
+    return minimise(moved, settings);
 }
 
-/// The full treatment for the listed combinations.
+/// Contenders in full, until the best is one of them.
 void refine(std::vector<Candidate>& candidates,
-            const std::vector<std::unique_ptr<Problem>>& problems,
-            const std::vector<std::size_t>& list, const Settings& settings, int threads) {
-    std::vector<std::vector<std::vector<double>>> starts;
-    for (std::size_t i : list)
-        starts.push_back(starts_for(candidates, i));
-    in_parallel(list.size(), threads, [&](std::size_t k) {
-        Candidate& c = candidates[list[k]];
-        Restarted resumed(*problems[list[k]], starts[k]);
-        const int before = c.outcome.evaluations;
-        c.outcome = minimise(resumed, settings);
+            const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
+            const Deadline& deadline, int threads) {
+    for (auto list = contenders(candidates, settings); !list.empty();
+         list = contenders(candidates, settings)) {
+        in_parallel(list.size(), threads, [&](std::size_t k) {
+            Candidate& c = candidates[list[k]];
+            const int before = c.outcome.evaluations;
+            c.outcome = minimise_from(c.outcome.x, *problems[list[k]], deadline.left_of(settings));
+            c.outcome.evaluations += before;
+            c.refined = true;
+        });
+    }
+}
+
+/// Seeks the least violation of a combination whose rough solve ended infeasible, without moving
+/// the model's centre; from there the objective, if that is worth it.
+void doubt(Candidate& c, Problem& problem, const Settings& settings) {
+    Settings seeking = settings;
+    seeking.residual_tolerance = rough_residual;
+    Restarted moved(problem, {c.outcome.x});
+    const Outcome least = least_violation(moved, seeking);
+    const int before = c.outcome.evaluations + least.evaluations;
+    if (least.worst_violation < nearly_feasible) {
+        c.outcome = minimise_from(least.x, problem, settings);
         c.outcome.evaluations += before;
-        c.refined = true;
+    } else {
+        c.outcome.verdict = least.verdict;
+        c.outcome.evaluations = before;
+    }
+}
+
+/// A rough solve is no ground for calling a combination infeasible.
+void doubt_all(std::vector<Candidate>& candidates,
+               const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
+               const Deadline& deadline, int threads) {
+    const Settings once = rough(settings);
+    in_parallel(candidates.size(), threads, [&](std::size_t i) {
+        Candidate& c = candidates[i];
+        if (!c.refined && problems[i]->constraint_count() > 0 && !problems[i]->variables().empty())
+            doubt(c, *problems[i], deadline.left_of(once));
     });
 }
 
-/// Those within a hair of the best, once more from the problem's last own start: another valley may
-/// lie a little lower.
-void try_finalists(std::vector<Candidate>& candidates,
-                   const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
-                   int threads) {
-    const double limit = best_objective(candidates) + finalist_share * settings.contender_margin;
+std::optional<std::size_t> best_of(const std::vector<Candidate>& candidates) {
+    std::optional<std::size_t> best;
+    for (std::size_t i = 0; i < candidates.size(); ++i) {
+        const Outcome& o = candidates[i].outcome;
+        if (o.keeps_limits() && (!best || o.objective < candidates[*best].outcome.objective))
+            best = i;
+    }
+    return best;
+}
+
+bool adjacent(const Candidate& a, const Candidate& b) {
+    int distance = 0;
+    for (std::size_t k = 0; k < a.integers.size(); ++k)
+        distance += std::abs(a.integers[k] - b.integers[k]);
+    return distance == 1;
+}
+
+std::vector<std::size_t> neighbours(const std::vector<Candidate>& candidates, std::size_t of) {
     std::vector<std::size_t> list;
     for (std::size_t i = 0; i < candidates.size(); ++i)
-        if (candidates[i].outcome.keeps_limits() && candidates[i].outcome.objective <= limit)
-            list.push_back(i);
+        if (adjacent(candidates[i], candidates[of])) list.push_back(i);
+    return list;
+}
+
+/// The neighbours of the best from where it ended: the rough solve may have led them elsewhere.
+/// True when one of them is the best now.
+bool step_on(std::vector<Candidate>& candidates,
+             const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
+             const Deadline& deadline, int threads) {
+    const auto best = best_of(candidates);
+    if (!best) return false;
+    const auto x = candidates[*best].outcome.x;
+    const auto list = neighbours(candidates, *best);
     in_parallel(list.size(), threads, [&](std::size_t k) {
         Candidate& c = candidates[list[k]];
-        Restarted other(*problems[list[k]], {problems[list[k]]->starts().back()});
-        Outcome outcome = minimise(other, settings);
-        outcome.evaluations += c.outcome.evaluations;
-        if (outcome.keeps_limits() && outcome.objective < c.outcome.objective)
+        if (problems[list[k]]->variables().size() != x.size()) return;
+        Outcome outcome = minimise_from(x, *problems[list[k]], deadline.left_of(settings));
+        const int before = c.outcome.evaluations;
+        if (outcome.keeps_limits() &&
+            (!c.outcome.keeps_limits() || outcome.objective < c.outcome.objective)) {
             c.outcome = std::move(outcome);
-        else
-            c.outcome.evaluations = outcome.evaluations;
+            c.outcome.evaluations += before;
+            c.refined = true;
+        } else {
+            c.outcome.evaluations += outcome.evaluations;
+        }
     });
+    return best_of(candidates) != best;
+}
+
+/// The best again from its own starts and from where its neighbours ended: a rough solve saw one
+/// valley of it only. True when that made it better.
+bool look_elsewhere(std::vector<Candidate>& candidates,
+                    const std::vector<std::unique_ptr<Problem>>& problems, const Settings& settings,
+                    const Deadline& deadline) {
+    const auto best = best_of(candidates);
+    if (!best) return false;
+    Candidate& c = candidates[*best];
+    auto starts = problems[*best]->starts();
+    for (std::size_t i : neighbours(candidates, *best))
+        if (candidates[i].outcome.keeps_limits() &&
+            candidates[i].outcome.x.size() == c.outcome.x.size())
+            starts.push_back(candidates[i].outcome.x);
+    Restarted again(*problems[*best], std::move(starts));
+    Outcome outcome = minimise(again, deadline.left_of(settings));
+    const bool better = outcome.keeps_limits() &&
+                        outcome.objective < c.outcome.objective - settings.objective_tolerance;
+    outcome.evaluations += c.outcome.evaluations;
+    if (better)
+        c.outcome = std::move(outcome);
+    else
+        c.outcome.evaluations = outcome.evaluations;
+    return better;
+}
+
+/// Contenders in full, then from the best along the integers as long as it gets better.
+void refine_and_walk(std::vector<Candidate>& candidates,
+                     const std::vector<std::unique_ptr<Problem>>& problems,
+                     const Settings& settings, const Deadline& deadline, int threads) {
+    do
+        refine(candidates, problems, settings, deadline, threads);
+    while (look_elsewhere(candidates, problems, settings, deadline) ||
+           step_on(candidates, problems, settings, deadline, threads));
+}
+
+bool cut_short(const Candidate& c) {
+    return c.outcome.stop == Stop::time || c.outcome.stop == Stop::asked;
+}
+
+Verdict verdict_of(const MixedOutcome& mixed) {
+    const auto& all = mixed.candidates;
+    const bool whole = std::none_of(all.begin(), all.end(), cut_short);
+    if (mixed.best) return whole ? all[*mixed.best].outcome.verdict : Verdict::feasible;
+    const bool settled = std::all_of(all.begin(), all.end(), [](const Candidate& c) {
+        return c.outcome.verdict == Verdict::infeasible;
+    });
+    return settled ? Verdict::infeasible : Verdict::limit_reached;
 }
 
 } // namespace
 
 MixedOutcome enumerate(std::span<const IntegerRange> ranges, const Factory& factory,
                        const Settings& settings, int threads) {
+    const Deadline deadline(settings);
     MixedOutcome mixed;
     std::vector<std::unique_ptr<Problem>> problems;
     for (auto& integers : combinations(ranges))
@@ -212,26 +323,14 @@ MixedOutcome enumerate(std::span<const IntegerRange> ranges, const Factory& fact
             problems.push_back(std::move(problem));
             mixed.candidates.push_back({std::move(integers), {}, false});
         }
-
-    solve_roughly(mixed.candidates, problems, settings, threads);
-
-    for (auto list = contenders(mixed.candidates, settings); !list.empty();
-         list = contenders(mixed.candidates, settings))
-        refine(mixed.candidates, problems, list, settings, threads);
-    try_finalists(mixed.candidates, problems, settings, threads);
-
-    for (std::size_t i = 0; i < mixed.candidates.size(); ++i) {
-        const Outcome& o = mixed.candidates[i].outcome;
-        if (!o.keeps_limits()) continue;
-        if (!mixed.best || o.objective < mixed.candidates[*mixed.best].outcome.objective)
-            mixed.best = i;
+    solve_roughly(mixed.candidates, problems, settings, deadline, threads);
+    refine_and_walk(mixed.candidates, problems, settings, deadline, threads);
+    if (!best_of(mixed.candidates)) {
+        doubt_all(mixed.candidates, problems, settings, deadline, threads);
+        refine_and_walk(mixed.candidates, problems, settings, deadline, threads);
     }
-    if (mixed.best)
-        mixed.verdict = mixed.candidates[*mixed.best].outcome.verdict;
-    else if (std::any_of(mixed.candidates.begin(), mixed.candidates.end(), [](const Candidate& c) {
-                 return c.outcome.verdict == Verdict::limit_reached;
-             }))
-        mixed.verdict = Verdict::limit_reached;
+    mixed.best = best_of(mixed.candidates);
+    mixed.verdict = verdict_of(mixed);
     return mixed;
 }
 

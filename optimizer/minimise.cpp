@@ -1,381 +1,139 @@
 #include "optimizer/minimise.hpp"
 
-#include "optimizer/multipliers.hpp"
+#include "optimizer/descent.hpp"
+#include "optimizer/elastic.hpp"
+#include "optimizer/restore.hpp"
 #include "optimizer/scaling.hpp"
 #include <algorithm>
 #include <cmath>
-#include <exception>
-#include <limits>
-#include <nlopt.hpp>
 #include <random>
+#include <stdexcept>
 
 namespace finwright::optimizer {
 
 namespace {
 
-using Clock = std::chrono::steady_clock;
-using Point = std::vector<double>;
+using Points = std::vector<std::vector<double>>;
 
-constexpr double not_a_number_objective = 1e10; // what NLopt sees where the model has no number
-constexpr double not_a_number_constraint = 1e3;
-constexpr double within = 0.25; // share of the tolerance a solve may use; the rest is the model's
-constexpr int restarts = 3;
-constexpr double anywhere = 1e30;
-// How far from its centre a model is trusted, scaled: at first, and by what it shrinks from round
-// to round.
-constexpr double first_reach = 0.5, reach_shrinks = 0.8;
+constexpr int least_violation_starts = 2; // besides those the search began from
 
-/// The budget one call of minimise() has, shared by all its solves.
-struct Budget {
-    const Settings& settings;
-    Clock::time_point begun = Clock::now();
-
-    bool out_of_time() const { return settings.time && Clock::now() - begun > *settings.time; }
-    bool asked_to_stop() const { return settings.stop.stop_requested(); }
-    bool spent() const { return out_of_time() || asked_to_stop(); }
-};
-
-double largest(std::span<const double> constraints) {
-    double worst = 0.0;
-    for (double c : constraints)
-        worst = std::isfinite(c) ? std::max(worst, c) : not_a_number_constraint;
-    return worst;
+void check(const Variable& v) {
+    if (!std::isfinite(v.lower) || !std::isfinite(v.upper) || v.lower > v.upper)
+        throw std::invalid_argument(v.name + ": its bounds are crossed or not finite");
+    if (v.scale == Scale::logarithmic && v.lower <= 0.0)
+        throw std::invalid_argument(v.name + ": on a logarithmic scale its bounds are positive");
 }
 
-/// One NLopt run in scaled variables, with every evaluation watched.
-class Solve {
-public:
-    Solve(Problem& problem, const Settings& settings, const Budget& budget)
-        : problem_(problem), settings_(settings), budget_(budget),
-          tolerance_(within * settings.constraint_tolerance),
-          at_(problem.variables().size(), problem.constraint_count()),
-          x_(problem.variables().size()) {}
-
-    /// The best point seen: feasible with the least objective, or else the least violated.
-    /// Variables stay within `reach` of the start, scaled.
-    Point run(nlopt::algorithm algorithm, const Point& start, double reach = anywhere) {
-        best_.clear();
-        const auto& variables = problem_.variables();
-        const std::size_t n = variables.size();
-        Point u(n), low(n), high(n);
-        for (std::size_t j = 0; j < n; ++j) {
-            low[j] = to_scaled(variables[j], variables[j].lower);
-            high[j] = to_scaled(variables[j], variables[j].upper);
-            u[j] = std::clamp(to_scaled(variables[j], start[j]), low[j], high[j]);
-            low[j] = std::max(low[j], u[j] - reach);
-            high[j] = std::min(high[j], u[j] + reach);
-        }
-        nlopt::opt solver(algorithm, unsigned(n));
-        solver.set_lower_bounds(low);
-        solver.set_upper_bounds(high);
-        solver.set_min_objective(&Solve::objective, this);
-        if (problem_.constraint_count() > 0)
-            solver.add_inequality_mconstraint(&Solve::constraints, this,
-                                              Point(problem_.constraint_count(), tolerance_));
-        solver.set_ftol_abs(settings_.objective_tolerance);
-        solver.set_xtol_abs(settings_.step_tolerance);
-        solver.set_maxeval(settings_.evaluations);
-        solver_ = &solver;
-        seen_ = false;
-        double value = 0.0;
-        try {
-            ran_out_ = solver.optimize(u, value) == nlopt::MAXEVAL_REACHED;
-        } catch (const nlopt::roundoff_limited&) {
-            ran_out_ = false; // the record below holds the useful point
-        } catch (const nlopt::forced_stop&) {
-            ran_out_ = false;
-        } catch (const std::runtime_error&) {
-            ran_out_ = false; // a generic solver failure: judged like any other end
-        }
-        if (failure_) std::rethrow_exception(failure_);
-        if (!budget_.spent()) look(u.data());
-        return best_;
-    }
-
-    int evaluations() const { return evaluations_; }
-    bool ran_out() const { return ran_out_; }
-
-private:
-    /// Evaluates at scaled u once, however often NLopt asks.
-    void look(const double* u) {
-        const auto& variables = problem_.variables();
-        const std::size_t n = variables.size();
-        if (seen_ && std::equal(u, u + n, u_.begin())) return;
-        u_.assign(u, u + n);
-        seen_ = true;
-        for (std::size_t j = 0; j < n; ++j)
-            x_[j] = from_scaled(variables[j], u[j]);
-        ++evaluations_;
-        problem_.evaluate(x_, at_);
-        sound_ = std::isfinite(at_.objective) &&
-                 std::all_of(at_.constraints.begin(), at_.constraints.end(),
-                             [](double c) { return std::isfinite(c); });
-        if (sound_) keep_if_better();
-    }
-
-    void keep_if_better() {
-        const double violation = largest(at_.constraints);
-        const bool holds = violation <= tolerance_;
-        const bool held = !best_.empty() && best_violation_ <= tolerance_;
-        const bool better = best_.empty() ||
-                            (holds && (!held || at_.objective < best_objective_)) ||
-                            (!holds && !held && violation < best_violation_);
-        if (!better) return;
-        best_ = x_;
-        best_violation_ = violation;
-        best_objective_ = at_.objective;
-    }
-
-    template <class Fill>
-    void guarded(const double* u, Fill&& fill) {
-        if (failure_) return;
-        try {
-            if (budget_.spent()) {
-                solver_->force_stop();
-                return;
-            }
-            look(u);
-            fill();
-        } catch (...) {
-            failure_ = std::current_exception();
-            solver_->force_stop();
-        }
-    }
-
-    double slope(double derivative, std::size_t j) const {
-        const double s = derivative * stretch(problem_.variables()[j], x_[j]);
-        return std::isfinite(s) ? s : 0.0;
-    }
-
-    static double objective(unsigned n, const double* u, double* gradient, void* data) {
-        auto& self = *static_cast<Solve*>(data);
-        double value = not_a_number_objective;
-        if (gradient) std::fill_n(gradient, n, 0.0);
-        self.guarded(u, [&] {
-            if (!self.sound_) return;
-            value = self.at_.objective;
-            if (gradient)
-                for (std::size_t j = 0; j < n; ++j)
-                    gradient[j] = self.slope(self.at_.gradient[j], j);
-        });
-        return value;
-    }
-
-    static void constraints(unsigned m, double* values, unsigned n, const double* u,
-                            double* gradient, void* data) {
-        auto& self = *static_cast<Solve*>(data);
-        std::fill_n(values, m, not_a_number_constraint);
-        if (gradient) std::fill_n(gradient, std::size_t(m) * n, 0.0);
-        self.guarded(u, [&] {
-            if (!self.sound_) return;
-            std::copy(self.at_.constraints.begin(), self.at_.constraints.end(), values);
-            if (gradient)
-                for (std::size_t i = 0; i < m; ++i)
-                    for (std::size_t j = 0; j < n; ++j)
-                        gradient[i * n + j] = self.slope(self.at_.jacobian[i * n + j], j);
-        });
-    }
-
-    Problem& problem_;
-    const Settings& settings_;
-    const Budget& budget_;
-    const double tolerance_;
-    Evaluation at_;
-    Point x_, u_, best_;
-    double best_violation_ = 0.0, best_objective_ = 0.0;
-    bool seen_ = false, sound_ = false, ran_out_ = false;
-    int evaluations_ = 0;
-    std::exception_ptr failure_;
-    nlopt::opt* solver_ = nullptr;
-};
-
-/// A point with what judge() and the derivatives say of it.
-struct Judged {
-    Point x;
-    double objective = std::numeric_limits<double>::infinity();
-    Point constraints;
-    double violation = std::numeric_limits<double>::infinity();
-    Multipliers multipliers;
-
-    bool holds(const Settings& s) const { return violation <= s.constraint_tolerance; }
-};
-
-/// By the model as it is centred: what the solver itself works on.
-Judged by_model(Problem& problem, const Point& x) {
-    Evaluation at(problem.variables().size(), problem.constraint_count());
-    problem.evaluate(x, at);
-    Judged j;
-    j.x = x;
-    j.objective = at.objective;
-    j.violation = std::isfinite(at.objective) ? largest(at.constraints) : not_a_number_constraint;
-    j.multipliers = multipliers_at(problem.variables(), x, at);
-    j.constraints = std::move(at.constraints);
-    return j;
+void check(const std::vector<double>& start, const std::vector<Variable>& variables) {
+    if (start.size() != variables.size())
+        throw std::invalid_argument("a start has one number for each variable");
+    for (std::size_t j = 0; j < start.size(); ++j)
+        if (std::isnan(start[j]))
+            throw std::invalid_argument(variables[j].name + ": a start has no number for it");
 }
 
-/// As exactly as the problem can be judged.
-Judged exactly(Problem& problem, Judged j) {
-    problem.judge(j.x, j.objective, j.constraints);
-    j.violation = std::isfinite(j.objective) ? largest(j.constraints) : not_a_number_constraint;
-    return j;
-}
-
-bool better(const Judged& a, const Judged& b, const Settings& s) {
-    if (a.holds(s) != b.holds(s)) return a.holds(s);
-    return a.holds(s) ? a.objective < b.objective : a.violation < b.violation;
-}
-
-/// From one start: solve, restart while not stationary, and move the model's centre until it stands
-/// still.
-class Descent {
-public:
-    Descent(Problem& problem, const Settings& settings, const Budget& budget)
-        : problem_(problem), settings_(settings), solve_(problem, settings, budget),
-          budget_(budget) {}
-
-    Judged from(const Point& start) {
-        Judged best = settled(start, anywhere);
-        double reach = first_reach;
-        for (int round = 0; round < settings_.recentres && !budget_.spent(); ++round) {
-            if (!problem_.recentre(best.x)) break;
-            best =
-                settled(best.x, reach); // the model moved: what was judged before is judged again
-            reach *= reach_shrinks;
-        }
-        return best;
-    }
-
-    const Solve& solve() const { return solve_; }
-
-private:
-    Judged settled(const Point& start, double reach) {
-        Point x = solve_.run(nlopt::LD_SLSQP, start, reach);
-        if (x.empty()) x = start;
-        Judged best = by_model(problem_, x);
-        for (int again = 0; again < restarts && !budget_.spent() && !stationary(best); ++again) {
-            const Point next = solve_.run(nlopt::LD_SLSQP, best.x, reach);
-            if (next.empty()) break;
-            Judged j = by_model(problem_, next);
-            const bool gained =
-                better(j, best, settings_) || j.multipliers.residual < best.multipliers.residual;
-            if (better(j, best, settings_)) best = std::move(j);
-            if (!gained) break;
-        }
-        return best;
-    }
-
-    bool stationary(const Judged& j) const {
-        return j.holds(settings_) && j.multipliers.residual <= settings_.residual_tolerance;
-    }
-
-    Problem& problem_;
-    const Settings& settings_;
-    Solve solve_;
-    const Budget& budget_;
-};
-
-std::vector<Point> all_starts(const Problem& problem, const Settings& settings) {
-    std::vector<Point> starts = problem.starts();
-    std::mt19937_64 engine(settings.seed);
+Points random_points(const std::vector<Variable>& variables, int count, std::uint64_t seed) {
+    std::mt19937_64 engine(seed);
     std::uniform_real_distribution<double> share(0.0, 1.0);
-    for (int r = 0; r < settings.random_starts; ++r) {
-        Point x;
-        for (const Variable& v : problem.variables()) {
+    Points points;
+    for (int k = 0; k < count; ++k) {
+        points.emplace_back();
+        for (const Variable& v : variables) {
             const double low = to_scaled(v, v.lower), high = to_scaled(v, v.upper);
-            x.push_back(from_scaled(v, low + share(engine) * (high - low)));
+            points.back().push_back(from_scaled(v, low + share(engine) * (high - low)));
         }
-        starts.push_back(std::move(x));
     }
+    return points;
+}
+
+void append(Points& points, const Points& more) {
+    points.insert(points.end(), more.begin(), more.end());
+}
+
+Points all_starts(const Problem& problem, int random, std::uint64_t seed) {
+    const auto& variables = problem.variables();
+    for (const Variable& v : variables)
+        check(v);
+    Points starts = problem.starts();
+    for (auto& x : starts) {
+        check(x, variables);
+        for (std::size_t j = 0; j < x.size(); ++j)
+            x[j] = std::clamp(x[j], variables[j].lower, variables[j].upper);
+    }
+    append(starts, random_points(variables, random, seed));
+    if (starts.empty()) throw std::invalid_argument("a search needs a start");
     return starts;
 }
 
-/// min s subject to c_i(x) <= s: the largest constraint as small as it can be.
-class Elastic final : public Problem {
-public:
-    explicit Elastic(Problem& inner)
-        : inner_(inner), variables_(inner.variables()),
-          at_(inner.variables().size(), inner.constraint_count()) {
-        variables_.push_back({"largest constraint", -1e3, 1e3, Scale::linear});
-    }
+/// Half-way, scaled, from a point to random ones: wide bounds have corners where nothing is
+/// sensible.
+Points scattered_about(const std::vector<double>& x, const Problem& problem,
+                       const Settings& settings) {
+    const auto& variables = problem.variables();
+    Points points = random_points(variables, least_violation_starts, settings.seed);
+    for (auto& point : points)
+        for (std::size_t j = 0; j < x.size(); ++j)
+            point[j] = from_scaled(variables[j], 0.5 * (to_scaled(variables[j], x[j]) +
+                                                        to_scaled(variables[j], point[j])));
+    return points;
+}
 
-    const std::vector<Variable>& variables() const override { return variables_; }
-    std::size_t constraint_count() const override { return inner_.constraint_count(); }
-
-    void evaluate(std::span<const double> x, Evaluation& out) override {
-        const std::size_t n = x.size() - 1;
-        inner_.evaluate(x.first(n), at_);
-        out.objective = x[n];
-        std::fill(out.gradient.begin(), out.gradient.end(), 0.0);
-        out.gradient[n] = 1.0;
-        for (std::size_t i = 0; i < at_.constraints.size(); ++i) {
-            out.constraints[i] = at_.constraints[i] - x[n];
-            for (std::size_t j = 0; j < n; ++j)
-                out.jacobian[i * (n + 1) + j] = at_.jacobian[i * n + j];
-            out.jacobian[i * (n + 1) + n] = -1.0;
-        }
-    }
-
-    void judge(std::span<const double> x, double& objective,
-               std::span<double> constraints) override {
-        double unused = 0.0;
-        inner_.judge(x.first(x.size() - 1), unused, constraints);
-        objective = x.back();
-        for (double& c : constraints)
-            c -= x.back();
-    }
-
-    bool recentre(std::span<const double> x) override {
-        return inner_.recentre(x.first(x.size() - 1));
-    }
-
-    std::vector<Point> starts() const override {
-        std::vector<Point> list = inner_.starts();
-        for (Point& x : list)
-            x.push_back(largest_constraint(x));
-        return list;
-    }
-
-    double largest_constraint(std::span<const double> x) const {
-        double unused = 0.0;
-        Point constraints(inner_.constraint_count());
-        inner_.judge(x, unused, constraints);
-        return std::clamp(*std::max_element(constraints.begin(), constraints.end()), -1e3, 1e3);
-    }
-
-private:
-    Problem& inner_;
-    std::vector<Variable> variables_;
-    mutable Evaluation at_;
-};
-
-Judged best_of_starts(Problem& problem, Descent& descent, const Budget& budget,
-                      const Settings& settings) {
+/// From each start until time is up, or a feasible end lies above what is worth finding.
+Judged best_of(const Points& starts, Problem& problem, const Settings& settings, double enough,
+               Effort& effort) {
+    Descent descent(problem, settings, effort);
     Judged best;
-    for (const Point& start : all_starts(problem, settings)) {
+    for (const auto& start : starts) {
         Judged j = descent.from(start);
         if (best.x.empty() || better(j, best, settings)) best = std::move(j);
-        if (budget.spent()) break;
+        if (effort.spent()) break;
         if (best.holds(settings) && best.objective > settings.hopeless_above) break;
+        if (best.holds(settings) && best.objective < enough) break;
     }
     return best;
 }
 
-Stop stop_of(const Budget& budget, const Solve& solve) {
-    if (budget.asked_to_stop()) return Stop::asked;
-    if (budget.out_of_time()) return Stop::time;
-    return solve.ran_out() ? Stop::evaluations : Stop::converged;
+/// The least violated point found from these starts, as judge() has it, its objective the largest
+/// constraint. Only the end of all is re-centred on.
+Judged least_violated(const Points& starts, Problem& problem, const Settings& settings,
+                      Effort& effort) {
+    Elastic elastic(problem, starts);
+    Settings plain = settings;
+    plain.hopeless_above = std::numeric_limits<double>::infinity();
+    plain.recentres = 0;
+    Judged best = best_of(elastic.starts(), elastic, plain, 0.0, effort);
+    plain.recentres = settings.recentres;
+    if (settings.recentres > 0 && best.defined() && !effort.spent() && elastic.recentre(best.x))
+        best = Descent(elastic, plain, effort).from(best.x);
+    best.x.pop_back();
+    best.multipliers.lower.pop_back();
+    best.multipliers.upper.pop_back();
+    best = exactly(problem, std::move(best));
+    if (best.defined())
+        best.objective = *std::max_element(best.constraints.begin(), best.constraints.end());
+    return best;
 }
 
-Verdict verdict_of(const Judged& j, const Budget& budget) {
-    const Settings& s = budget.settings;
-    if (!j.holds(s)) return budget.spent() ? Verdict::limit_reached : Verdict::infeasible;
-    return j.multipliers.residual <= s.residual_tolerance ? Verdict::optimal : Verdict::feasible;
+/// Whether the point is feasible, or what the effort so far tells if it is not.
+Verdict verdict_of(const Judged& j, bool least_violation_settled, const Settings& settings,
+                   const Effort& effort) {
+    if (j.stationary(settings)) return Verdict::optimal;
+    if (j.holds(settings)) return Verdict::feasible;
+    return least_violation_settled && !effort.spent() ? Verdict::infeasible
+                                                      : Verdict::limit_reached;
 }
 
-Outcome outcome_of(Judged j, const Budget& budget, const Solve& solve) {
+Stop stop_of(Verdict verdict, const Effort& effort) {
+    if (effort.asked_to_stop()) return Stop::asked;
+    if (effort.out_of_time()) return Stop::time;
+    return effort.a_solve_ran_out && verdict != Verdict::optimal ? Stop::evaluations
+                                                                 : Stop::converged;
+}
+
+Outcome outcome_of(Judged j, Verdict verdict, const Effort& effort) {
     Outcome out;
-    out.verdict = verdict_of(j, budget);
-    out.stop = stop_of(budget, solve);
+    out.verdict = verdict;
+    out.stop = stop_of(verdict, effort);
     out.worst_violation = j.violation;
     out.objective = j.objective;
     out.kkt_residual = j.multipliers.residual;
@@ -384,66 +142,109 @@ Outcome outcome_of(Judged j, const Budget& budget, const Solve& solve) {
     out.multipliers = std::move(j.multipliers.constraints);
     out.lower_multipliers = std::move(j.multipliers.lower);
     out.upper_multipliers = std::move(j.multipliers.upper);
-    out.evaluations = solve.evaluations();
+    out.evaluations = effort.evaluations;
+    out.undefined = effort.undefined;
     return out;
 }
 
-/// From a point that keeps the limits least badly, once more towards the objective.
-Judged repaired(Problem& problem, Descent& descent, Judged best, const Settings& settings) {
-    const Outcome least = least_violation(problem, settings);
-    if (least.x.empty()) return best;
-    const Point x(least.x.begin(), least.x.end());
-    Judged at = by_model(problem, x);
-    if (better(at, best, settings)) best = at;
-    if (!at.holds(settings)) return best;
-    Judged again = descent.from(x);
-    return better(again, best, settings) ? again : best;
-}
+/// One call of minimise(), stage by stage.
+class Search {
+public:
+    Search(Problem& problem, const Settings& settings)
+        : problem_(problem), settings_(settings), effort_(settings),
+          starts_(all_starts(problem, settings.random_starts, settings.seed)) {}
 
-/// A derivative-free last attempt where a feasible point is not stationary by its derivatives.
-Judged without_derivatives(Problem& problem, Solve& solve, Judged best, const Settings& settings) {
-    const Point x = solve.run(nlopt::LN_COBYLA, best.x);
-    if (x.empty()) return best;
-    Judged j = by_model(problem, x);
-    return better(j, best, settings) ? j : best;
-}
+    Outcome run() {
+        constexpr double never = -std::numeric_limits<double>::infinity();
+        best_ = exactly(problem_, best_of(starts_, problem_, settings_, never, effort_));
+        if (settings_.repair) find_feasible();
+        if (best_.holds(settings_) && !best_.stationary(settings_) && !effort_.spent())
+            try_without_derivatives();
+        if (settings_.repair && best_.holds(settings_)) keep_strictly();
+        const Verdict verdict = verdict_of(best_, least_violation_settled_, settings_, effort_);
+        return outcome_of(std::move(best_), verdict, effort_);
+    }
+
+private:
+    void find_feasible() {
+        if (best_.holds(settings_) || effort_.spent()) return;
+        centre_on_best();
+        continue_from(restored(problem_, best_, settings_, effort_));
+        if (best_.holds(settings_) || effort_.spent() || best_.constraints.empty()) return;
+        Points starts{best_.x};
+        const Points more =
+            all_starts(problem_, settings_.random_starts + least_violation_starts, settings_.seed);
+        starts.insert(starts.end(), more.begin(), more.end());
+        const Judged least = least_violated(starts, problem_, settings_, effort_);
+        least_violation_settled_ = least.multipliers.residual <= settings_.residual_tolerance;
+        if (least.holds(settings_))
+            continue_from(exactly(problem_, by_model(problem_, least.x, effort_)));
+        else if (better(least, best_, settings_))
+            take(exactly(problem_, by_model(problem_, least.x, effort_)));
+    }
+
+    /// From a point that may be feasible, once more towards the objective.
+    void continue_from(Judged at) {
+        take(at);
+        if (!at.holds(settings_) || effort_.spent()) return;
+        Descent descent(problem_, settings_, effort_);
+        take(exactly(problem_, descent.from(at.x)));
+    }
+
+    /// Another start may have moved the model away.
+    void centre_on_best() {
+        if (settings_.recentres > 0 && best_.defined()) problem_.recentre(best_.x);
+    }
+
+    /// Where a feasible point is not stationary by its derivatives.
+    void try_without_derivatives() {
+        centre_on_best();
+        Solve solve(problem_, settings_, effort_);
+        const auto x = solve.run(Method::linear_approximations, best_.x);
+        if (!x.empty()) take(exactly(problem_, by_model(problem_, x, effort_)));
+    }
+
+    void keep_strictly() {
+        if (best_.violation <= settings_.strict_tolerance || effort_.spent()) return;
+        centre_on_best();
+        Judged strict = restored(problem_, best_, settings_, effort_);
+        if (strict.violation < best_.violation) best_ = std::move(strict);
+    }
+
+    void take(Judged j) {
+        if (better(j, best_, settings_)) best_ = std::move(j);
+    }
+
+    Problem& problem_;
+    const Settings& settings_;
+    Effort effort_;
+    Points starts_;
+    Judged best_;
+    bool least_violation_settled_ = false;
+};
 
 } // namespace
 
 Outcome minimise(Problem& problem, const Settings& settings) {
-    const Budget budget{settings};
-    if (problem.variables().empty()) {
-        Solve unused(problem, settings, budget);
-        return outcome_of(exactly(problem, by_model(problem, {})), budget, unused);
-    }
-    Descent descent(problem, settings, budget);
-    Judged best = best_of_starts(problem, descent, budget, settings);
-    if (!best.holds(settings) && settings.repairs > 0 && !budget.spent())
-        best = repaired(problem, descent, std::move(best), settings);
-    if (best.holds(settings) && best.multipliers.residual > settings.residual_tolerance &&
-        !budget.spent()) {
-        Solve fallback(problem, settings, budget);
-        best = without_derivatives(problem, fallback, std::move(best), settings);
-    }
-    return outcome_of(exactly(problem, std::move(best)), budget, descent.solve());
+    if (!problem.variables().empty()) return Search(problem, settings).run();
+    Effort effort(settings);
+    Judged only = exactly(problem, by_model(problem, {}, effort));
+    const Verdict verdict = verdict_of(only, true, settings, effort);
+    return outcome_of(std::move(only), verdict, effort);
 }
 
 Outcome least_violation(Problem& problem, const Settings& settings) {
-    Elastic elastic(problem);
-    const Budget budget{settings};
-    Descent descent(elastic, settings, budget);
-    Judged best = best_of_starts(elastic, descent, budget, settings);
-    Outcome out = outcome_of(std::move(best), budget, descent.solve());
-    out.x.pop_back();
-    out.lower_multipliers.pop_back();
-    out.upper_multipliers.pop_back();
-    problem.judge(out.x, out.objective, out.constraints);
-    out.objective = *std::max_element(out.constraints.begin(), out.constraints.end());
-    out.worst_violation = std::max(0.0, out.objective);
-    if (out.verdict != Verdict::limit_reached)
-        out.verdict = out.objective <= settings.constraint_tolerance ? Verdict::feasible
-                                                                     : Verdict::infeasible;
-    return out;
+    if (problem.constraint_count() == 0)
+        throw std::invalid_argument("the least violation of a problem without constraints");
+    Effort effort(settings);
+    Points starts = all_starts(problem, settings.random_starts, settings.seed);
+    append(starts, scattered_about(starts.front(), problem, settings));
+    Judged least = least_violated(starts, problem, settings, effort);
+    Verdict verdict = Verdict::feasible;
+    if (!least.holds(settings))
+        verdict = verdict_of(least, least.multipliers.residual <= settings.residual_tolerance,
+                             settings, effort);
+    return outcome_of(std::move(least), verdict, effort);
 }
 
 } // namespace finwright::optimizer

@@ -39,8 +39,10 @@ public:
     virtual const std::vector<Variable>& variables() const = 0;
     virtual std::size_t constraint_count() const = 0;
 
-    /// Fills `out`, which has the right sizes. May throw: the exception ends the search and arrives
-    /// whole.
+    /// Fills `out`, which has the right sizes. Where the model has no value it says so with a
+    /// number that is not finite, or throws std::domain_error: the search walks around such points
+    /// and counts them. Any other exception ends the search and arrives whole. The same holds for
+    /// judge().
     virtual void evaluate(std::span<const double> x, Evaluation& out) = 0;
 
     /// Objective and constraints as exactly as the model knows them; verdicts rest on these.

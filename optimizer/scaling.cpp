@@ -6,7 +6,8 @@
 namespace finwright::optimizer {
 
 double to_scaled(const Variable& v, double x) {
-    return v.scale == Scale::logarithmic ? std::log(x) : (x - v.lower) / (v.upper - v.lower);
+    if (v.scale == Scale::logarithmic) return std::log(x);
+    return v.upper > v.lower ? (x - v.lower) / (v.upper - v.lower) : 0.0;
 }
 
 double from_scaled(const Variable& v, double u) {

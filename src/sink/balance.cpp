@@ -30,11 +30,12 @@ double balanced_rise(const Model& model, double power, double guess) {
         return std::log(model.heat(model.view(rise)).total() / power);
     };
     double x0 = std::log(guess), f0 = log_heat(x0);
-    double x1 = x0 - f0 / 1.2, f1 = log_heat(x1);
+    double x1 = x0 - f0 / Model::heat_exponent, f1 = log_heat(x1);
     for (int step = 0; step < balance_steps; ++step) {
         if (std::abs(f1) < balance_tolerance || x1 == x0) return std::exp(x1);
         const double secant = (f1 - f0) / (x1 - x0);
-        const double slope = std::isfinite(secant) ? std::clamp(secant, 0.5, 2.0) : 1.2;
+        const double slope =
+            std::isfinite(secant) ? std::clamp(secant, 0.5, 2.0) : Model::heat_exponent;
         x0 = x1;
         f0 = f1;
         x1 -= f1 / slope;

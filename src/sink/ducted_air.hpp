@@ -40,6 +40,9 @@ T channel_velocity(const Geometry<T>& g, const Surroundings& surroundings);
 template <class T>
 class DuctedSink {
 public:
+    /// About d ln(heat)/d ln(rise), where a search for the balance begins.
+    static constexpr double heat_exponent = 1.0;
+
     DuctedSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                const Material& material);
 

@@ -41,6 +41,9 @@ struct StillAirView {
 template <class T>
 class StillAirSink {
 public:
+    /// About d ln(heat)/d ln(rise), where a search for the balance begins.
+    static constexpr double heat_exponent = 1.25;
+
     StillAirSink(const Geometry<T>& geometry, const Surroundings& surroundings,
                  const Material& material, ChannelLaw law);
 

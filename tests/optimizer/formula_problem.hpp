@@ -8,9 +8,9 @@
 
 namespace finwright::tests {
 
-/// Value and gradient over up to eight variables.
+/// Value and gradient over up to ten variables.
 struct Num {
-    static constexpr std::size_t most = 8;
+    static constexpr std::size_t most = 10;
     double v = 0.0;
     double d[most] = {};
 
@@ -104,7 +104,7 @@ inline std::vector<optimizer::Variable> box(std::size_t n, double lower, double 
                                             optimizer::Scale scale = optimizer::Scale::linear) {
     std::vector<optimizer::Variable> variables;
     for (std::size_t i = 0; i < n; ++i)
-        variables.push_back({"x" + std::to_string(i + 1), lower, upper, scale});
+        variables.push_back({std::to_string(i + 1), lower, upper, scale});
     return variables;
 }
 

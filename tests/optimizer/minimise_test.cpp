@@ -3,6 +3,7 @@
 #include "optimizer/minimise.hpp"
 #include "tests/near.hpp"
 #include "tests/optimizer/formula_problem.hpp"
+#include <cmath>
 #include <stdexcept>
 
 using namespace finwright::optimizer;
@@ -36,6 +37,81 @@ TEST_CASE("a region without numbers is walked around") {
     CHECK(outcome.x[0] == near(std::pow(2.0, 2.0 / 3.0), 1e-4)); // d/dx = 0 at 2^(2/3)
 }
 
+TEST_CASE("std::domain_error marks a point without values: walked around and counted") {
+    FormulaProblem problem(box(1, -1.0, 4.0),
+                           [](X x) {
+                               if (x[0].v < 0.5) throw std::domain_error("below a half");
+                               return x[0] * x[0] - x[0] * 2.0;
+                           },
+                           {});
+    const Outcome outcome = minimise(problem.from({{3.9}, {-0.5}}), Settings{});
+    CHECK(outcome.keeps_limits());
+    CHECK(outcome.x[0] == near(1.0, 1e-4));
+    CHECK(outcome.undefined > 0);
+    CHECK(outcome.undefined < outcome.evaluations);
+}
+
+TEST_CASE("a problem without values anywhere is not called infeasible, nor anything better") {
+    const auto nowhere = [](X) -> Num { throw std::domain_error("nowhere"); };
+    FormulaProblem free(box(2, 0.0, 1.0), nowhere, {});
+    const Outcome outcome = minimise(free, Settings{});
+    CHECK(outcome.verdict == Verdict::limit_reached);
+    CHECK(outcome.undefined == outcome.evaluations);
+    FormulaProblem limited(box(2, 0.0, 1.0), nowhere, {nowhere});
+    CHECK(minimise(limited, Settings{}).verdict == Verdict::limit_reached);
+}
+
+TEST_CASE("variables and starts that make no sense are refused by name") {
+    const auto sum = [](X x) { return x[0]; };
+    const auto refused = [&](Variable v, std::vector<double> start, const char* why) {
+        FormulaProblem problem({v}, sum, {});
+        CHECK_THROWS_WITH_AS(minimise(problem.from({start}), Settings{}), why,
+                             std::invalid_argument);
+    };
+    refused({"a", 2.0, 1.0}, {1.5}, "a: its bounds are crossed or not finite");
+    refused({"b", 0.0, 1.0, Scale::logarithmic}, {0.5},
+            "b: on a logarithmic scale its bounds are positive");
+    refused({"c", 0.0, 1.0}, {std::nan("")}, "c: a start has no number for it");
+    refused({"d", 0.0, 1.0}, {0.5, 0.5}, "a start has one number for each variable");
+}
+
+TEST_CASE("a start outside the bounds and a variable that cannot move are fine") {
+    for (Scale scale : {Scale::linear, Scale::logarithmic}) {
+        FormulaProblem problem({{"free", 1.0, 9.0, scale}, {"held", 2.0, 2.0, scale}},
+                               [](X x) { return x[0] * x[1]; },
+                               {[](X x) { return 6.0 - x[0] * x[1]; }});
+        const Outcome outcome = minimise(problem.from({{50.0, -7.0}}), Settings{});
+        CHECK(outcome.verdict == Verdict::optimal);
+        CHECK(outcome.x[0] == near(3.0, 1e-8));
+        CHECK(outcome.x[1] == 2.0);
+    }
+}
+
+TEST_CASE("an answer keeps its limits to 1e-9 even where the search may break them by 1e-3") {
+    Settings loose;
+    loose.constraint_tolerance = 1e-3;
+    FormulaProblem problem(box(2, 0.1, 10.0, Scale::logarithmic),
+                           [](X x) { return x[0] + 2.0 * x[1]; },
+                           {[](X x) { return 4.0 - x[0] * x[1]; }, [](X x) { return x[0] - 2.0; }});
+    const Outcome outcome = minimise(problem, loose);
+    CHECK(outcome.verdict == Verdict::optimal);
+    CHECK(outcome.worst_violation <= 1e-9);
+    CHECK(outcome.objective == near(6.0, 1e-6)); // x = (2, 2), by hand
+}
+
+TEST_CASE("too few evaluations are said so") {
+    Settings few;
+    few.evaluations = 2;
+    few.repair = false;
+    FormulaProblem problem(
+        box(2, -5.0, 5.0),
+        [](X x) { return 100.0 * pow(x[1] - x[0] * x[0], 2.0) + pow(1.0 - x[0], 2.0); },
+        {[](X x) { return 3.0 - x[0] - x[1]; }});
+    const Outcome outcome = minimise(problem.from({{-1.2, 1.0}}), few);
+    CHECK(outcome.verdict != Verdict::optimal);
+    CHECK(outcome.stop == Stop::evaluations);
+}
+
 TEST_CASE("an exception in the problem arrives whole") {
     FormulaProblem problem(box(2, 0.0, 1.0),
                            [](X) -> Num { throw std::runtime_error("the furnace is out"); }, {});
@@ -53,6 +129,24 @@ TEST_CASE("a request to stop and a time limit end the search and say so") {
     Settings late;
     late.time = std::chrono::duration<double>(-1.0);
     CHECK(minimise(problem, late).stop == Stop::time);
+}
+
+TEST_CASE("a time limit holds for the whole call, its search for the least violation included") {
+    using Clock = std::chrono::steady_clock;
+    FormulaProblem slow(box(3, 0.0, 1.0), [](X x) { return x[0] + x[1] + x[2]; }, {[](X x) {
+                            const auto until = Clock::now() + std::chrono::milliseconds(2);
+                            while (Clock::now() < until) {
+                            }
+                            return 9.0 - x[0] * x[1] - sin(20.0 * x[2]);
+                        }});
+    Settings settings;
+    settings.random_starts = 1000;
+    settings.time = std::chrono::milliseconds(60);
+    const auto begun = Clock::now();
+    const Outcome outcome = minimise(slow, settings);
+    CHECK(Clock::now() - begun < std::chrono::seconds(1));
+    CHECK(outcome.stop == Stop::time);
+    CHECK(outcome.verdict == Verdict::limit_reached);
 }
 
 TEST_CASE("the same seed gives the same digits") {

@@ -1,4 +1,4 @@
-// Multipliers against what easing a limit really buys.
+// Multipliers against what easing a limit really buys, and the residual away from a minimum.
 #include "optimizer/minimise.hpp"
 #include "optimizer/multipliers.hpp"
 #include "tests/near.hpp"
@@ -12,7 +12,7 @@ using X = std::span<const Num>;
 
 namespace {
 
-/// A small problem of our own with a movable nonlinear limit and bound.
+/// A problem of our own with one active nonlinear limit, eased by `first`, and a lower bound.
 Outcome solved(double first, double lower) {
     FormulaProblem problem(
         {{"a", lower, 9.0, Scale::logarithmic}, {"b", 0.1, 9.0, Scale::logarithmic}},
