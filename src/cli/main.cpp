@@ -4,6 +4,7 @@
 #include "src/cli/exit_code.hpp"
 #include "src/cli/whole_file.hpp"
 #include "src/job/input_error.hpp"
+#include "src/job/nearest_word.hpp"
 #include "src/sheets/laws_page.hpp"
 #include <CLI/CLI.hpp>
 #include <cstdio>
@@ -23,6 +24,15 @@ CLI::App* job_command(CLI::App& app, const char* name, const char* what, cli::Jo
 void add_json(CLI::App* sub, cli::JobCommand& command) {
     sub->add_option("--json", command.json_file, "write the whole result to FILE, in SI")
         ->type_name("FILE");
+}
+
+/// The command meant, where the first word names none.
+std::string command_meant(const CLI::App& app, int argc, char** argv) {
+    if (argc < 2 || argv[1][0] == '-') return "";
+    std::vector<std::string> names;
+    for (const CLI::App* sub : app.get_subcommands({}))
+        names.push_back(sub->get_name());
+    return job::nearest_word(argv[1], names);
 }
 
 int guarded(const std::function<int()>& run) {
@@ -70,6 +80,9 @@ int main(int argc, char** argv) {
     try {
         app.parse(argc, argv);
     } catch (const CLI::ParseError& error) {
+        const std::string meant = command_meant(app, argc, argv);
+        if (!meant.empty() && meant != argv[1])
+            fmt::print(stderr, "finwright: no command {}; did you mean {}?\n", argv[1], meant);
         return app.exit(error) == 0 ? cli::done : cli::wrong_command_line;
     }
     return guarded([&] {

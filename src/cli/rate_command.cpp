@@ -11,7 +11,7 @@ namespace finwright::cli {
 
 int rate_command(const JobCommand& command) {
     if (command.json_file) refuse_same_file(*command.json_file, command.job_file);
-    const job::Job job = job::read_job(command.job_file);
+    const job::Job job = job::read_rated_job(command.job_file);
     const sink::Rating rating = sink::rate(sizing::stated_sink(job), sink::duty_of(job));
     if (command.json_file) write_whole(*command.json_file, sheets::results_json(job, rating));
     fmt::print("{}", sheets::rate_page(job, rating));

@@ -30,13 +30,16 @@ Place place_in(const Document& d, const Part& part, std::string_view key) {
     return part.place;
 }
 
-void check_goals(const Job& job, const Document& d) {
+void check_target(const Job& job, const Document& d) {
     const bool any_junction = std::any_of(job.parts.begin(), job.parts.end(), [](const Part& p) {
         return p.junction_limit.has_value();
     });
     if (!any_junction && !job.limits.sink_resistance && job.sink.aim != Aim::resistance)
         d.fail(place_in(d, "limits", ""), "nothing says how cool the parts must stay",
                "give a part its junction_limit, or limits its sink_resistance");
+}
+
+void check_pressure(const Job& job, const Document& d) {
     const bool still = std::holds_alternative<StillAir>(job.air.state);
     if (still && job.limits.pressure_drop)
         d.fail(place_in(d, "limits", "pressure_drop"), "still air has no pressure drop to limit",
@@ -226,9 +229,9 @@ void check_overlap(const Document& d, const Job& job, double width, double lengt
         }
 }
 
-void check_pads(const Job& job, const Document& d) {
-    const auto width = widest(job.sink.width, job.limits.space.width);
-    const auto length = widest(job.sink.length, job.limits.space.length);
+void check_pads(const Job& job, const Document& d, const Space& space) {
+    const auto width = widest(job.sink.width, space.width);
+    const auto length = widest(job.sink.length, space.length);
     double row = 0.0;
     for (const Part& part : job.parts) {
         check_edge(d, part, part.across, part.pad_across, width, "across", "width");
@@ -246,12 +249,19 @@ void check_pads(const Job& job, const Document& d) {
 
 } // namespace
 
-void check_job(const Job& job, const Document& document) {
-    check_goals(job, document);
+void check_sized_job(const Job& job, const Document& document) {
+    check_target(job, document);
+    check_pressure(job, document);
     check_budgets(job, document);
     check_dimensions(job, document);
     check_width_sum(job, document);
-    check_pads(job, document);
+    check_pads(job, document, job.limits.space);
+}
+
+void check_rated_job(const Job& job, const Document& document) {
+    check_pressure(job, document);
+    check_width_sum(job, document);
+    check_pads(job, document, {});
 }
 
 } // namespace finwright::job

@@ -7,7 +7,10 @@
 
 namespace finwright::job {
 
-/// Throws InputError at the first contradiction.
-void check_job(const Job& job, const Document& document);
+/// For a sink still to be found. Throws InputError at the first contradiction.
+void check_sized_job(const Job& job, const Document& document);
+
+/// For a sink that is stated: what it breaks of limits, space and shop is for its rating to say.
+void check_rated_job(const Job& job, const Document& document);
 
 } // namespace finwright::job

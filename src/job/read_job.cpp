@@ -424,10 +424,7 @@ void read_shop(const Document& d, const TreeNode& node, Sink& sink) {
     step("length", sink.steps.length);
 }
 
-} // namespace
-
-Job read_job_text(std::string text, std::string file_name) {
-    const Document d = parse_document(std::move(file_name), std::move(text));
+Job read_document(const Document& d) {
     Mapping m(d, d.root, "the job file");
     m.only({"job", "air", "parts", "limits", "sink", "shop"});
     Job job;
@@ -439,12 +436,27 @@ Job read_job_text(std::string text, std::string file_name) {
     job.limits = read_limits(d, m.required("limits"));
     job.sink = read_sink(d, m.required("sink"));
     if (const TreeNode* shop = m.optional("shop")) read_shop(d, *shop, job.sink);
-    check_job(job, d);
+    return job;
+}
+
+} // namespace
+
+Job read_job_text(std::string text, std::string file_name) {
+    const Document d = parse_document(std::move(file_name), std::move(text));
+    Job job = read_document(d);
+    check_sized_job(job, d);
     return job;
 }
 
 Job read_job(const std::filesystem::path& path) {
     return read_job_text(read_text_file(path), path.string());
+}
+
+Job read_rated_job(const std::filesystem::path& path) {
+    const Document d = parse_document(path.string(), read_text_file(path));
+    Job job = read_document(d);
+    check_rated_job(job, d);
+    return job;
 }
 
 } // namespace finwright::job

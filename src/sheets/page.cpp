@@ -81,7 +81,7 @@ std::string budget_block(const Rating& rating, std::size_t from, std::size_t to)
     });
     row("base under the pad", "°C",
         [&](std::size_t i) { return celsius(parts[i].pad_temperature); });
-    row("  spreading", "K",
+    row("  pad over mean base", "K",
         [&](std::size_t i) { return fixed(parts[i].pad_temperature - air - rating.base_rise, 1); });
     row("base, mean", "°C", [&](std::size_t) { return celsius(air + rating.base_rise); });
     row("  base to air", "K", [&](std::size_t) { return fixed(rating.base_rise, 1); });
@@ -270,12 +270,13 @@ std::string standing(const Job& job, const Rating& rating) {
             nearest = &part;
     if (nearest) {
         const double left = *nearest->headroom();
-        text = fmt::format("{} is nearest to what it is allowed: {} K {}.", nearest->name,
-                           fixed(std::abs(left), 1), left < 0.0 ? "TOO HOT" : "left");
+        text = paragraph(fmt::format("{} is nearest to what it is allowed: {} K {}.",
+                                     nearest->name, fixed(std::abs(left), 1),
+                                     left < 0.0 ? "TOO HOT" : "left"));
     }
     for (const std::string& breach : sizing::broken_limits(job, rating))
-        text += fmt::format("{}LIMIT BROKEN: {}.", text.empty() ? "" : " ", breach);
-    return text.empty() ? text : paragraph(text);
+        text += wrapped(breach, page_width, "  LIMIT BROKEN: ", "    ");
+    return text;
 }
 
 std::string caution_list(const Job& job, const Rating& rating) {

@@ -36,6 +36,13 @@ std::vector<std::string> broken_limits(const job::Job& job, const sink::Rating& 
     const job::Limits& limits = job.limits;
     const job::Process& shop = job.sink.process;
     Breaches b;
+    const auto within = [&](const char* name, double value, const job::Range& range) {
+        b.at_most(name, value, range.to, 1e3, " mm");
+        if (range.from) b.at_least(name, value, *range.from, 1e3, " mm");
+    };
+    within("width", g.width(), job.sink.width);
+    within("gap", g.gap, job.sink.gap);
+    within("fin thickness", g.tip_thickness(), job.sink.fin_thickness);
     b.at_most("width", g.width(), limits.space.width, 1e3, " mm");
     b.at_most("overall height", g.overall_height(), limits.space.height, 1e3, " mm");
     b.at_most("length", g.length, limits.space.length, 1e3, " mm");

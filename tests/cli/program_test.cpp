@@ -60,6 +60,25 @@ TEST_CASE("exit codes: 0 done, 2 command line, 3 job file, 4 impossible, 5 unwri
               .exit_code == 5);
 }
 
+TEST_CASE("a mistyped command is answered with the one meant") {
+    CHECK(run_program("sise configs/jobs/pump_controller.yaml").errors.find("did you mean size?") !=
+          std::string::npos);
+    CHECK(run_program("polish").errors.find("did you mean") == std::string::npos);
+}
+
+TEST_CASE("rate: a stated sink outside its space, its shop and its budget is rated, and told so") {
+    const Folder folder;
+    auto text = text_of(std::string(SOURCE_DIR) + "/configs/jobs/drawer_sink.yaml");
+    text = replaced(text, "fin_height: 27 mm", "fin_height: 70 mm");
+    text = replaced(text, "fin_thickness: 1.8 mm", "fin_thickness: 0.5 mm");
+    const auto run = run_program("rate " + folder.file("a.yaml", text));
+    CHECK(run.exit_code == 0);
+    CHECK(run.output.find("LIMIT BROKEN: overall height 74.5 mm is") != std::string::npos);
+    CHECK(run.output.find("LIMIT BROKEN: fin thickness 0.5 mm is less than 1.5 mm") !=
+          std::string::npos);
+    CHECK(run_program("size " + folder.file("b.yaml", text)).exit_code == 3);
+}
+
 TEST_CASE("errors go to standard error, with place, excerpt, caret and suggestion") {
     const Folder folder;
     const auto bad = folder.file("a.yaml", replaced(demo(), "power: 16 W", "power: 16"));
