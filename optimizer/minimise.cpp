@@ -184,7 +184,7 @@ private:
     }
 
     /// From a point that may be feasible, once more towards the objective.
-    void continue_from(Judged at) {
+    void continue_from(const Judged& at) {
         take(at);
         if (!at.holds(settings_) || effort_.spent()) return;
         Descent descent(problem_, settings_, effort_);

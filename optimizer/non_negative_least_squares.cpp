@@ -16,7 +16,8 @@ constexpr double no_gain = 1e-13; // of the product of the norms
 /// The columns that are not held at zero, and the least squares over them alone.
 class Passive {
 public:
-    explicit Passive(Eigen::Map<const MatrixXd> a) : a_(a), in_(std::size_t(a.cols()), false) {}
+    explicit Passive(const Eigen::Map<const MatrixXd>& a)
+        : a_(a), in_(std::size_t(a.cols()), false) {}
 
     bool contains(Index j) const { return in_[std::size_t(j)]; }
     bool empty() const { return columns_.empty(); }

@@ -58,9 +58,8 @@ int guarded(const std::function<int()>& run) {
     }
 }
 
-} // namespace
-
-int main(int argc, char** argv) {
+/// The whole program; throws what guarded() turns into an exit code.
+int run(int argc, char** argv) {
     CLI::App app{"finwright sizes custom plate-fin heat sinks.", "finwright"};
     app.set_version_flag("--version", FINWRIGHT_VERSION);
     app.require_subcommand(1);
@@ -85,10 +84,15 @@ int main(int argc, char** argv) {
             fmt::print(stderr, "finwright: no command {}; did you mean {}?\n", argv[1], meant);
         return app.exit(error) == 0 ? cli::done : cli::wrong_command_line;
     }
-    return guarded([&] {
-        if (*size) return cli::size_command(command);
-        if (*rate) return cli::rate_command(command);
-        if (*check) return cli::check_command(command);
-        return cli::laws_command(law, values);
-    });
+    if (*size) return cli::size_command(command);
+    if (*rate) return cli::rate_command(command);
+    if (*check) return cli::check_command(command);
+    return cli::laws_command(law, values);
+}
+
+} // namespace
+
+// Only printing the message itself could still throw.
+int main(int argc, char** argv) { // NOLINT(bugprone-exception-escape)
+    return guarded([&] { return run(argc, argv); });
 }

@@ -270,9 +270,8 @@ std::string standing(const Job& job, const Rating& rating) {
             nearest = &part;
     if (nearest) {
         const double left = *nearest->headroom();
-        text = paragraph(fmt::format("{} is nearest to what it is allowed: {} K {}.",
-                                     nearest->name, fixed(std::abs(left), 1),
-                                     left < 0.0 ? "TOO HOT" : "left"));
+        text = paragraph(fmt::format("{} is nearest to what it is allowed: {} K {}.", nearest->name,
+                                     fixed(std::abs(left), 1), left < 0.0 ? "TOO HOT" : "left"));
     }
     for (const std::string& breach : sizing::broken_limits(job, rating))
         text += wrapped(breach, page_width, "  LIMIT BROKEN: ", "    ");
