@@ -12,7 +12,7 @@ namespace finwright::job {
 
 namespace {
 
-constexpr std::size_t largest_file = 1024 * 1024;
+constexpr std::size_t largest_file = std::size_t(1024) * 1024;
 constexpr std::size_t longest_line = 300;
 constexpr std::size_t deepest = 12;
 constexpr std::size_t most_nodes = 20000;

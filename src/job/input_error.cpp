@@ -76,8 +76,8 @@ std::string message(const std::string& file, std::string_view text, Place place,
 
 } // namespace
 
-InputError::InputError(std::string file, std::string_view text, Place place, std::string reason,
-                       std::string suggestion, Place against)
+InputError::InputError(const std::string& file, std::string_view text, Place place,
+                       const std::string& reason, const std::string& suggestion, Place against)
     : std::runtime_error(
           message(file, text, place, printable(reason, longest_reason), suggestion, against)),
       place_(place), against_(against), reason_(printable(reason, longest_reason)) {}

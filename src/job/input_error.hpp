@@ -19,8 +19,8 @@ public:
     /// `text` is the whole file; the excerpts are taken from it. A place with line 0 gives none.
     /// `against` is the line this one contradicts, if there is one. Columns count bytes, as the
     /// file is stored; the message counts characters.
-    InputError(std::string file, std::string_view text, Place place, std::string reason,
-               std::string suggestion, Place against = {});
+    InputError(const std::string& file, std::string_view text, Place place,
+               const std::string& reason, const std::string& suggestion, Place against = {});
 
     const Place& place() const { return place_; }
     const Place& against() const { return against_; }

@@ -6,7 +6,6 @@
 
 using namespace finwright::optimizer;
 using finwright::tests::FormulaProblem;
-using finwright::tests::near;
 using finwright::tests::Num;
 using X = std::span<const Num>;
 

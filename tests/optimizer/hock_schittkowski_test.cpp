@@ -21,7 +21,7 @@ Num square(const Num& a) {
     return a * a;
 }
 
-void check_from(FormulaProblem problem, std::vector<double> start, double published) {
+void check_from(FormulaProblem problem, const std::vector<double>& start, double published) {
     finwright::tests::check_derivatives(problem);
     Settings settings;
     for (int random : {0, 5}) {

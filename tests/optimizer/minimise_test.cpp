@@ -63,7 +63,7 @@ TEST_CASE("a problem without values anywhere is not called infeasible, nor anyth
 
 TEST_CASE("variables and starts that make no sense are refused by name") {
     const auto sum = [](X x) { return x[0]; };
-    const auto refused = [&](Variable v, std::vector<double> start, const char* why) {
+    const auto refused = [&](const Variable& v, const std::vector<double>& start, const char* why) {
         FormulaProblem problem({v}, sum, {});
         CHECK_THROWS_WITH_AS(minimise(problem.from({start}), Settings{}), why,
                              std::invalid_argument);

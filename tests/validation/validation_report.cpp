@@ -288,7 +288,8 @@ void air() {
 
 } // namespace
 
-int main(int argc, char** argv) {
+// What is thrown ends the program and fails the test that runs it.
+int main(int argc, char** argv) { // NOLINT(bugprone-exception-escape)
     say("# Validation\n");
     say("Written by `validation_report` (tests/validation) from the data in tests/data/reference; "
         "a test fails when this file");
