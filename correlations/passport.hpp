@@ -32,6 +32,9 @@ struct Passport {
     std::string_view stated_error; ///< in words
     bool from_memory = false;      ///< coefficients not read in the primary paper
     double (*evaluate)(std::span<const double>) = nullptr; ///< inputs in the order above, SI
+    /// No published law was at hand: an estimate of this project, to be marked as such wherever it
+    /// enters a result.
+    bool estimate = false;
 };
 
 } // namespace finwright::correlations

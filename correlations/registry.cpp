@@ -8,9 +8,9 @@ namespace {
 
 std::vector<Passport> collected() {
     std::vector<Passport> all;
-    for (auto family :
-         {air_passports, natural_convection_passports, forced_convection_passports,
-          friction_passports, fin_passports, radiation_passports, conduction_passports})
+    for (auto family : {air_passports, natural_convection_passports, natural_inclined_passports,
+                        forced_convection_passports, friction_passports, fin_passports,
+                        radiation_passports, conduction_passports})
         for (const Passport& law : family())
             all.push_back(law);
     return all;

@@ -15,6 +15,7 @@ const Passport* find_passport(std::string_view name);
 /// The families the registry is made of, one .cpp each.
 std::vector<Passport> air_passports();
 std::vector<Passport> natural_convection_passports();
+std::vector<Passport> natural_inclined_passports();
 std::vector<Passport> forced_convection_passports();
 std::vector<Passport> friction_passports();
 std::vector<Passport> fin_passports();

@@ -53,8 +53,44 @@ struct Part {
 /// docs/validation.md.
 enum class ChannelLaw { fin_channel, u_channel, parallel_plates, elenbaas };
 
+/// A slow movement of the room's air past a sink in still air.
+struct Drift {
+    enum class Direction { assisting, opposing, crossing }; ///< up the fins, down them, across them
+    double velocity = 0.0;                                  ///< [m/s]
+    Direction direction = Direction::assisting;
+};
+
 struct StillAir {
     ChannelLaw channel_law = ChannelLaw::fin_channel;
+    std::optional<Drift> drift;
+};
+
+/// How a sink in still air stands.
+struct Mounting {
+    double tilt = 0.0;                      ///< of the base from vertical, towards facing up [rad]
+    bool fins_level = false;                ///< on an upright base: across gravity, not along it
+    bool back_exposed = false;              ///< the parts' side sheds heat too, beside their pads
+    std::optional<double> wall_conductance; ///< from the back into a wall [W/K]
+    std::optional<double> wall_temperature; ///< of that wall [K]
+};
+
+struct Sun {
+    double irradiance = 0.0;   ///< on the fins' side, square to the base [W/m2]
+    double absorptivity = 0.0; ///< solar [-]
+};
+
+/// A sink underneath, whose warm air rises into this one.
+struct SinkBelow {
+    double power = 0.0;    ///< [W]
+    double width = 0.0;    ///< across its fins [m]
+    double distance = 0.0; ///< from its top to this sink's inlet [m]
+};
+
+/// What besides its air acts on a sink in still air.
+struct Around {
+    std::optional<double> radiating_temperature; ///< of what the surfaces see; default the air [K]
+    std::optional<Sun> sun;
+    std::optional<SinkBelow> sink_below;
 };
 
 /// Air led through the fins by a duct that fits them closely. Exactly one is given.
@@ -67,6 +103,8 @@ struct DuctedAir {
 struct Air {
     double temperature = 298.15; ///< at the sink's inlet [K]
     double altitude = 0.0;       ///< [m]
+    Mounting mounting;           ///< still air
+    Around around;               ///< still air
     std::variant<StillAir, DuctedAir> state;
 };
 

@@ -4,6 +4,8 @@
 #include "src/job/check_job.hpp"
 #include "src/job/document.hpp"
 #include "src/job/nearest_word.hpp"
+#include "src/job/read_air.hpp"
+#include "src/job/read_numbers.hpp"
 #include <charconv>
 #include <cmath>
 #include <fmt/format.h>
@@ -18,8 +20,6 @@ constexpr int most_parts = 64;
 constexpr int most_fins = 10000;
 
 // Beyond these a number is a slip of the unit, not a job (common practice, no source).
-constexpr double fastest_air = 100.0;                                             // [m/s]
-constexpr double largest_flow = 10.0;                                             // [m3/s]
 constexpr double longest_space = 2.0;                                             // [m]
 constexpr double longest_side = 2.0;                                              // [m]
 constexpr double highest_fin = 1.0;                                               // [m]
@@ -36,88 +36,6 @@ int whole_number(const Document& d, const TreeNode& node, const std::string& wha
         d.fail(node.place, fmt::format("{} must be a whole number", what),
                fmt::format("write for example {}: 12", what));
     return value;
-}
-
-double positive(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind) {
-    const double value = m.number(key, kind);
-    if (value <= 0.0)
-        d.fail(m.place_of(key), fmt::format("{} must be above zero", key),
-               fmt::format("write for example {}: {}", key, kind.example));
-    return value;
-}
-
-std::optional<double> optional_positive(const Document& d, Mapping& m, std::string_view key,
-                                        const QuantityKind& kind) {
-    return m.has(key) ? std::optional(positive(d, m, key, kind)) : std::nullopt;
-}
-
-double not_negative(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind) {
-    const double value = m.number(key, kind);
-    if (value < 0.0)
-        d.fail(m.place_of(key), fmt::format("{} is negative", key),
-               fmt::format("write for example {}: {}", key, kind.example));
-    return value;
-}
-
-// ---- air ----
-
-ChannelLaw read_channel_law(Mapping& m) {
-    static const std::vector<std::pair<std::string, ChannelLaw>> laws{
-        {"fin_channel", ChannelLaw::fin_channel},
-        {"u_channel", ChannelLaw::u_channel},
-        {"parallel_plates", ChannelLaw::parallel_plates},
-        {"elenbaas", ChannelLaw::elenbaas}};
-    const std::string text = m.optional_text("channel_law").value_or("fin_channel");
-    for (const auto& [name, law] : laws)
-        if (name == text) return law;
-    m.fail("channel_law", fmt::format("there is no channel law '{}'", text),
-           "write fin_channel, u_channel, parallel_plates or elenbaas");
-}
-
-Air read_air(const Document& d, const TreeNode& node) {
-    Mapping m(d, node, "air");
-    m.only({"state", "temperature", "altitude", "velocity", "flow", "channel_law"});
-    Air air;
-    air.temperature = m.number("temperature", quantity::temperature);
-    if (air.temperature < 223.149 || air.temperature > 473.151)
-        m.fail("temperature", "the air temperature lies outside -50 to 200 degC",
-               "check the unit: degC, degF or K");
-    air.altitude = m.optional_number("altitude", quantity::length).value_or(0.0);
-    if (air.altitude < -430.0 || air.altitude > 11000.0)
-        m.fail("altitude", "the altitude lies outside -430 to 11 000 m", "check the unit: m or ft");
-    const std::string state = m.text("state");
-    const bool velocity = m.has("velocity"), flow = m.has("flow");
-    if (state == "still") {
-        if (velocity || flow)
-            m.fail(velocity ? "velocity" : "flow",
-                   fmt::format("still air cannot have a {}; 'state: still' stands in line {}",
-                               velocity ? "velocity" : "flow", m.place_of("state").line),
-                   "write state: ducted, or leave this line out", m.place_of("state"));
-        air.state = StillAir{read_channel_law(m)};
-        return air;
-    }
-    if (m.has("channel_law"))
-        m.fail("channel_law", "a channel law is chosen for still air only", "leave the line out",
-               m.place_of("state"));
-    if (state != "ducted")
-        m.fail("state", fmt::format("air state '{}' is not known", state), "write still or ducted");
-    if (velocity && flow)
-        m.fail("flow", "ducted air has a velocity and a flow; one follows from the other",
-               "keep one of them", m.place_of("velocity"));
-    if (!velocity && !flow)
-        m.fail("state", "ducted air needs its velocity or its flow",
-               "add velocity: 3 m/s or flow: 40 m3/h");
-    DuctedAir duct;
-    duct.velocity = optional_positive(d, m, "velocity", quantity::velocity);
-    duct.flow = optional_positive(d, m, "flow", quantity::volume_flow);
-    if (duct.velocity && *duct.velocity > fastest_air)
-        m.fail("velocity", fmt::format("{:.0f} m/s is beyond any fan", *duct.velocity),
-               "is it ft/min (196.85 of them are 1 m/s)?");
-    if (duct.flow && *duct.flow > largest_flow)
-        m.fail("flow", fmt::format("{:.4g} m3/s is beyond any sink's fan", *duct.flow),
-               "is it m3/h, L/s or cfm?");
-    air.state = duct;
-    return air;
 }
 
 // ---- parts ----
@@ -426,12 +344,12 @@ void read_shop(const Document& d, const TreeNode& node, Sink& sink) {
 
 Job read_document(const Document& d) {
     Mapping m(d, d.root, "the job file");
-    m.only({"job", "air", "parts", "limits", "sink", "shop"});
+    m.only({"job", "air", "mounting", "around", "parts", "limits", "sink", "shop"});
     Job job;
     job.file = d.file;
     job.text = d.text;
     job.title = m.text("job");
-    job.air = read_air(d, m.required("air"));
+    job.air = read_air(d, m.required("air"), m.optional("mounting"), m.optional("around"));
     job.parts = read_parts(d, m.required("parts"));
     job.limits = read_limits(d, m.required("limits"));
     job.sink = read_sink(d, m.required("sink"));

@@ -302,7 +302,8 @@ std::string kind_read(const Reading& r) {
          {&quantity::length, &quantity::difference, &quantity::power, &quantity::resistance,
           &quantity::area_resistance, &quantity::conductivity, &quantity::velocity,
           &quantity::volume_flow, &quantity::pressure, &quantity::mass, &quantity::density,
-          &quantity::specific_heat, &quantity::angle, &quantity::pure})
+          &quantity::specific_heat, &quantity::conductance, &quantity::irradiance, &quantity::angle,
+          &quantity::pure})
         if (kind->exponents == r.exponents) return std::string(kind->name);
     return "no quantity used here";
 }

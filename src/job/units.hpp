@@ -40,6 +40,9 @@ inline constexpr QuantityKind mass{"a mass", {0, 1, 0, 0, 0}, false, "500 g"};
 inline constexpr QuantityKind density{"a density", {-3, 1, 0, 0, 0}, false, "2700 kg/m3"};
 inline constexpr QuantityKind specific_heat{
     "a specific heat", {2, 0, -2, -1, 0}, false, "900 J/(kg K)"};
+inline constexpr QuantityKind conductance{
+    "a thermal conductance", {2, 1, -3, -1, 0}, false, "2 W/K"};
+inline constexpr QuantityKind irradiance{"an irradiance", {0, 1, -3, 0, 0}, false, "900 W/m2"};
 inline constexpr QuantityKind angle{"an angle", {0, 0, 0, 0, 1}, false, "0.5 deg"};
 inline constexpr QuantityKind pure{"a pure number", {0, 0, 0, 0, 0}, false, "0.85"};
 } // namespace quantity

@@ -25,8 +25,13 @@ std::string range_of(const Symbol& symbol) {
     return fmt::format("{} to {}", end(symbol.lowest), end(symbol.highest));
 }
 
-std::string memory_note(const Passport& law) {
-    return law.from_memory ? "coefficients from memory, the paper was not opened" : "";
+std::string notes_of(const Passport& law) {
+    std::string notes;
+    if (law.estimate) notes = "ESTIMATE of this project: no published law was at hand";
+    if (law.from_memory)
+        notes += std::string(notes.empty() ? "" : "; ") +
+                 "coefficients from memory, the paper was not opened";
+    return notes;
 }
 
 double number(const std::string& text, const std::string& whole) {
@@ -76,7 +81,8 @@ std::string laws_list() {
     table.left(1);
     table.left(2);
     for (const Passport& law : correlations::registry())
-        table.row({std::string(law.name), std::string(law.title), std::string(law.source_key)});
+        table.row({std::string(law.name), std::string(law.title),
+                   law.estimate ? "estimate" : std::string(law.source_key)});
     return "Laws (finwright laws NAME shows the passport; finwright laws NAME symbol=value ... "
            "evaluates)\n" +
            table.text();
@@ -111,7 +117,7 @@ std::string law_page(const Passport& law) {
         fmt::format("{} [{}], {}", law.result.symbol, law.result.unit, law.result.meaning));
     say("error", std::string(law.stated_error));
     say("outside", std::string(law.outside));
-    say("note", memory_note(law));
+    say("note", notes_of(law));
     return out + "  inputs, with the range stated\n" + inputs.text();
 }
 

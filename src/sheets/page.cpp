@@ -9,6 +9,7 @@
 #include <algorithm>
 #include <cmath>
 #include <fmt/format.h>
+#include <numbers>
 
 namespace finwright::sheets {
 
@@ -34,10 +35,52 @@ std::string paragraph(const std::string& text) {
     return wrapped(text, page_width, "  ", "  ");
 }
 
+const char* direction_name(job::Drift::Direction direction) {
+    switch (direction) {
+    case job::Drift::Direction::assisting:
+        return "up the fins";
+    case job::Drift::Direction::opposing:
+        return "down the fins";
+    case job::Drift::Direction::crossing:
+        return "across the fins";
+    }
+    return "";
+}
+
+/// How the sink stands and what acts on it: "still, base and fins upright".
+std::string still_air_words(const job::Air& air) {
+    const job::Mounting& m = air.mounting;
+    const double degrees = m.tilt * 180.0 / std::numbers::pi;
+    std::string text = "still, ";
+    if (std::abs(m.tilt) < 1e-9)
+        text += m.fins_level ? "base upright, fins level" : "base and fins upright";
+    else
+        text += fmt::format("base tilted {:+.0f}° (90° is fins up){}", degrees,
+                            m.fins_level ? ", fins level" : "");
+    if (m.back_exposed) text += ", back exposed";
+    if (m.wall_conductance)
+        text += fmt::format(", on a wall at {} °C with {} W/K", celsius(*m.wall_temperature),
+                            significant(*m.wall_conductance, 3));
+    if (const auto& drift = std::get<job::StillAir>(air.state).drift)
+        text += fmt::format(", drift {} m/s {}", significant(drift->velocity, 2),
+                            direction_name(drift->direction));
+    if (air.around.radiating_temperature)
+        text += fmt::format(", radiating to {} °C", celsius(*air.around.radiating_temperature));
+    if (const auto& sun = air.around.sun)
+        text += fmt::format(", sun {} W/m² (absorptivity {})", fixed(sun->irradiance, 0),
+                            significant(sun->absorptivity, 2));
+    return text;
+}
+
+std::string warmed_by(const Job& job) {
+    if (!job.air.around.sink_below) return "";
+    return fmt::format(" ({} °C warmed by the sink below)", celsius(job.air.temperature));
+}
+
 std::string air_line(const Job& job) {
-    std::string text = fmt::format("air {} °C at {} m ({} kPa)", celsius(job.air.temperature),
-                                   fixed(job.air.altitude, 0),
-                                   fixed(sink::duty_of(job).surroundings.pressure / 1e3, 1));
+    std::string text = fmt::format(
+        "air {} °C{} at {} m ({} kPa)", celsius(sink::inlet_temperature(job)), warmed_by(job),
+        fixed(job.air.altitude, 0), fixed(sink::duty_of(job).surroundings.pressure / 1e3, 1));
     if (const auto* duct = std::get_if<job::DuctedAir>(&job.air.state)) {
         if (duct->velocity)
             text +=
@@ -45,17 +88,19 @@ std::string air_line(const Job& job) {
         if (duct->flow)
             text += fmt::format(", ducted, {} m³/h", significant(*duct->flow * 3600.0, 3));
     } else {
-        text += ", still, base and fins vertical";
+        text += ", " + still_air_words(job.air);
     }
     return text;
 }
 
 std::string title_lines(const Job& job) {
-    return fmt::format("{}   [{}]\n  {} W in {} part{}; {}\n  {} of {}, {} (emissivity {})\n",
-                       job.title, job.file, significant(job.total_power(), 4), job.parts.size(),
-                       job.parts.size() == 1 ? "" : "s", air_line(job), job.sink.process.name,
-                       job.sink.alloy.name, job.sink.finish.name,
-                       significant(job.sink.finish.emissivity, 2));
+    return fmt::format("{}   [{}]\n", job.title, job.file) +
+           wrapped(fmt::format("{} W in {} part{}; {}", significant(job.total_power(), 4),
+                               job.parts.size(), job.parts.size() == 1 ? "" : "s", air_line(job)),
+                   page_width, "  ", "    ") +
+           paragraph(fmt::format("{} of {}, {} (emissivity {})", job.sink.process.name,
+                                 job.sink.alloy.name, job.sink.finish.name,
+                                 significant(job.sink.finish.emissivity, 2)));
 }
 
 std::string budget_block(const Rating& rating, std::size_t from, std::size_t to) {
@@ -172,8 +217,13 @@ std::string heat_split(const Rating& rating) {
     row("outer faces", rating.heat.outer_faces);
     row("fin tips and end faces", rating.heat.tips_edges);
     row("rim of the base", rating.heat.rim);
+    row("back of the base", rating.heat.back);
     row("radiation, all surfaces", rating.heat.radiation);
+    row("wall behind", rating.heat.wall);
     std::string out = heading("The heat leaves by") + table.text();
+    if (rating.sun > 0.0)
+        out += paragraph(fmt::format("of which {} W come from the sun, taken up by the fins' side",
+                                     significant(rating.sun, 3)));
     if (const auto* still = std::get_if<sink::StillAirView<double>>(&rating.view))
         out += paragraph(fmt::format(
             "film {} W/(m² K) in the channels, {} outside; fin efficiency {}; radiation {} per "
@@ -223,10 +273,14 @@ std::string alternatives_table(const Job& job, const Answer& answer) {
     return heading("Nearest alternatives, each optimised and rounded") + table.text();
 }
 
+bool upright(const job::Mounting& m) {
+    return m.tilt == 0.0 && !m.fins_level;
+}
+
 /// The same sink by each channel law, for still air: what the choice of law is worth.
 std::string by_each_channel_law(const Job& job, const Rating& rating) {
     const auto* still = std::get_if<job::StillAir>(&job.air.state);
-    if (!still) return {};
+    if (!still || !upright(job.air.mounting)) return {};
     using job::ChannelLaw;
     constexpr std::pair<ChannelLaw, const char*> laws[] = {
         {ChannelLaw::fin_channel, "fin_channel"},
@@ -246,17 +300,22 @@ std::string by_each_channel_law(const Job& job, const Rating& rating) {
 }
 
 std::string laws_used(const Job& job, const Rating& rating) {
-    std::string lines, warnings;
+    std::string lines, warnings, estimates;
     for (const sink::LawUse& use : rating.laws) {
         const auto* passport = correlations::find_passport(use.passport);
         lines += wrapped(fmt::format("{}: {} [{}], {}", use.role, passport->title,
                                      passport->source_key, passport->stated_error),
                          page_width, "  ", "      ");
+        if (passport->estimate)
+            estimates += wrapped(fmt::format("{}: {}; stated error {}", use.role, passport->title,
+                                             passport->stated_error),
+                                 page_width, "  ! ", "    ");
         for (const std::string& left : use.ranges_left())
             warnings += wrapped(left, page_width, "  ! ", "    ");
     }
     std::string out = heading("Laws used (finwright laws NAME for each passport)") + lines +
                       by_each_channel_law(job, rating);
+    if (!estimates.empty()) out += heading("ESTIMATES: no published law was at hand") + estimates;
     if (!warnings.empty()) out += heading("Outside a law's range") + warnings;
     return out;
 }

@@ -52,6 +52,8 @@ Json view_json(const sink::StillAirView<double>& v) {
             {"channel_film_W_m2K", v.channel_film},
             {"channel_radiation_W_m2K", v.channel_radiation},
             {"outer_film_W_m2K", v.outer_film},
+            {"edge_film_W_m2K", v.edge_film},
+            {"back_film_W_m2K", v.back_film},
             {"outer_radiation_W_m2K", v.outer_radiation},
             {"inner_fin_efficiency", v.inner_efficiency},
             {"outer_fin_efficiency", v.outer_efficiency}};
@@ -88,6 +90,7 @@ Json laws_json(const std::vector<sink::LawUse>& laws) {
         list.push_back({{"law", use.passport},
                         {"role", use.role},
                         {"inputs", inputs_json(use)},
+                        {"estimate", correlations::find_passport(use.passport)->estimate},
                         {"outside_range", use.ranges_left()}});
     return list;
 }
@@ -110,7 +113,10 @@ Json rating_json(const sink::Rating& r) {
               {"outer_faces", r.heat.outer_faces},
               {"tips_edges", r.heat.tips_edges},
               {"rim", r.heat.rim},
-              {"radiation", r.heat.radiation}}},
+              {"back", r.heat.back},
+              {"radiation", r.heat.radiation},
+              {"wall", r.heat.wall}}},
+            {"sun_W", r.sun},
             {"parts", parts},
             {"films", std::visit([](const auto& v) { return view_json(v); }, r.view)},
             {"laws", laws_json(r.laws)}};
@@ -178,6 +184,9 @@ Json job_json(const job::Job& job) {
     return {{"title", job.title},
             {"file", job.file},
             {"air_temperature_K", job.air.temperature},
+            {"inlet_temperature_K", sink::inlet_temperature(job)},
+            {"tilt_rad", job.air.mounting.tilt},
+            {"fins_level", job.air.mounting.fins_level},
             {"altitude_m", job.air.altitude},
             {"pressure_Pa", sink::duty_of(job).surroundings.pressure},
             {"power_W", job.total_power()},

@@ -2,7 +2,9 @@
 
 #include "src/sink/ducted_air.hpp"
 #include "src/sink/still_air.hpp"
+#include <boost/math/tools/toms748_solve.hpp>
 #include <cmath>
+#include <cstdint>
 #include <stdexcept>
 
 namespace finwright::sink {
@@ -12,22 +14,45 @@ using correlations::Dual;
 namespace {
 
 constexpr double balance_tolerance = 1e-12;
-constexpr int balance_steps = 60;
+constexpr int balance_steps = 20;
+constexpr double least_rise = 1e-3; // [K]
 
 template <class T, class Visitor>
 auto with_model(const Geometry<T>& g, const Duty& duty, Visitor&& visit) {
-    if (const auto* still = std::get_if<StillAir>(&duty.surroundings.air))
-        return visit(StillAirSink<T>(g, duty.surroundings, duty.material, still->channel_law));
-    return visit(DuctedSink<T>(g, duty.surroundings, duty.material));
+    if (duty.surroundings.still()) return visit(StillAirSink<T>(g, duty));
+    return visit(DuctedSink<T>(g, duty));
 }
 
-/// Secant in (log rise, log heat): the curve is almost a straight line there. The rise is the one
-/// the model's view is stated by.
+/// ln(heat/shed), continued in a straight line where a warm wall or surroundings leave too little
+/// heat for a logarithm.
+double log_share(double share) {
+    constexpr double least = 0.1;
+    return share > least ? std::log(share) : std::log(least) + share / least - 1.0;
+}
+
+/// Between the least and the greatest rise looked at, by TOMS 748. A sink that its wall or its
+/// surroundings hold at or below its air's temperature counts as just above it.
+template <class Shortfall>
+double bracketed_rise(const Shortfall& log_heat) {
+    constexpr double hottest = 1e6; // [K]
+    const double low = std::log(least_rise), high = std::log(hottest);
+    if (log_heat(low) >= 0.0) return least_rise;
+    if (log_heat(high) < 0.0) throw std::domain_error("the heat balance does not settle");
+    std::uintmax_t steps = 200;
+    const auto close = [](double a, double b) {
+        return std::abs(b - a) < 1e-13 * (1.0 + std::abs(a));
+    };
+    const auto [from, to] = boost::math::tools::toms748_solve(log_heat, low, high, close, steps);
+    return std::exp(0.5 * (from + to));
+}
+
+/// Secant in (log rise, log heat): the curve is almost a straight line there, but for walls and
+/// surroundings off the air's temperature. The rise is the one the model's view is stated by.
 template <class Model>
 double balanced_rise(const Model& model, double power, double guess) {
+    const double shed = power + model.load();
     const auto log_heat = [&](double log_rise) {
-        const double rise = std::exp(log_rise);
-        return std::log(model.heat(model.view(rise)).total() / power);
+        return log_share(model.heat(model.view(std::exp(log_rise))).total() / shed);
     };
     double x0 = std::log(guess), f0 = log_heat(x0);
     double x1 = x0 - f0 / Model::heat_exponent, f1 = log_heat(x1);
@@ -41,8 +66,7 @@ double balanced_rise(const Model& model, double power, double guess) {
         x1 -= f1 / slope;
         f1 = log_heat(x1);
     }
-    if (std::abs(f1) < 1e-10) return std::exp(x1);
-    throw std::domain_error("the heat balance does not settle");
+    return std::abs(f1) < 1e-10 ? std::exp(x1) : bracketed_rise(log_heat);
 }
 
 void require_room(const Geometry<double>& g) {
@@ -100,7 +124,7 @@ Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty, double gu
     const double rise = balance(plain(g), duty, guess).driving_rise;
     return with_model(widened(g), duty, [&](const auto& model) {
         const auto view = model.view(Dual<6>::variable(rise, 5));
-        const Dual<6> heat = model.heat(view).total();
+        const Dual<6> heat = model.heat(view).total() - model.load();
         Dual<5> implicit(rise);
         for (std::size_t i = 0; i < 5; ++i)
             implicit.slope[i] = -heat.slope[i] / heat.slope[5];

@@ -20,8 +20,8 @@ struct Balance {
 
 inline constexpr double first_guess = 40.0; ///< [K]
 
-/// Solves shed(driving rise) = power. The heat grows with the rise without end, so there is one
-/// root; Newton in logarithms reaches |shed/power - 1| < 1e-12. Derivatives by the implicit
+/// Solves shed(driving rise) = power + sun. The heat grows with the rise without end, so there is
+/// one root; Newton in logarithms reaches |shed/power - 1| < 1e-12. Derivatives by the implicit
 /// function theorem. Throws std::domain_error if the geometry has no room for air (gap or fin tip
 /// not positive). `guess` is where the search for the root begins [K]; it moves the last digit at
 /// most.

@@ -19,14 +19,13 @@ T stated_flow(const Geometry<T>& g, const Surroundings& s) {
 } // namespace
 
 template <class T>
-DuctedSink<T>::DuctedSink(const Geometry<T>& geometry, const Surroundings& surroundings,
-                          const Material& material)
-    : g_(geometry), surroundings_(surroundings), material_(material),
-      fin_shape_(fin_shape(geometry, material.conductivity)),
-      volume_flow_(stated_flow(geometry, surroundings)),
+DuctedSink<T>::DuctedSink(const Geometry<T>& geometry, const Duty& duty)
+    : g_(geometry), surroundings_(duty.surroundings), material_(duty.material),
+      fin_shape_(fin_shape(geometry, duty.material.conductivity)),
+      volume_flow_(stated_flow(geometry, surroundings_)),
       mass_flow_(
           volume_flow_ *
-          correlations::air_at(surroundings.air_temperature, surroundings.pressure).density) {}
+          correlations::air_at(surroundings_.air_temperature, surroundings_.pressure).density) {}
 
 template <class T>
 DuctedAirView<T> DuctedSink<T>::view(const T& base_rise) const {

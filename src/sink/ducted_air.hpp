@@ -43,14 +43,16 @@ public:
     /// About d ln(heat)/d ln(rise), where a search for the balance begins.
     static constexpr double heat_exponent = 1.0;
 
-    DuctedSink(const Geometry<T>& geometry, const Surroundings& surroundings,
-               const Material& material);
+    DuctedSink(const Geometry<T>& geometry, const Duty& duty);
 
     /// What the laws see at a base rise over the inlet air [K].
     DuctedAirView<T> view(const T& base_rise) const;
 
     /// Heat by path [W].
     HeatPaths<T> heat(const DuctedAirView<T>& v) const;
+
+    /// Heat the surfaces take up besides the parts' [W].
+    T load() const { return T(0.0); }
 
     /// Static pressure the flow loses from before the fins to behind them [Pa].
     T pressure_drop(const DuctedAirView<T>& v) const;

@@ -3,6 +3,7 @@
 // dimensions vary.
 
 #include "src/job/job.hpp"
+#include "src/sink/law_use.hpp"
 #include <optional>
 #include <string>
 #include <variant>
@@ -12,9 +13,12 @@ namespace finwright::sink {
 
 using ChannelLaw = job::ChannelLaw;
 
-/// Fins vertical, base vertical, room air at rest.
+/// Room air at rest, or drifting slowly.
 struct StillAir {
     ChannelLaw channel_law = ChannelLaw::fin_channel;
+    job::Mounting mounting;
+    std::optional<job::Drift> drift;
+    std::optional<job::Sun> sun;
 };
 
 /// The air stated for a duct that fits the fins closely: its velocity before the fins, or its
@@ -27,8 +31,9 @@ struct DuctFlow {
 };
 
 struct Surroundings {
-    double air_temperature = 298.15; ///< at the inlet; also what the surfaces radiate to [K]
-    double pressure = 101325.0;      ///< [Pa]
+    double air_temperature = 298.15;             ///< at the inlet [K]
+    std::optional<double> radiating_temperature; ///< of what the surfaces see; default the air [K]
+    double pressure = 101325.0;                  ///< [Pa]
     std::variant<StillAir, DuctVelocity, DuctFlow> air;
 
     bool still() const { return std::holds_alternative<StillAir>(air); }
@@ -44,10 +49,15 @@ struct Duty {
     Surroundings surroundings;
     Material material;
     std::vector<job::Part> parts;
-    double margin = 0.0; ///< kept below every junction limit [K]
+    double margin = 0.0;            ///< kept below every junction limit [K]
+    std::vector<LawUse> inlet_laws; ///< what the inlet temperature rests on
 
     double power() const;
 };
+
+/// Temperature of the air entering the fins: the stated air, warmed by a sink below if there is one
+/// [K].
+double inlet_temperature(const job::Job& job);
 
 /// The duty a job states. Pressure follows from the altitude.
 Duty duty_of(const job::Job& job);

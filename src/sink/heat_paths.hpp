@@ -10,9 +10,11 @@ struct HeatPaths {
     T outer_faces = T(0.0); ///< convection from the two outermost fin faces
     T tips_edges = T(0.0);  ///< convection from fin tips and the fins' end faces
     T rim = T(0.0);         ///< convection from the base's four narrow sides
+    T back = T(0.0);        ///< convection from the base's back beside the parts
     T radiation = T(0.0);   ///< from all of these
+    T wall = T(0.0);        ///< conducted into the wall behind
 
-    T total() const { return channels + outer_faces + tips_edges + rim + radiation; }
+    T total() const { return channels + outer_faces + tips_edges + rim + back + radiation + wall; }
 };
 
 } // namespace finwright::sink

@@ -2,12 +2,15 @@
 
 #include "src/sink/placing.hpp"
 #include <algorithm>
+#include <cmath>
 
 namespace finwright::sink {
 
 using correlations::Dual;
 
 namespace {
+
+constexpr double level_to_the_eye = 1e-6; // cosine of a base that lies flat
 
 PartRating rate_part(const job::Part& part, double pad_temperature, double margin) {
     PartRating r;
@@ -20,29 +23,60 @@ PartRating rate_part(const job::Part& part, double pad_temperature, double margi
     return r;
 }
 
-std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry<double>& g,
-                                   ChannelLaw law) {
+LawUse channel_law_use(const StillAirView<double>& v, const Geometry<double>& g, ChannelLaw law) {
     const double gap = g.mean_gap();
-    std::vector<LawUse> uses{
-        {"air_conductivity", "air in the film", {v.film_temperature}},
-    };
     switch (law) {
-    case ChannelLaw::fin_channel:
-        uses.push_back({"fin_channel", "channels", {v.elenbaas, v.plate, gap, g.height, g.length}});
-        break;
     case ChannelLaw::u_channel:
-        uses.push_back({"u_channel", "channels", {v.rayleigh_radius, gap, g.height}});
-        break;
+        return {"u_channel", "channels", {v.rayleigh_radius, gap, g.height}};
     case ChannelLaw::parallel_plates:
-        uses.push_back({"parallel_plates", "channels", {v.elenbaas}});
-        break;
+        return {"parallel_plates", "channels", {v.elenbaas}};
     case ChannelLaw::elenbaas:
-        uses.push_back({"elenbaas", "channels", {v.elenbaas}});
+        return {"elenbaas", "channels", {v.elenbaas}};
+    case ChannelLaw::fin_channel:
         break;
     }
+    return {"fin_channel", "channels", {v.elenbaas, v.plate, gap, g.height, g.length}};
+}
+
+std::vector<LawUse> channel_laws(const StillAirView<double>& v, const Geometry<double>& g,
+                                 const StillAir& still) {
+    const double tilt = still.mounting.tilt, gap = g.mean_gap();
+    std::vector<LawUse> uses;
+    if (still.mounting.fins_level)
+        uses.push_back({"level_fins", "channels, blocked", {gap, g.height}});
+    else if (std::cos(tilt) > level_to_the_eye)
+        uses.push_back(channel_law_use(v, g, still.channel_law));
+    if (std::sin(tilt) == 0.0) return uses;
+    const double ra = v.grashof_unit * std::abs(std::sin(tilt)) * gap * gap * gap;
+    uses.push_back({tilt > 0.0 ? "horizontal_array" : "array_facing_down", "channels", {ra}});
+    uses.push_back({"horizontal_length", "channels, their length", {g.length}});
+    if (std::cos(tilt) > level_to_the_eye)
+        uses.push_back({"tilted_array", "channels, tilt", {tilt}});
+    return uses;
+}
+
+std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry<double>& g,
+                                   const StillAir& still) {
+    std::vector<LawUse> uses{{"air_conductivity", "air in the film", {v.film_temperature}}};
+    for (LawUse& use : channel_laws(v, g, still))
+        uses.push_back(std::move(use));
+    if (std::sin(still.mounting.tilt) == 0.0 && !still.mounting.fins_level)
+        uses.push_back(
+            {"vertical_laminar", "outer faces, tips, edges, rim", {v.rayleigh_length, v.prandtl}});
+    else
+        uses.push_back({"inclined_face",
+                        "outer faces, tips, edges, rim",
+                        {v.grashof_unit, v.prandtl, g.length, g.width(), still.mounting.tilt}});
+    if (still.drift && still.drift->direction != job::Drift::Direction::crossing) {
+        uses.push_back({"drift_in_channel",
+                        "drift through the channels",
+                        {still.drift->velocity, v.kinematic_viscosity, g.mean_gap(), g.length}});
+        if (still.drift->direction == job::Drift::Direction::opposing)
+            uses.push_back(
+                {"mixed_against", "drift against rising air", {v.forced_film, v.natural_film}});
+    }
     uses.push_back(
-        {"vertical_laminar", "outer faces, tips, edges, rim", {v.rayleigh_length, v.prandtl}});
-    uses.push_back({"channel_opening", "radiation of the channels", {gap, g.height, g.length}});
+        {"channel_opening", "radiation of the channels", {g.mean_gap(), g.height, g.length}});
     return uses;
 }
 
@@ -58,13 +92,13 @@ std::vector<LawUse> ducted_air_laws(const DuctedAirView<double>& v, const Geomet
 void rate_air(Rating& rating, const Duty& duty, double driving_rise) {
     const Geometry<double>& g = rating.geometry;
     if (const auto* still = std::get_if<StillAir>(&duty.surroundings.air)) {
-        const StillAirSink<double> model(g, duty.surroundings, duty.material, still->channel_law);
+        const StillAirSink<double> model(g, duty);
         const auto view = model.view(driving_rise);
-        rating.laws = still_air_laws(view, g, still->channel_law);
+        rating.laws = still_air_laws(view, g, *still);
         rating.view = view;
         return;
     }
-    const DuctedSink<double> model(g, duty.surroundings, duty.material);
+    const DuctedSink<double> model(g, duty);
     const auto view = model.view(driving_rise);
     rating.laws = ducted_air_laws(view, g);
     rating.view = view;
@@ -89,7 +123,14 @@ correlations::Slab slab_of(const Geometry<T>& g, const Duty& duty, const T& film
 /// Heat per base area and kelvin that holds the base at this mean rise [W/(m2 K)].
 template <class T>
 T base_film(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
-    return duty.power() / (base_rise * g.footprint());
+    return (duty.power() + sun_taken(g, duty.surroundings)) / (base_rise * g.footprint());
+}
+
+/// What the sun, spread over the whole base, adds under every pad [K].
+template <class T>
+T sun_rise(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
+    const T sun = sun_taken(g, duty.surroundings);
+    return base_rise * sun / (duty.power() + sun);
 }
 
 std::vector<double> powers_of(const Duty& duty) {
@@ -120,7 +161,10 @@ std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, doubl
                               const correlations::ModeSet& modes) {
     const auto slab = slab_of(g, duty, base_film(g, duty, base_rise));
     const auto pads = pads_on_base(duty.parts, slab.width, slab.length);
-    return correlations::pad_mean_rises(slab, pads, powers_of(duty), modes);
+    auto rises = correlations::pad_mean_rises(slab, pads, powers_of(duty), modes);
+    for (double& rise : rises)
+        rise += sun_rise(g, duty, base_rise);
+    return rises;
 }
 
 std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise) {
@@ -133,6 +177,7 @@ std::vector<Dual<5>> pad_rises(const Geometry<Dual<5>>& g, const Duty& duty,
     const auto slab = slab_of(g, duty, film);
     const auto pads = pads_on_base(duty.parts, Dual<1>::variable(slab.width, 0),
                                    Dual<1>::variable(slab.length, 0));
+    const Dual<5> sun = sun_rise(g, duty, base_rise);
     std::vector<Dual<5>> rises;
     for (const Dual<4>& rise :
          correlations::pad_mean_rises_with_slopes(slab, pads, powers_of(duty), modes)) {
@@ -140,7 +185,7 @@ std::vector<Dual<5>> pad_rises(const Geometry<Dual<5>>& g, const Duty& duty,
         for (std::size_t k = 0; k < 5; ++k)
             total.slope[k] = rise.slope[0] * width.slope[k] + rise.slope[1] * g.length.slope[k] +
                              rise.slope[2] * g.base.slope[k] + rise.slope[3] * film.slope[k];
-        rises.push_back(total);
+        rises.push_back(total + sun);
     }
     return rises;
 }
@@ -154,8 +199,10 @@ Rating rate(const Geometry<double>& g, const Duty& duty) {
     rating.mass = g.metal() * duty.material.density;
     rating.base_rise = settled.base_rise;
     rating.pressure_drop = settled.pressure_drop;
+    rating.sun = sun_taken(g, duty.surroundings);
     rating.heat = shed(g, duty, settled.driving_rise);
     rate_air(rating, duty, settled.driving_rise);
+    rating.laws.insert(rating.laws.end(), duty.inlet_laws.begin(), duty.inlet_laws.end());
     rate_parts(rating, duty);
     return rating;
 }

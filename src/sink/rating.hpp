@@ -40,6 +40,7 @@ struct Rating {
     double hottest_pad_rise = 0.0;
     double pressure_drop = 0.0; ///< [Pa]
     HeatPaths<double> heat;     ///< [W]
+    double sun = 0.0;           ///< taken up besides the parts' power [W]
     std::variant<StillAirView<double>, DuctedAirView<double>> view;
     std::vector<PartRating> parts;
     std::vector<LawUse> laws;

@@ -171,7 +171,7 @@ std::vector<std::optional<double>> allowed_pad_rises(const Job& job) {
     for (const job::Part& part : job.parts) {
         double rise = std::numeric_limits<double>::infinity();
         if (part.junction_limit)
-            rise = *part.junction_limit - job.limits.margin - job.air.temperature -
+            rise = *part.junction_limit - job.limits.margin - sink::inlet_temperature(job) -
                    part.power * (part.junction_to_case + part.interface);
         if (job.limits.sink_resistance)
             rise = std::min(rise, *job.limits.sink_resistance * job.total_power());

@@ -86,7 +86,7 @@ TEST_CASE("errors go to standard error, with place, excerpt, caret and suggestio
     CHECK(run.exit_code == 3);
     CHECK(run.output.empty());
     CHECK(run.errors.find("a.yaml:17:12: ") != std::string::npos);
-    CHECK(run.errors.find("^") != std::string::npos);
+    CHECK(run.errors.find('^') != std::string::npos);
     CHECK(run.errors.find("18 W") != std::string::npos);
 }
 

@@ -87,9 +87,9 @@ TEST_CASE("heat out of all surfaces equals heat in, within 1e-9") {
     RandomSinks random(11);
     for (int n = 0; n < 300; ++n) {
         const auto g = random.geometry();
-        for (const auto& duty : {random.duty(g), random.ducted(g)}) {
+        for (const auto& duty : {random.duty(g), random.mounted(g), random.ducted(g)}) {
             const auto rating = sink::rate(g, duty);
-            CHECK(rating.heat.total() == near(duty.power(), 1e-9));
+            CHECK(rating.heat.total() == near(duty.power() + rating.sun, 1e-9));
         }
     }
 }

@@ -49,6 +49,27 @@ public:
         return duty;
     }
 
+    /// Still air with everything a mounting and its surroundings can bring.
+    sink::Duty mounted(const sink::Geometry<double>& g) {
+        sink::Duty d = duty(g);
+        sink::StillAir still;
+        still.mounting.tilt = between(-1.5707, 1.5707) * whole(0, 1);
+        still.mounting.fins_level = whole(0, 2) == 0;
+        still.mounting.back_exposed = whole(0, 1) == 1;
+        if (!still.mounting.back_exposed && whole(0, 1) == 1) {
+            still.mounting.wall_conductance = log_between(0.01, 3.0);
+            still.mounting.wall_temperature = d.surroundings.air_temperature + between(0.0, 3.0);
+        }
+        if (whole(0, 1) == 1)
+            still.drift = job::Drift{log_between(0.02, 0.9), job::Drift::Direction(whole(0, 2))};
+        if (whole(0, 1) == 1) still.sun = job::Sun{between(50.0, 1100.0), between(0.1, 0.95)};
+        if (whole(0, 1) == 1)
+            d.surroundings.radiating_temperature =
+                d.surroundings.air_temperature + between(-3.0, 15.0);
+        d.surroundings.air = still;
+        return d;
+    }
+
     sink::Duty ducted(const sink::Geometry<double>& g) {
         sink::Duty d = duty(g);
         d.surroundings.air = sink::DuctVelocity{log_between(0.5, 12.0)};

@@ -1,0 +1,137 @@
+#include "correlations/natural_inclined.hpp"
+
+#include "correlations/registry.hpp"
+#include <numbers>
+
+namespace finwright::correlations {
+
+using In = std::span<const double>;
+
+namespace {
+
+const Symbol gap{"S", "m", "gap", 1e-3, 0.05};
+const Symbol height{"H", "m", "fin height", 1e-3, 0.3};
+const Symbol length{"L", "m", "length along the fins", 0.02, 1.0};
+const Symbol prandtl{"pr", "-", "Prandtl number", 0.5, 10.0};
+const Symbol array_rayleigh{"ra", "-", "g beta dT S^3/(nu alpha), g square to the base", 200.0,
+                            6e5};
+const Symbol tilt{"tilt", "rad", "of the base from vertical, towards facing up",
+                  -0.5 * std::numbers::pi, 0.5 * std::numbers::pi};
+
+} // namespace
+
+std::vector<Passport> natural_inclined_passports() {
+    return {
+        {"horizontal_array",
+         "fins up on a horizontal base (Jones & Smith)",
+         "jones1970",
+         "Nu = 6.7e-4 Ra (1 - exp(-(7460/Ra)^0.44))^1.7",
+         {"Nu", "-", "h S/k, mean on the wetted area"},
+         {array_rayleigh},
+         "the formula is continued",
+         "about 25 %; holds for lengths near 0.25 m",
+         true,
+         [](In x) { return nusselt_horizontal_array(x[0]); }},
+        {"horizontal_length",
+         "shorter lying arrays breathe better (this project, three solutions)",
+         "none",
+         "greater of 1 and (0.254 m/L)^0.475, L the greater of itself and 0.09 m",
+         {"f", "-", "factor on the horizontal array's film"},
+         {{"L", "m", "length along the fins", 0.08, 0.5}},
+         "shorter arrays gain no more than one of 0.09 m",
+         "10 % on the three solutions; 30 % elsewhere",
+         false,
+         [](In x) { return horizontal_length_factor(x[0]); },
+         true},
+        {"array_facing_down",
+         "fins down: half of fins up, as textbook plates",
+         "none",
+         "Nu = 0.5 x 6.7e-4 Ra (1 - exp(-(7460/Ra)^0.44))^1.7",
+         {"Nu", "-", "h S/k, mean on the wetted area"},
+         {array_rayleigh},
+         "the formula is continued",
+         "50 %",
+         true,
+         [](In x) { return facing_down_share * nusselt_horizontal_array(x[0]); },
+         true},
+        {"level_fins",
+         "fins across gravity: one gap's depth works",
+         "none",
+         "f = (S + 2 S (1 - exp(-H/S)))/(S + 2 H)",
+         {"f", "-", "share of the wetted area that works with the film of the front's plate"},
+         {gap, height},
+         "the formula is continued: shallow ribs keep all, deep ones one gap's depth",
+         "50 %",
+         false,
+         [](In x) { return level_fins_share(x[0], x[1]); },
+         true},
+        {"tilted_array",
+         "array between upright and lying: the greater of both laws",
+         "none",
+         "f = cos(tilt)",
+         {"f", "-", "share of gravity along the channels"},
+         {tilt},
+         "the formula is continued",
+         "30 %; the cosine alone is used up to about 60 deg",
+         true,
+         [](In x) { return std::cos(x[0]); },
+         true},
+        {"inclined_face",
+         "single face at a tilt: the greater of both laws (Raithby & Hollands)",
+         "raithby1998",
+         "h/k = ((Nu_v/L)^8 + (Nu_h/Lc)^8)^(1/8), Lc = area/perimeter",
+         {"h/k", "1/m", "film coefficient over conductivity"},
+         {{"gr", "1/m3", "g beta dT/(nu alpha)", 1e7, 1e11},
+          prandtl,
+          {"L", "m", "extent along the slope", 1e-3, 2.0},
+          {"W", "m", "extent across it", 1e-3, 2.0},
+          tilt},
+         "the formula is continued",
+         "10 % on single faces",
+         false,
+         [](In x) { return inclined_face(x[0], x[1], x[2], x[3], x[4]); }},
+        {"plume_rise",
+         "middle of a laminar plane plume (Gebhart, Pera & Schorr)",
+         "gebhart1970",
+         "dT = N x^-0.6, N^5 = q^4/(64 g beta rho^2 mu^2 cp^4 I^4), I = 1.245",
+         {"dT", "K", "over the air around"},
+         {{"q", "W/m", "heat per length of the source", 1.0, 2000.0},
+          {"x", "m", "height above it", 0.02, 1.0},
+          {"beta", "1/K", "thermal expansion of the air", 2e-3, 5e-3},
+          {"rho", "kg/m3", "density", 0.3, 2.0},
+          {"mu", "Pa s", "dynamic viscosity", 1e-5, 4e-5},
+          {"cp", "J/(kg K)", "specific heat", 900.0, 1200.0}},
+         "the formula is continued",
+         "40 % over a real sink, which is no line; on the high side close to it",
+         true,
+         [](In x) { return plume_rise(x[0], x[1], x[2], x[3], x[4], x[5]); },
+         true},
+        {"drift_in_channel",
+         "velocity a slow drift drives through channels",
+         "none",
+         "rho u^2/2 = 0.75 rho v^2 + 12 mu L v/S^2",
+         {"v", "m/s", "mean velocity between the fins"},
+         {{"u", "m/s", "drift", 0.0, 1.0},
+          {"nu", "m2/s", "kinematic viscosity", 1e-5, 5e-5},
+          gap,
+          length},
+         "the formula is continued",
+         "30 %",
+         false,
+         [](In x) { return drift_in_channel(x[0], x[1], x[2], x[3]); },
+         true},
+        {"mixed_against",
+         "forced against natural flow (Churchill), with a floor",
+         "churchill1977",
+         "h = ((f^3 - n^3)^2 + 0.09 f^3 n^3)^(1/6)",
+         {"h", "W/(m2 K)", "film coefficient of both"},
+         {{"f", "W/(m2 K)", "forced", 0.0, 1e3}, {"n", "W/(m2 K)", "natural", 0.0, 1e3}},
+         "the formula is continued",
+         "40 % where both are about equal; the floor is an estimate",
+         false,
+         [](In x) { return mixed_against(x[0], x[1]); },
+         true},
+    };
+}
+
+} // namespace finwright::correlations
