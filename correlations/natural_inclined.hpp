@@ -8,23 +8,11 @@
 // both are equal).
 
 #include "correlations/natural_face.hpp"
+#include "correlations/numbers/smooth.hpp"
 #include <algorithm>
 #include <cmath>
 
 namespace finwright::correlations {
-
-/// (a^8 + b^8)^(1/8): the greater of two positive quantities, smoothly.
-template <class T>
-T greater_of(const T& a, const T& b) {
-    using std::max, std::sqrt;
-    const T top = max(a, b);
-    const T x = a / top, y = b / top;
-    const auto eighth = [](const T& v) {
-        const T v2 = v * v, v4 = v2 * v2;
-        return T(v4 * v4);
-    };
-    return top * sqrt(sqrt(sqrt(eighth(x) + eighth(y))));
-}
 
 /// Fins up on a horizontal base, mean on all wetted area, on the gap [-]. Jones & Smith 1970 (from
 /// memory, two forms agree to 3 %): Nu = 6.7e-4 Ra (1 - exp(-(7460/Ra)^0.44))^1.7, Ra = g beta dT

@@ -47,6 +47,14 @@ void check_pressure(const Job& job, const Document& d) {
     if (still && job.sink.aim == Aim::pressure_drop)
         d.fail(place_in(d, "sink", "aim"), "still air has no pressure drop to make small",
                "choose another aim", place_in(d, "air", "state"));
+    const auto* stream = std::get_if<StreamAir>(&job.air.state);
+    if (stream && !stream->clearance && job.limits.pressure_drop)
+        d.fail(place_in(d, "limits", "pressure_drop"),
+               "a free stream loses no pressure to a sink: it goes around it",
+               "leave the line out, or state the duct by a clearance", place_in(d, "air", "state"));
+    if (stream && !stream->clearance && job.sink.aim == Aim::pressure_drop)
+        d.fail(place_in(d, "sink", "aim"), "a free stream has no pressure drop to make small",
+               "choose another aim", place_in(d, "air", "state"));
 }
 
 void check_budgets(const Job& job, const Document& d) {

@@ -100,12 +100,43 @@ struct DuctedAir {
     std::optional<double> flow; ///< volume flow at inlet conditions [m3/s]
 };
 
+/// Space left around the fins inside the duct's walls.
+struct Clearance {
+    double above = 0.0;  ///< over the fins' tips [m]
+    double beside = 0.0; ///< on each side [m]
+};
+
+/// Air moving past a sink with room to pass beside it; without a clearance there are no walls.
+struct StreamAir {
+    double velocity = 0.0; ///< before the sink, over the duct's section [m/s]
+    std::optional<Clearance> clearance;
+};
+
+/// A fan's points and how it is run.
+struct Fan {
+    std::string name;
+    std::vector<double> flows;     ///< rising [m3/s]
+    std::vector<double> pressures; ///< static, one for each flow; the last stretch falls [Pa]
+    double density = 1.2;          ///< of the air the curve was measured in [kg/m3]
+    double speed = 1.0;            ///< over that of the curve [-]
+    int count = 1;
+    bool in_series = false;           ///< else in parallel
+    std::optional<double> efficiency; ///< air power over electric power [-]
+};
+
+/// Air driven by a fan through a duct that closes around the fins, or leaves a clearance. Of
+/// several fans the search chooses one.
+struct FanAir {
+    std::vector<Fan> fans;
+    std::optional<Clearance> clearance;
+};
+
 struct Air {
     double temperature = 298.15; ///< at the sink's inlet [K]
     double altitude = 0.0;       ///< [m]
     Mounting mounting;           ///< still air
     Around around;               ///< still air
-    std::variant<StillAir, DuctedAir> state;
+    std::variant<StillAir, DuctedAir, StreamAir, FanAir> state;
 };
 
 struct Space {

@@ -13,6 +13,7 @@ constexpr double fastest_air = 100.0;              // [m/s]
 constexpr double largest_flow = 10.0;              // [m3/s]
 constexpr double fastest_drift = 1.0;              // faster air is a stream [m/s]
 constexpr double brightest_sun = 1500.0;           // [W/m2]
+constexpr double least_clearance = 1e-4;            // tighter is a duct that closes [m]
 constexpr double quarter = 0.5 * std::numbers::pi; // [rad]
 
 double air_temperature(Mapping& m, std::string_view key) {
@@ -183,12 +184,127 @@ DuctedAir read_duct(const Document& d, Mapping& m) {
     return duct;
 }
 
+Clearance read_clearance(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "clearance");
+    m.only({"above", "beside"});
+    Clearance c;
+    if (m.has("above")) c.above = not_negative(d, m, "above", quantity::length);
+    if (m.has("beside")) c.beside = not_negative(d, m, "beside", quantity::length);
+    if (c.above + c.beside < least_clearance)
+        d.fail(node.place, "a clearance leaves at least 0.1 mm above or beside the fins",
+               "write state: ducted where the duct closes around them");
+    return c;
+}
+
+std::optional<Clearance> optional_clearance(const Document& d, Mapping& m) {
+    const TreeNode* node = m.optional("clearance");
+    return node ? std::optional(read_clearance(d, *node)) : std::nullopt;
+}
+
+StreamAir read_stream(const Document& d, Mapping& m) {
+    if (m.has("flow"))
+        m.fail("flow", "a stream is stated by its velocity", "write velocity: 2 m/s");
+    StreamAir stream;
+    stream.velocity = positive(d, m, "velocity", quantity::velocity);
+    if (stream.velocity > fastest_air)
+        m.fail("velocity", fmt::format("{:.0f} m/s is beyond any fan", stream.velocity),
+               "is it ft/min (196.85 of them are 1 m/s)?");
+    stream.clearance = optional_clearance(d, m);
+    return stream;
+}
+
+/// [flow, pressure] pairs.
+void read_curve(const Document& d, const TreeNode& node, Fan& fan) {
+    constexpr const char* form =
+        "write curve: [[0 m3/h, 60 Pa], [30 m3/h, 42 Pa], [55 m3/h, 0 Pa]]";
+    if (node.kind != TreeNode::Kind::sequence || node.items.size() < 2)
+        d.fail(node.place, "a fan curve is a list of at least two points", form);
+    for (const TreeNode& point : node.items) {
+        if (point.kind != TreeNode::Kind::sequence || point.items.size() != 2)
+            d.fail(point.place, "a point of a fan curve is a flow and a pressure", form);
+        const double flow = quantity_of(d, point.items[0], "flow", quantity::volume_flow);
+        const double pressure = quantity_of(d, point.items[1], "pressure", quantity::pressure);
+        if (flow < 0.0 || pressure < 0.0)
+            d.fail(point.place, "flow and pressure of a fan are not negative", form);
+        if (flow > largest_flow)
+            d.fail(point.items[0].place, fmt::format("{:.4g} m3/s is beyond any sink's fan", flow),
+                   "is it m3/h, L/s or cfm?");
+        if (!fan.flows.empty() && flow <= fan.flows.back())
+            d.fail(point.place, "the flows of a fan curve must rise from point to point",
+                   "put the points in order");
+        fan.flows.push_back(flow);
+        fan.pressures.push_back(pressure);
+    }
+    if (fan.flows.front() > 0.0)
+        d.fail(node.items.front().place, "a fan curve begins at no flow",
+               "add the shut-off pressure: [0 m3/h, 60 Pa]");
+    const std::size_t n = fan.pressures.size();
+    if (fan.pressures[n - 1] >= fan.pressures[n - 2])
+        d.fail(node.items.back().place,
+               "the last stretch of a fan curve must fall: towards free delivery pressure goes",
+               "check the last two points");
+    if (fan.pressures.front() <= 0.0)
+        d.fail(node.items.front().place, "a fan gives pressure against no flow",
+               "check the first point");
+}
+
+Fan read_fan(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "a fan");
+    m.only({"name", "curve", "density", "speed", "count", "arrangement", "efficiency"});
+    Fan fan;
+    fan.name = m.text("name");
+    read_curve(d, m.required("curve"), fan);
+    fan.density = optional_positive(d, m, "density", quantity::density).value_or(fan.density);
+    fan.speed = optional_positive(d, m, "speed", quantity::pure).value_or(1.0);
+    if (fan.speed > 2.0)
+        m.fail("speed", "a fan at more than twice the speed of its curve is another fan",
+               "write for example speed: 80 %");
+    if (m.has("count")) fan.count = whole_number(d, m.required("count"), "count");
+    if (fan.count < 1 || fan.count > 16)
+        m.fail("count", "count must be 1 to 16", "write for example count: 2");
+    fan.in_series = read_one_of(m, "arrangement", "parallel", "series");
+    fan.efficiency = optional_positive(d, m, "efficiency", quantity::pure);
+    if (fan.efficiency && *fan.efficiency > 0.9)
+        m.fail("efficiency", "no small fan turns more than nine tenths into air power",
+               "write for example efficiency: 25 %");
+    return fan;
+}
+
+FanAir read_fans(const Document& d, Mapping& m) {
+    for (const char* key : {"velocity", "flow"})
+        if (m.has(key))
+            m.fail(key, fmt::format("the fan decides the {}", key),
+                   "leave the line out, or write state: ducted", m.place_of("state"));
+    const TreeNode& list = m.required("fans");
+    if (list.kind != TreeNode::Kind::sequence || list.items.empty())
+        d.fail(list.place, "fans must be a list of at least one fan",
+               "write '- name: ...' lines below it");
+    FanAir air;
+    for (const TreeNode& item : list.items) {
+        air.fans.push_back(read_fan(d, item));
+        for (std::size_t i = 0; i + 1 < air.fans.size(); ++i)
+            if (air.fans[i].name == air.fans.back().name)
+                d.fail(item.place, fmt::format("there are two fans named '{}'", air.fans[i].name),
+                       "give each its own name");
+    }
+    air.clearance = optional_clearance(d, m);
+    return air;
+}
+
+void refuse_keys(Mapping& m, std::initializer_list<const char*> keys, const char* state) {
+    for (const char* key : keys)
+        if (m.has(key))
+            m.fail(key, fmt::format("{} does not go with air state {}", key, state),
+                   "leave the line out, or change the state", m.place_of("state"));
+}
+
 } // namespace
 
 Air read_air(const Document& d, const TreeNode& node, const TreeNode* mounting,
              const TreeNode* around) {
     Mapping m(d, node, "air");
-    m.only({"state", "temperature", "altitude", "velocity", "flow", "channel_law", "drift"});
+    m.only({"state", "temperature", "altitude", "velocity", "flow", "channel_law", "drift",
+            "clearance", "fans"});
     Air air;
     air.temperature = air_temperature(m, "temperature");
     air.altitude = m.optional_number("altitude", quantity::length).value_or(0.0);
@@ -196,17 +312,27 @@ Air read_air(const Document& d, const TreeNode& node, const TreeNode* mounting,
         m.fail("altitude", "the altitude lies outside -430 to 11 000 m", "check the unit: m or ft");
     const std::string state = m.text("state");
     if (state == "still") {
+        refuse_keys(m, {"clearance", "fans"}, "still");
         air.state = read_still(d, m);
         if (mounting) air.mounting = read_mounting(d, *mounting);
         if (around) air.around = read_around(d, *around);
         return air;
     }
     refuse_still_keys(m);
-    if (state != "ducted")
-        m.fail("state", fmt::format("air state '{}' is not known", state), "write still or ducted");
     refuse_for_moving_air(d, mounting, "mounting", m.place_of("state"));
     refuse_for_moving_air(d, around, "around", m.place_of("state"));
-    air.state = read_duct(d, m);
+    if (state == "ducted") {
+        refuse_keys(m, {"clearance", "fans"}, "ducted, which closes around the fins");
+        air.state = read_duct(d, m);
+    } else if (state == "stream") {
+        refuse_keys(m, {"fans"}, "stream");
+        air.state = read_stream(d, m);
+    } else if (state == "fan") {
+        air.state = read_fans(d, m);
+    } else {
+        m.fail("state", fmt::format("air state '{}' is not known", state),
+               "write still, ducted, stream or fan");
+    }
     return air;
 }
 

@@ -6,7 +6,6 @@
 #include "src/job/nearest_word.hpp"
 #include "src/job/read_air.hpp"
 #include "src/job/read_numbers.hpp"
-#include <charconv>
 #include <cmath>
 #include <fmt/format.h>
 #include <numbers>
@@ -26,17 +25,6 @@ constexpr double highest_fin = 1.0;                                             
 constexpr double hottest_junction = 873.15;                                       // 600 degC [K]
 constexpr double steepest_draft = 5.0 * std::numbers::pi / 180.0 * (1.0 + 1e-12); // [rad]
 constexpr double largest_power = 2e4;                                             // of one part [W]
-
-int whole_number(const Document& d, const TreeNode& node, const std::string& what) {
-    int value = 0;
-    const auto* begin = node.text.data();
-    const auto* end = begin + node.text.size();
-    const auto [stop, error] = std::from_chars(begin, end, value);
-    if (node.kind != TreeNode::Kind::scalar || error != std::errc{} || stop != end)
-        d.fail(node.place, fmt::format("{} must be a whole number", what),
-               fmt::format("write for example {}: 12", what));
-    return value;
-}
 
 // ---- parts ----
 

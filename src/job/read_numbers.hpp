@@ -12,4 +12,6 @@ std::optional<double> optional_positive(const Document& d, Mapping& m, std::stri
                                         const QuantityKind& kind);
 double not_negative(const Document& d, Mapping& m, std::string_view key, const QuantityKind& kind);
 
+int whole_number(const Document& d, const TreeNode& node, const std::string& what);
+
 } // namespace finwright::job

@@ -191,7 +191,7 @@ std::string key_line(const Rating& rating, const Job& job) {
         grams(rating.mass), significant(rating.sink_resistance(), 3),
         fixed(rating.hottest_pad_rise, 1), significant(rating.base_resistance(), 3));
     if (!std::holds_alternative<job::StillAir>(job.air.state)) {
-        const auto& view = std::get<sink::DuctedAirView<double>>(rating.view);
+        const auto& view = std::get<sink::MovingAirView<double>>(rating.view);
         text += fmt::format(
             "; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
             significant(rating.pressure_drop, 3), significant(view.channel_velocity, 3),
@@ -230,7 +230,7 @@ std::string heat_split(const Rating& rating) {
             "wetted channel area",
             significant(still->channel_film, 3), significant(still->outer_film, 3),
             fixed(still->inner_efficiency, 3), significant(still->channel_radiation, 3)));
-    if (const auto* duct = std::get_if<sink::DuctedAirView<double>>(&rating.view))
+    if (const auto* duct = std::get_if<sink::MovingAirView<double>>(&rating.view))
         out += paragraph(
             fmt::format("film {} W/(m² K); fin efficiency {}; Re {} on the hydraulic diameter",
                         significant(duct->film, 3), fixed(duct->inner_efficiency, 3),

@@ -59,7 +59,7 @@ Json view_json(const sink::StillAirView<double>& v) {
             {"outer_fin_efficiency", v.outer_efficiency}};
 }
 
-Json view_json(const sink::DuctedAirView<double>& v) {
+Json view_json(const sink::MovingAirView<double>& v) {
     return {{"air", "ducted"},
             {"film_temperature_K", v.film_temperature},
             {"approach_velocity_m_s", v.approach_velocity},

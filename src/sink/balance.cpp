@@ -1,6 +1,6 @@
 #include "src/sink/balance.hpp"
 
-#include "src/sink/ducted_air.hpp"
+#include "src/sink/moving_air.hpp"
 #include "src/sink/still_air.hpp"
 #include <boost/math/tools/toms748_solve.hpp>
 #include <cmath>
@@ -20,7 +20,7 @@ constexpr double least_rise = 1e-3; // [K]
 template <class T, class Visitor>
 auto with_model(const Geometry<T>& g, const Duty& duty, Visitor&& visit) {
     if (duty.surroundings.still()) return visit(StillAirSink<T>(g, duty));
-    return visit(DuctedSink<T>(g, duty));
+    return visit(MovingAirSink<T>(g, duty));
 }
 
 /// ln(heat/shed), continued in a straight line where a warm wall or surroundings leave too little
@@ -104,6 +104,7 @@ Geometry<double> plain(const Geometry<T>& g) {
 }
 template Geometry<double> plain(const Geometry<double>&);
 template Geometry<double> plain(const Geometry<Dual<5>>&);
+template Geometry<double> plain(const Geometry<Dual<6>>&);
 
 HeatPaths<double> shed(const Geometry<double>& g, const Duty& duty, double driving_rise) {
     require_room(g);

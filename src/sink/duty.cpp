@@ -15,14 +15,15 @@ double Duty::power() const {
 
 namespace {
 
-std::variant<StillAir, DuctVelocity, DuctFlow> air_of(const job::Air& air) {
-    const auto* duct = std::get_if<job::DuctedAir>(&air.state);
-    if (!duct) {
-        const auto& still = std::get<job::StillAir>(air.state);
-        return StillAir{still.channel_law, air.mounting, still.drift, air.around.sun};
-    }
-    if (duct->velocity) return DuctVelocity{*duct->velocity};
-    return DuctFlow{duct->flow.value()};
+decltype(Surroundings::air) air_of(const job::Air& air) {
+    if (const auto* still = std::get_if<job::StillAir>(&air.state))
+        return StillAir{still->channel_law, air.mounting, still->drift, air.around.sun};
+    if (const auto* stream = std::get_if<job::StreamAir>(&air.state)) return *stream;
+    if (const auto* driven = std::get_if<job::FanAir>(&air.state))
+        return FanDriven{driven->fans.front(), driven->clearance};
+    const auto& duct = std::get<job::DuctedAir>(air.state);
+    if (duct.velocity) return DuctVelocity{*duct.velocity};
+    return DuctFlow{duct.flow.value()};
 }
 
 /// The plume of a sink below, with what its law is given.

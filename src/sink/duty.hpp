@@ -30,11 +30,18 @@ struct DuctFlow {
     double volume = 0.0; ///< at inlet temperature and pressure [m3/s]
 };
 
+/// A stream past the sink, or a fan that drives one.
+using Stream = job::StreamAir;
+struct FanDriven {
+    job::Fan fan;
+    std::optional<job::Clearance> clearance;
+};
+
 struct Surroundings {
     double air_temperature = 298.15;             ///< at the inlet [K]
     std::optional<double> radiating_temperature; ///< of what the surfaces see; default the air [K]
     double pressure = 101325.0;                  ///< [Pa]
-    std::variant<StillAir, DuctVelocity, DuctFlow> air;
+    std::variant<StillAir, DuctVelocity, DuctFlow, Stream, FanDriven> air;
 
     bool still() const { return std::holds_alternative<StillAir>(air); }
 };

@@ -80,7 +80,7 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
     return uses;
 }
 
-std::vector<LawUse> ducted_air_laws(const DuctedAirView<double>& v, const Geometry<double>& g) {
+std::vector<LawUse> ducted_air_laws(const MovingAirView<double>& v, const Geometry<double>& g) {
     const double length_ratio = g.length / v.hydraulic_diameter;
     return {{"air_conductivity", "air in the film", {v.film_temperature}},
             {"duct_all_regimes", "channels", {v.reynolds, v.prandtl, v.aspect, length_ratio}},
@@ -98,7 +98,7 @@ void rate_air(Rating& rating, const Duty& duty, double driving_rise) {
         rating.view = view;
         return;
     }
-    const DuctedSink<double> model(g, duty);
+    const MovingAirSink<double> model(g, duty);
     const auto view = model.view(driving_rise);
     rating.laws = ducted_air_laws(view, g);
     rating.view = view;
@@ -143,8 +143,10 @@ std::vector<double> powers_of(const Duty& duty) {
 } // namespace
 
 double Rating::outlet_temperature() const {
-    const auto* duct = std::get_if<DuctedAirView<double>>(&view);
-    return duct ? air_temperature + power / duct->capacity_flow : air_temperature;
+    const auto* moving = std::get_if<MovingAirView<double>>(&view);
+    if (!moving) return air_temperature;
+    const double whole = moving->capacity_flow * moving->volume_flow / moving->entering_flow;
+    return air_temperature + power / whole;
 }
 
 correlations::ModeSet modes_up_to(double half_waves, const Geometry<double>& g, const Duty& duty) {

@@ -5,8 +5,8 @@
 #include "correlations/numbers/dual.hpp"
 #include "correlations/spreading.hpp"
 #include "src/sink/balance.hpp"
-#include "src/sink/ducted_air.hpp"
 #include "src/sink/law_use.hpp"
+#include "src/sink/moving_air.hpp"
 #include "src/sink/still_air.hpp"
 #include <optional>
 #include <string>
@@ -41,7 +41,7 @@ struct Rating {
     double pressure_drop = 0.0; ///< [Pa]
     HeatPaths<double> heat;     ///< [W]
     double sun = 0.0;           ///< taken up besides the parts' power [W]
-    std::variant<StillAirView<double>, DuctedAirView<double>> view;
+    std::variant<StillAirView<double>, MovingAirView<double>> view;
     std::vector<PartRating> parts;
     std::vector<LawUse> laws;
 

@@ -1,6 +1,6 @@
 #include "src/sizing/search_problem.hpp"
 
-#include "src/sink/ducted_air.hpp"
+#include "src/sink/moving_air.hpp"
 #include "src/sink/placing.hpp"
 #include "src/sink/rating.hpp"
 #include <algorithm>

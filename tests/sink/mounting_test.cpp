@@ -19,15 +19,15 @@ constexpr double quarter = 0.5 * std::numbers::pi;
 
 using Change = std::function<void(sink::StillAir&, sink::Surroundings&)>;
 
-sink::Rating rated(const sink::Geometry<double>& g, sink::Duty duty, const Change& change) {
+sink::Duty changed(sink::Duty duty, const Change& change) {
     sink::StillAir still;
     change(still, duty.surroundings);
     duty.surroundings.air = still;
-    return sink::rate(g, duty);
+    return duty;
 }
 
 double rise(const sink::Geometry<double>& g, const sink::Duty& duty, const Change& change) {
-    return rated(g, duty, change).base_rise;
+    return sink::balance(g, changed(duty, change)).base_rise;
 }
 
 } // namespace
@@ -167,7 +167,7 @@ TEST_CASE("every estimate that enters a rating is named in it") {
     const auto duty = random.duty(g);
     const auto estimates = [&](const Change& change) {
         int count = 0;
-        for (const auto& use : rated(g, duty, change).laws)
+        for (const auto& use : sink::rate(g, changed(duty, change)).laws)
             count += correlations::find_passport(use.passport)->estimate ? 1 : 0;
         return count;
     };

@@ -76,6 +76,24 @@ public:
         return d;
     }
 
+    /// A stream past the sink or a fan, with a bypass or without.
+    sink::Duty driven(const sink::Geometry<double>& g) {
+        sink::Duty d = duty(g);
+        std::optional<job::Clearance> clearance;
+        if (whole(0, 2) > 0) clearance = job::Clearance{between(1e-3, 0.04), between(0.0, 0.02)};
+        if (whole(0, 1) == 0) {
+            d.surroundings.air = sink::Stream{log_between(0.5, 12.0), clearance};
+            return d;
+        }
+        job::Fan fan;
+        fan.name = "fan";
+        const double flow = log_between(2e-3, 5e-2), pressure = log_between(15.0, 200.0);
+        fan.flows = {0.0, 0.4 * flow, 0.7 * flow, flow};
+        fan.pressures = {pressure, 0.75 * pressure, 0.5 * pressure, 0.0};
+        d.surroundings.air = sink::FanDriven{fan, clearance};
+        return d;
+    }
+
 private:
     std::mt19937 engine_;
 };

@@ -167,7 +167,7 @@ TEST_CASE("a flow without a pressure limit still gives air a fan could move") {
     job.limits.pressure_drop.reset();
     job.air.state = job::DuctedAir{std::nullopt, 40.0 / 3600.0};
     const auto answer = answered(job);
-    const auto& view = std::get<sink::DuctedAirView<double>>(answer.rating.view);
+    const auto& view = std::get<sink::MovingAirView<double>>(answer.rating.view);
     CHECK(view.channel_velocity <= 30.0 + 1e-6);
 }
 
