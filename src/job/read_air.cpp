@@ -13,7 +13,7 @@ constexpr double fastest_air = 100.0;              // [m/s]
 constexpr double largest_flow = 10.0;              // [m3/s]
 constexpr double fastest_drift = 1.0;              // faster air is a stream [m/s]
 constexpr double brightest_sun = 1500.0;           // [W/m2]
-constexpr double least_clearance = 1e-4;            // tighter is a duct that closes [m]
+constexpr double least_clearance = 1e-4;           // tighter is a duct that closes [m]
 constexpr double quarter = 0.5 * std::numbers::pi; // [rad]
 
 double air_temperature(Mapping& m, std::string_view key) {

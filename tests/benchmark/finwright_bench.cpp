@@ -1,7 +1,9 @@
-// What a rating, its derivatives, the spreading series and a whole search cost. Run it with
+// What a rating, its derivatives, the spreading series, a base map and a whole search cost. Run it
+// with
 //   --benchmark_repetitions=9 --benchmark_report_aggregates_only=true
 // and quote medians; the table in docs/performance.md is made that way.
 #include "src/job/read_job.hpp"
+#include "src/sink/base_map.hpp"
 #include "src/sink/rating.hpp"
 #include "src/sizing/sizing.hpp"
 #include "src/sizing/spreading_model.hpp"
@@ -82,6 +84,17 @@ void whole_rating(benchmark::State& state, const char* name) {
         benchmark::DoNotOptimize(sink::rate(g, duty));
 }
 
+void base_map(benchmark::State& state, const char* name) {
+    const auto duty = sink::duty_of(demo(name));
+    const auto g = typical();
+    const auto map = sink::base_map(g, duty, sink::rate(g, duty));
+    for (auto _ : state)
+        benchmark::DoNotOptimize(sink::base_field(map));
+    const auto field = sink::base_field(map);
+    state.counters["across"] = field.across.cells();
+    state.counters["along"] = field.along.cells();
+}
+
 void size_demo(benchmark::State& state, const char* name) {
     const auto job = demo(name);
     for (auto _ : state)
@@ -127,6 +140,8 @@ BENCHMARK_CAPTURE(spreading_in_search, three_pads, pump)->Unit(benchmark::kMicro
 BENCHMARK_CAPTURE(spreading_in_search, one_pad, bench)->Unit(benchmark::kMicrosecond);
 BENCHMARK_CAPTURE(whole_rating, still, pump)->Unit(benchmark::kMicrosecond);
 BENCHMARK_CAPTURE(whole_rating, ducted, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK_CAPTURE(base_map, still_three_pads, pump)->Unit(benchmark::kMillisecond);
+BENCHMARK_CAPTURE(base_map, ducted_one_pad, bench)->Unit(benchmark::kMillisecond);
 BENCHMARK_CAPTURE(size_demo, pump_controller, pump)->Unit(benchmark::kMillisecond);
 BENCHMARK_CAPTURE(size_demo, bench_supply, bench)->Unit(benchmark::kMillisecond);
 BENCHMARK_CAPTURE(search_random, still, &tests::RandomJobs::still)
