@@ -113,6 +113,20 @@ std::vector<Passport> forced_convection_passports() {
          "2 %",
          false,
          [](In x) { return nusselt_flat_plate(x[0], x[1]); }},
+        {"air_split",
+         "air between fins with room beside them (this project)",
+         "finwright2026",
+         "m = r/(1 + r), r^2 = e/(1 - e) x/(1 - x); e by areas, x by one static pressure at the "
+         "exit",
+         {"m", "-", "mean share of the air between the fins"},
+         {{"e", "-", "share entering", 0.0, 1.0}, {"x", "-", "share leaving", 0.0, 1.0}},
+         "the formula is continued",
+         "6 % against eleven reference solutions (docs/validation.md)",
+         false,
+         [](In x) {
+             const double r = std::sqrt(x[0] / (1.0 - x[0]) * x[1] / (1.0 - x[1]));
+             return r / (1.0 + r);
+         }},
     };
 }
 

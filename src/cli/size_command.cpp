@@ -13,15 +13,15 @@ int size_command(const JobCommand& command) {
     if (command.json_file) refuse_same_file(*command.json_file, command.job_file);
     const job::Job job = job::read_job(command.job_file);
     const sizing::Sizing sizing = sizing::size(job);
-    if (command.json_file)
-        write_whole(
-            *command.json_file,
-            std::visit([&](const auto& s) { return sheets::results_json(job, s); }, sizing));
     if (const auto* refusal = std::get_if<sizing::Refusal>(&sizing)) {
+        if (command.json_file) write_whole(*command.json_file, sheets::results_json(job, *refusal));
         fmt::print("{}", sheets::refusal_page(job, *refusal));
         return impossible_job;
     }
-    fmt::print("{}", sheets::size_page(job, std::get<sizing::Answer>(sizing)));
+    const auto& answer = std::get<sizing::Answer>(sizing);
+    const job::Job answered = sizing::as_answered(job, answer);
+    if (command.json_file) write_whole(*command.json_file, sheets::results_json(answered, answer));
+    fmt::print("{}", sheets::size_page(answered, answer));
     return done;
 }
 

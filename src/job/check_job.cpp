@@ -267,6 +267,10 @@ void check_sized_job(const Job& job, const Document& document) {
 }
 
 void check_rated_job(const Job& job, const Document& document) {
+    const auto* driven = std::get_if<FanAir>(&job.air.state);
+    if (driven && driven->fans.size() > 1)
+        document.fail(place_in(document, "air", "fans"), "a rating is made with one fan",
+                      "leave the one the sink is rated with; finwright size chooses among several");
     check_pressure(job, document);
     check_width_sum(job, document);
     check_pads(job, document, {});

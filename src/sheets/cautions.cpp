@@ -71,19 +71,31 @@ std::string worn(const job::Job& job, const Rating& rating) {
                        fixed(std::abs(least), 1));
 }
 
+void slow_down(sink::StillAir&) {}
+void slow_down(sink::DuctVelocity& air) {
+    air.approach *= clogged_flow;
+}
+void slow_down(sink::DuctFlow& air) {
+    air.volume *= clogged_flow;
+}
+void slow_down(sink::Stream& air) {
+    air.velocity *= clogged_flow;
+}
+void slow_down(sink::FanDriven& air) {
+    air.fan.speed *= clogged_flow;
+}
+
 std::string fan_loss(const job::Job& job, const Rating& rating) {
     sink::Duty clogged = sink::duty_of(job);
-    if (auto* velocity = std::get_if<sink::DuctVelocity>(&clogged.surroundings.air))
-        velocity->approach *= clogged_flow;
-    if (auto* flow = std::get_if<sink::DuctFlow>(&clogged.surroundings.air))
-        flow->volume *= clogged_flow;
+    std::visit([](auto& air) { slow_down(air); }, clogged.surroundings.air);
     sink::Duty stopped = clogged;
     stopped.surroundings.air = sink::StillAir{};
     const Rating at_clogged = sink::rate(rating.geometry, clogged);
     const Rating at_stopped = sink::rate(rating.geometry, stopped);
     return fmt::format(
-        "Fans fail and filters clog. At 70 % of the flow: {}{}. With the fan stopped, even free of "
+        "Fans fail and filters clog. At 70 % of the {}: {}{}. With the fan stopped, even free of "
         "its duct with fins vertical: {}. Interlock or derate if that is too hot.",
+        std::holds_alternative<job::FanAir>(job.air.state) ? "fan's speed" : "flow",
         hottest_junction(at_clogged),
         least_headroom(at_clogged) < 0.0 ? ", above what is allowed" : "",
         hottest_junction(at_stopped));

@@ -72,6 +72,37 @@ std::string still_air_words(const job::Air& air) {
     return text;
 }
 
+std::string clearance_words(const std::optional<job::Clearance>& clearance) {
+    if (!clearance) return "";
+    return fmt::format(", {} mm free above the fins and {} mm on each side",
+                       millimetres(clearance->above), millimetres(clearance->beside));
+}
+
+std::string fan_words(const job::Fan& fan) {
+    std::string text = fan.count == 1 ? fan.name
+                                      : fmt::format("{} x {} in {}", fan.count, fan.name,
+                                                    fan.in_series ? "series" : "parallel");
+    if (fan.speed != 1.0) text += fmt::format(" at {} % speed", percent(fan.speed));
+    return text;
+}
+
+std::string moving_air_words(const job::Air& air) {
+    if (const auto* duct = std::get_if<job::DuctedAir>(&air.state)) {
+        if (duct->velocity)
+            return fmt::format("ducted, {} m/s before the fins", significant(*duct->velocity, 3));
+        return fmt::format("ducted, {} m³/h", significant(duct->flow.value() * 3600.0, 3));
+    }
+    if (const auto* stream = std::get_if<job::StreamAir>(&air.state))
+        return fmt::format("{} of {} m/s", stream->clearance ? "stream" : "free stream",
+                           significant(stream->velocity, 3)) +
+               clearance_words(stream->clearance);
+    const auto& driven = std::get<job::FanAir>(air.state);
+    std::string names;
+    for (const job::Fan& fan : driven.fans)
+        names += (names.empty() ? "" : " or ") + fan_words(fan);
+    return "driven by " + names + clearance_words(driven.clearance);
+}
+
 std::string warmed_by(const Job& job) {
     if (!job.air.around.sink_below) return "";
     return fmt::format(" ({} °C warmed by the sink below)", celsius(job.air.temperature));
@@ -81,14 +112,10 @@ std::string air_line(const Job& job) {
     std::string text = fmt::format(
         "air {} °C{} at {} m ({} kPa)", celsius(sink::inlet_temperature(job)), warmed_by(job),
         fixed(job.air.altitude, 0), fixed(sink::duty_of(job).surroundings.pressure / 1e3, 1));
-    if (const auto* duct = std::get_if<job::DuctedAir>(&job.air.state)) {
-        if (duct->velocity)
-            text +=
-                fmt::format(", ducted, {} m/s before the fins", significant(*duct->velocity, 3));
-        if (duct->flow)
-            text += fmt::format(", ducted, {} m³/h", significant(*duct->flow * 3600.0, 3));
-    } else {
+    if (std::holds_alternative<job::StillAir>(job.air.state)) {
         text += ", " + still_air_words(job.air);
+    } else {
+        text += ", " + moving_air_words(job.air);
     }
     return text;
 }
@@ -185,25 +212,54 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     return heading("Dimensions (derived values in brackets)") + table.text();
 }
 
+/// Where a fan runs: power by the air it moves, noise by the similarity law.
+std::string fan_lines(const job::Fan& fan, const sink::MovingAirView<double>& v) {
+    const double air_power = v.pressure_drop * v.volume_flow;
+    std::string text =
+        fmt::format("{} runs at {} m³/h against {} Pa: {} mW of air power", fan_words(fan),
+                    significant(v.volume_flow * 3600.0, 3), significant(v.pressure_drop, 3),
+                    significant(air_power * 1e3, 3));
+    if (fan.efficiency)
+        text += fmt::format(", about {} W electric at {} %",
+                            significant(air_power / *fan.efficiency, 2), percent(*fan.efficiency));
+    const double louder = sink::relative_sound(fan);
+    if (std::abs(louder) >= 0.05)
+        text += fmt::format("; {:+.1f} dB sound power against one fan at its curve's speed "
+                            "(relative, by the similarity law)",
+                            louder);
+    return paragraph(text + ".");
+}
+
+/// How the air gets through, and what drives it.
+std::string air_path(const Job& job, const Rating& rating, const sink::MovingAirView<double>& v) {
+    std::string page;
+    if (std::holds_alternative<job::DuctedAir>(job.air.state))
+        page += paragraph(fmt::format(
+            "The duct is taken to close around the fins: {} x {} mm. Air that can pass beside them "
+            "is lost to them and not counted here.",
+            millimetres(rating.geometry.width()), millimetres(rating.geometry.height)));
+    if (v.bypass_exit_flow > 0.0)
+        page += paragraph(fmt::format(
+            "Of the air {} % enters between the fins and {} % leaves there; the rest "
+            "passes beside them.",
+            percent(v.entering_flow / v.volume_flow), percent(v.exit_flow / v.volume_flow)));
+    if (const auto* driven = std::get_if<job::FanAir>(&job.air.state))
+        page += fan_lines(driven->fans.front(), v);
+    return page;
+}
+
 std::string key_line(const Rating& rating, const Job& job) {
     std::string text = fmt::format(
         "{} g; {} °C/W at {} K rise of the hottest pad over inlet air (mean base {} °C/W)",
         grams(rating.mass), significant(rating.sink_resistance(), 3),
         fixed(rating.hottest_pad_rise, 1), significant(rating.base_resistance(), 3));
-    if (!std::holds_alternative<job::StillAir>(job.air.state)) {
-        const auto& view = std::get<sink::MovingAirView<double>>(rating.view);
-        text += fmt::format(
-            "; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
-            significant(rating.pressure_drop, 3), significant(view.channel_velocity, 3),
-            significant(view.volume_flow * 3600.0, 3), celsius(rating.outlet_temperature()));
-    }
-    std::string page = paragraph(text);
-    if (!std::holds_alternative<job::StillAir>(job.air.state))
-        page += paragraph(fmt::format(
-            "The duct is taken to close around the fins: {} x {} mm. Air that can pass beside them "
-            "is lost to them and not counted here.",
-            millimetres(rating.geometry.width()), millimetres(rating.geometry.height)));
-    return page;
+    const auto* moving = std::get_if<sink::MovingAirView<double>>(&rating.view);
+    if (!moving) return paragraph(text);
+    text += fmt::format(
+        "; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
+        significant(rating.pressure_drop, 3), significant(moving->channel_velocity, 3),
+        significant(moving->volume_flow * 3600.0, 3), celsius(rating.outlet_temperature()));
+    return paragraph(text) + air_path(job, rating, *moving);
 }
 
 std::string heat_split(const Rating& rating) {
@@ -435,14 +491,43 @@ std::string rounding_line(const Answer& answer, const Job& job) {
         aim_text(job.sink.aim, answer.least_aim)));
 }
 
+std::string fan_choice(const Answer& answer, const Job& job) {
+    if (answer.fans.empty()) return {};
+    std::string others;
+    for (std::size_t i = 0; i < answer.fans.size(); ++i) {
+        if (i == answer.fan) continue;
+        const auto& fan = answer.fans[i];
+        others += fmt::format("{}{}: {}", others.empty() ? "" : ", ", fan.name,
+                              fan.aim ? aim_text(job.sink.aim, *fan.aim) : "no design");
+    }
+    return paragraph(fmt::format("Of {} fans {} leads to the least {} ({}). The others: {}.",
+                                 answer.fans.size(), answer.fans[answer.fan].name,
+                                 aim_name(job.sink.aim),
+                                 aim_text(job.sink.aim, answer.design.rounded_aim), others));
+}
+
+/// What parts downstream were granted for the air the others warm.
+std::string warmed_line(const Answer& answer, const Job& job) {
+    std::string parts;
+    for (std::size_t i = 0; i < answer.warmed.size(); ++i)
+        if (std::abs(answer.warmed[i]) >= 0.05)
+            parts += fmt::format("{}{} {:+.1f} K", parts.empty() ? "" : ", ", job.parts[i].name,
+                                 answer.warmed[i]);
+    if (parts.empty()) return {};
+    return paragraph("Against air of one temperature, the air as the parts warm it shifts their "
+                     "bases by: " +
+                     parts + ". The limits of the search allow for it.");
+}
+
 } // namespace
 
 std::string size_page(const Job& job, const Answer& answer) {
     return title_lines(job) + heading("The sink") + key_line(answer.rating, job) +
-           rounding_line(answer, job) + dimension_table(job, answer.rating.geometry) +
-           budget(job, answer.rating) + heat_split(answer.rating) +
-           binding_table(job, answer.binding) + alternatives_table(job, answer) +
-           laws_used(job, answer.rating) + caution_list(job, answer.rating);
+           rounding_line(answer, job) + fan_choice(answer, job) + warmed_line(answer, job) +
+           dimension_table(job, answer.rating.geometry) + budget(job, answer.rating) +
+           heat_split(answer.rating) + binding_table(job, answer.binding) +
+           alternatives_table(job, answer) + laws_used(job, answer.rating) +
+           caution_list(job, answer.rating);
 }
 
 std::string rate_page(const Job& job, const Rating& rating) {

@@ -60,10 +60,15 @@ Json view_json(const sink::StillAirView<double>& v) {
 }
 
 Json view_json(const sink::MovingAirView<double>& v) {
-    return {{"air", "ducted"},
+    return {{"air", "moving"},
             {"film_temperature_K", v.film_temperature},
             {"approach_velocity_m_s", v.approach_velocity},
             {"channel_velocity_m_s", v.channel_velocity},
+            {"bypass_velocity_m_s", v.bypass_velocity},
+            {"flow_entering_channels_m3_s", v.entering_flow},
+            {"flow_leaving_channels_m3_s", v.exit_flow},
+            {"air_power_W", v.pressure_drop * v.volume_flow},
+            {"outer_film_W_m2K", v.outer_film},
             {"volume_flow_m3_s", v.volume_flow},
             {"hydraulic_diameter_m", v.hydraulic_diameter},
             {"reynolds", v.reynolds},

@@ -1,7 +1,6 @@
 #include "src/sink/base_map.hpp"
 
 #include "src/sink/conductance_band.hpp"
-#include "src/sink/placing.hpp"
 #include <Eigen/Dense>
 #include <algorithm>
 #include <cmath>
@@ -228,35 +227,11 @@ double air_rise(const WarmingAir&) {
     return 0.0;
 }
 
-/// Film that holds the mean rise, under the parts' power and the sun on the fins.
-UniformFilm film_of(const Rating& rating, double footprint) {
-    const double film = (rating.power + rating.sun) / (rating.base_rise * footprint);
-    return {film, rating.sun / (film * footprint)};
-}
-
-/// The channels' air. What outer faces and tips give to the air beside them counts as more of it.
-WarmingAir warming(const MovingAirView<double>& v, const Rating& rating) {
-    const double taken = rating.heat.channels / (v.capacity_flow * rating.base_rise);
-    return {v.capacity_flow * rating.heat.total() / rating.heat.channels, -std::log1p(-taken)};
-}
-
 std::vector<double> listed(const MatrixXd& values) {
     return {values.data(), values.data() + values.size()};
 }
 
 } // namespace
-
-BaseMap base_map(const Geometry<double>& g, const Duty& duty, const Rating& rating) {
-    BaseMap map{g.width(), g.length, g.base, duty.material.conductivity, {}, {}, {}};
-    map.pads = pads_on_base(duty.parts, map.width, map.length);
-    for (const job::Part& part : duty.parts)
-        map.powers.push_back(part.power);
-    if (const auto* moving = std::get_if<MovingAirView<double>>(&rating.view))
-        map.air = warming(*moving, rating);
-    else
-        map.air = film_of(rating, g.footprint());
-    return map;
-}
 
 BaseField base_field(const BaseMap& map, const MapCells& cells) {
     const Side x = side_across(map, cells), y = side_along(map, cells);

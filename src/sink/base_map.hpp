@@ -22,7 +22,6 @@
 
 #include "correlations/spreading.hpp"
 #include "src/sink/grid_axis.hpp"
-#include "src/sink/rating.hpp"
 #include <variant>
 #include <vector>
 
@@ -86,11 +85,6 @@ private:
         return std::size_t(i) + std::size_t(j) * std::size_t(across.cells());
     }
 };
-
-/// The base of a rated sink: in still air one film that holds the rating's mean rise, the sun
-/// falling on the fins evenly; in a duct a stream with the rating's transfer units and capacity
-/// flow.
-BaseMap base_map(const Geometry<double>& g, const Duty& duty, const Rating& rating);
 
 /// Throws std::domain_error if a pad reaches beyond the base.
 BaseField base_field(const BaseMap& map, const MapCells& cells = {});

@@ -1,6 +1,7 @@
 #include "src/sink/fan_curve.hpp"
 
 #include <algorithm>
+#include <cmath>
 #include <math.h> // the interpolator expects isnan in the global namespace
 //
 #include <boost/math/interpolators/pchip.hpp>
@@ -76,6 +77,10 @@ double FanCurve::slope(double flow) const {
 
 double FanCurve::free_delivery() const {
     return flow_scale_ * points_->free_delivery;
+}
+
+double relative_sound(const job::Fan& fan) {
+    return 50.0 * std::log10(fan.speed) + 10.0 * std::log10(double(fan.count));
 }
 
 } // namespace finwright::sink

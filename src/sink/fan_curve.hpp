@@ -40,4 +40,8 @@ private:
     bool falls_;
 };
 
+/// Sound power of the group against one fan at the speed of its curve [dB]: 50 lg(speed) + 10
+/// lg(number); from memory, common practice. Relative only.
+double relative_sound(const job::Fan& fan);
+
 } // namespace finwright::sink

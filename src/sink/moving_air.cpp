@@ -19,6 +19,7 @@ constexpr int newton_steps = 60;
 constexpr double newton_tolerance = 1e-12;
 constexpr double longest_step = 0.7; // of the logarithm of a flow
 constexpr double settled = 1e-9;
+constexpr double slopes_serve = 0.2;  // what a step must leave at most of the imbalance [-]
 constexpr double probe = 1e-6;        // for slopes by central differences, of the same
 constexpr double most_entering = 3.0; // over the mean along the channel [-]
 constexpr int scan_points = 60;       // for the crossing of highest flow on a curve with a dip
@@ -74,8 +75,8 @@ correlations::Dual<N> logarithm_ratio(const correlations::Dual<N>& a,
 template <class T>
 MovingAirSink<T>::MovingAirSink(const Geometry<T>& geometry, const Duty& duty)
     : g_(geometry), surroundings_(duty.surroundings), material_(duty.material),
-      inlet_density_(
-          correlations::air_density(surroundings_.air_temperature, surroundings_.pressure)),
+      power_(duty.power()), inlet_density_(correlations::air_density(surroundings_.air_temperature,
+                                                                     surroundings_.pressure)),
       fin_shape_(fin_shape(geometry, duty.material.conductivity)),
       channels_area_(free_between(geometry)) {
     const T face = g_.width() * g_.height;
@@ -96,7 +97,7 @@ MovingAirSink<T>::MovingAirSink(const Geometry<T>& geometry, const Duty& duty)
     decided_ = closed_ && !fan_;
     if (decided_) return;
     if constexpr (std::is_same_v<T, double>)
-        start_ = first_flow();
+        last_ = {first_flow(), {}}, last_.slopes = slopes(last_.flow, T(0.0));
     else
         plain_ = std::make_shared<MovingAirSink<double>>(plain(geometry), duty);
 }
@@ -109,7 +110,9 @@ auto MovingAirSink<T>::stated_flow() const -> Flow {
 
 template <class T>
 MovingAirView<T> MovingAirSink<T>::view(const T& base_rise) const {
-    return at(decided_ ? stated_flow() : solved(base_rise), base_rise);
+    MovingAirView<T> v = passing(decided_ ? stated_flow() : solved(base_rise), base_rise);
+    convect(v);
+    return v;
 }
 
 /// Half-way between entry and exit. All air enters with one velocity; what is between the fins over
@@ -134,60 +137,63 @@ T MovingAirSink<T>::entering_flow(const MovingAirView<T>& v) const {
                                    T(most_entering * v.channel_flow));
 }
 
+/// What the flow alone decides: velocities, Reynolds numbers and pressures. The density between the
+/// fins is that of their air half-way to taking up all of the power.
 template <class T>
-MovingAirView<T> MovingAirSink<T>::at(const Flow& flow, const T& base_rise) const {
+MovingAirView<T> MovingAirSink<T>::passing(const Flow& flow, const T& base_rise) const {
     using std::max, std::min;
     const T gap = g_.mean_gap();
     MovingAirView<T> v;
     v.base_rise = base_rise;
     v.film_temperature = surroundings_.air_temperature + 0.5 * base_rise;
-    const auto air =
-        correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
-                             surroundings_.pressure);
-    v.volume_flow = flow.total;
-    v.exit_flow = flow.channel;
+    const T held = correlations::clamp(v.film_temperature, coldest_film, hottest_film);
+    const T viscosity = correlations::air_viscosity(held);
     const Flow mean = mean_flow(flow);
+    v.volume_flow = flow.total;
     v.channel_flow = mean.channel;
+    v.exit_flow = flow.channel;
+    v.entering_flow = entering_flow(v);
     v.approach_velocity = flow.total / duct_area_;
     v.channel_velocity = v.channel_flow / channels_area_;
     v.free_area_ratio = channels_area_ / (g_.width() * g_.height);
     v.hydraulic_diameter = 2.0 * gap * g_.height / (gap + g_.height);
     v.aspect = min(gap, g_.height) / max(gap, g_.height);
-    v.reynolds = inlet_density_ * v.channel_velocity * v.hydraulic_diameter / air.viscosity;
-    v.prandtl = air.prandtl();
-    v.film = correlations::nusselt_duct_all_regimes(v.reynolds, v.prandtl, v.aspect,
-                                                    T(g_.length / v.hydraulic_diameter)) *
-             air.conductivity / v.hydraulic_diameter;
+    v.reynolds = inlet_density_ * v.channel_velocity * v.hydraulic_diameter / viscosity;
     if (free_) v.bypass_velocity = v.approach_velocity;
     if (!free_ && !closed_) {
         v.bypass_exit_flow = flow.beside;
         v.bypass_velocity = mean.beside / bypass_area_;
-        v.bypass_reynolds = inlet_density_ * v.bypass_velocity * bypass_diameter_ / air.viscosity;
+        v.bypass_reynolds = inlet_density_ * v.bypass_velocity * bypass_diameter_ / viscosity;
     }
+    v.outer_reynolds = inlet_density_ * v.bypass_velocity * g_.length / viscosity;
+    v.capacity_flow = inlet_density_ * v.entering_flow * correlations::air_specific_heat(held);
+    lose_pressure(v);
+    return v;
+}
+
+/// The rest of the view: films, efficiencies, heat taken up.
+template <class T>
+void MovingAirSink<T>::convect(MovingAirView<T>& v) const {
+    const auto air =
+        correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
+                             surroundings_.pressure);
+    v.prandtl = air.prandtl();
+    v.film = correlations::nusselt_duct_all_regimes(v.reynolds, v.prandtl, v.aspect,
+                                                    T(g_.length / v.hydraulic_diameter)) *
+             air.conductivity / v.hydraulic_diameter;
+    if (value_of(v.bypass_velocity) > 0.0)
+        v.outer_film = correlations::nusselt_flat_plate(v.outer_reynolds, v.prandtl) *
+                       air.conductivity / g_.length;
     const T face = g_.height * g_.length;
-    T outside(0.0), ends(0.0);
-    if (value_of(v.bypass_velocity) > 0.0) {
-        const T re = inlet_density_ * v.bypass_velocity * g_.length / air.viscosity;
-        v.outer_film =
-            correlations::nusselt_flat_plate(re, v.prandtl) * air.conductivity / g_.length;
-        outside = face * v.outer_film;
-        ends = g_.tip_thickness() * g_.length * v.outer_film;
-    }
+    const T ends = g_.tip_thickness() * g_.length * v.outer_film;
     v.inner_efficiency = efficiency(T(2.0 * face * v.film + ends), fin_shape_);
-    v.outer_efficiency = efficiency(T(face * v.film + outside + ends), fin_shape_);
-    v.entering_flow = entering_flow(v);
-    v.capacity_flow = inlet_density_ * v.entering_flow * air.specific_heat;
+    v.outer_efficiency = efficiency(T(face * (v.film + v.outer_film) + ends), fin_shape_);
     v.leaving_share = 1.0 - v.exit_flow / v.entering_flow;
     const double n = g_.fins;
     const T effective_area =
         face * (2.0 * (n - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency) +
         (n - 1.0) * g_.gap * g_.length;
     v.transfer_units = v.film * effective_area / v.capacity_flow;
-    const T bulk_mean = surroundings_.air_temperature - 0.5 * expm1(-v.transfer_units) * base_rise;
-    const T bulk_density = correlations::air_density(
-        correlations::clamp(bulk_mean, coldest_film, hottest_film), surroundings_.pressure);
-    lose_pressure(v, bulk_density);
-    return v;
 }
 
 template <class T>
@@ -203,7 +209,10 @@ T MovingAirSink<T>::bypass_loss(const MovingAirView<T>& v) const {
 }
 
 template <class T>
-void MovingAirSink<T>::lose_pressure(MovingAirView<T>& v, const T& bulk_density) const {
+void MovingAirSink<T>::lose_pressure(MovingAirView<T>& v) const {
+    const T bulk_mean = surroundings_.air_temperature + 0.5 * power_ / v.capacity_flow;
+    const T bulk_density = correlations::air_density(
+        correlations::clamp(bulk_mean, coldest_film, hottest_film), surroundings_.pressure);
     const T length_ratio = g_.length / v.hydraulic_diameter;
     const T friction =
         4.0 * correlations::fapp_all_regimes(v.reynolds, v.aspect, length_ratio) * length_ratio;
@@ -251,7 +260,7 @@ auto MovingAirSink<T>::moved(const Flow& flow, const Step& step) const -> Flow {
 template <class T>
 auto MovingAirSink<T>::slopes(const Flow& flow, const T& base_rise) const -> Slopes {
     const auto after = [&](double split, double total) {
-        return imbalance(at(moved(flow, {T(split), T(total)}), base_rise));
+        return imbalance(passing(moved(flow, {T(split), T(total)}), base_rise));
     };
     const Imbalance here = after(0.0, 0.0), split = after(probe, 0.0), total = after(0.0, probe);
     const auto slope = [](const T& to, const T& from) { return value_of(T(to - from)) / probe; };
@@ -269,29 +278,38 @@ auto MovingAirSink<T>::step(const Slopes& s, const Imbalance& r) const -> Step {
             (s.drive_by_split * r.paths - s.paths_by_split * r.drive) / determinant};
 }
 
-/// Newton's method; where a regime begins and the curves kink, steps are halved until they gain.
+/// Newton's method from where it last ended, with slopes that are kept while they serve; where a
+/// regime begins and the curves kink, steps are halved until they gain.
 template <>
 auto MovingAirSink<double>::solved(const double& base_rise) const -> Flow {
     const auto off = [](const Imbalance& r) { return std::hypot(r.paths, r.drive); };
-    Flow x = start_;
-    Imbalance r = imbalance(at(x, base_rise));
+    Flow x = last_.flow;
+    Imbalance r = imbalance(passing(x, base_rise));
+    bool fresh = false;
     for (int k = 0; k < newton_steps && off(r) > newton_tolerance; ++k) {
-        const Step d = step(slopes(x, base_rise), r);
+        const Step d = step(last_.slopes, r);
         const double size = std::max(std::abs(d.split), std::abs(d.total));
-        if (!std::isfinite(size)) break;
-        double share = std::min(1.0, longest_step / size);
+        double share = std::isfinite(size) ? std::min(1.0, longest_step / size) : 0.0;
         Flow next = moved(x, {share * d.split, share * d.total});
-        Imbalance then = imbalance(at(next, base_rise));
+        Imbalance then = imbalance(passing(next, base_rise));
+        const bool gains = off(then) < slopes_serve * off(r);
+        if (!gains && !fresh) {
+            last_.slopes = slopes(x, base_rise);
+            fresh = true;
+            continue;
+        }
         for (int halved = 0; halved < 8 && !(off(then) < off(r)); ++halved) {
             share *= 0.5;
             next = moved(x, {share * d.split, share * d.total});
-            then = imbalance(at(next, base_rise));
+            then = imbalance(passing(next, base_rise));
         }
         if (!(off(then) < off(r))) break;
         x = next;
         r = then;
+        fresh = false;
     }
     if (off(r) > settled) throw std::domain_error("the air's flow does not settle");
+    last_.flow = x;
     return x;
 }
 
@@ -303,7 +321,7 @@ auto MovingAirSink<T>::solved(const T& base_rise) const -> Flow {
     const Flow flow{T(x.channel), T(x.beside), T(x.total)};
     return moved(flow,
                  step({s.paths_by_split, s.paths_by_total, s.drive_by_split, s.drive_by_total},
-                      imbalance(at(flow, base_rise))));
+                      imbalance(passing(flow, base_rise))));
 }
 
 /// A first guess at how a total flow divides.
@@ -321,7 +339,7 @@ auto MovingAirSink<T>::divided(double total) const -> Flow {
     Flow x = guessed(total);
     for (int k = 0; k < newton_steps && !closed_; ++k) {
         const double d =
-            value_of(imbalance(at(x, T(0.0))).paths) / slopes(x, T(0.0)).paths_by_split;
+            value_of(imbalance(passing(x, T(0.0))).paths) / slopes(x, T(0.0)).paths_by_split;
         x = moved(x, {T(-std::clamp(d, -longest_step, longest_step)), T(0.0)});
         if (std::abs(d) < settled) break;
     }
@@ -337,7 +355,7 @@ auto MovingAirSink<T>::first_flow() const -> Flow {
     if (fan_->falls()) return divided(0.5 * most);
     for (int k = scan_points - 1; k > 0; --k) {
         const Flow flow = divided(most * k / scan_points);
-        if (value_of(imbalance(at(flow, T(0.0))).drive) > 0.0) return flow;
+        if (value_of(imbalance(passing(flow, T(0.0))).drive) > 0.0) return flow;
     }
     return divided(most / scan_points);
 }

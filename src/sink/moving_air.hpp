@@ -37,6 +37,7 @@ struct MovingAirView {
     T hydraulic_diameter = T(0.0); ///< of a channel [m]
     T reynolds = T(0.0);           ///< on the hydraulic diameter [-]
     T bypass_reynolds = T(0.0);    ///< on the bypass's hydraulic diameter [-]
+    T outer_reynolds = T(0.0);     ///< of the outer faces, on L [-]
     T prandtl = T(0.0);            ///< [-]
     T aspect = T(0.0);             ///< short side / long side of a channel [-]
     T free_area_ratio = T(0.0);    ///< between the fins [-]
@@ -95,8 +96,9 @@ private:
     Flow stated_flow() const;
     Flow mean_flow(const Flow& exit) const;
     T entering_flow(const MovingAirView<T>& v) const;
-    MovingAirView<T> at(const Flow& flow, const T& base_rise) const;
-    void lose_pressure(MovingAirView<T>& v, const T& bulk_density) const;
+    MovingAirView<T> passing(const Flow& flow, const T& base_rise) const;
+    void convect(MovingAirView<T>& v) const;
+    void lose_pressure(MovingAirView<T>& v) const;
     T bypass_loss(const MovingAirView<T>& v) const;
     Imbalance imbalance(const MovingAirView<T>& v) const;
     Flow moved(const Flow& flow, const Step& step) const;
@@ -115,6 +117,7 @@ private:
     Material material_;
     std::optional<FanCurve> fan_;
     std::shared_ptr<const MovingAirSink<double>> plain_; ///< solves the flow for a T with slopes
+    double power_;                                       ///< [W]
     double inlet_density_;
     bool decided_; ///< the flow follows from the job alone
     bool closed_;  ///< the duct leaves no room beside the fins
@@ -124,7 +127,12 @@ private:
     T bypass_area_;     ///< beside them, 0 in a closed duct [m2]
     T bypass_diameter_; ///< hydraulic [m]
     T duct_area_;       ///< of the whole section [m2]
-    Flow start_{};      ///< where the flow is first looked for [m3/s]
+    /// Where the flow was last found, and the slopes there: where it is next looked for.
+    struct Last {
+        Flow flow;
+        Slopes slopes;
+    };
+    mutable Last last_{};
 };
 
 } // namespace finwright::sink

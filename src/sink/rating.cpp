@@ -80,12 +80,20 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
     return uses;
 }
 
-std::vector<LawUse> ducted_air_laws(const MovingAirView<double>& v, const Geometry<double>& g) {
+std::vector<LawUse> moving_air_laws(const MovingAirView<double>& v, const Geometry<double>& g) {
     const double length_ratio = g.length / v.hydraulic_diameter;
-    return {{"air_conductivity", "air in the film", {v.film_temperature}},
-            {"duct_all_regimes", "channels", {v.reynolds, v.prandtl, v.aspect, length_ratio}},
-            {"fapp_all_regimes", "friction", {v.reynolds, v.aspect, length_ratio}},
-            {"entry_loss", "entry", {v.free_area_ratio}}};
+    std::vector<LawUse> uses{
+        {"air_conductivity", "air in the film", {v.film_temperature}},
+        {"duct_all_regimes", "channels", {v.reynolds, v.prandtl, v.aspect, length_ratio}},
+        {"fapp_all_regimes", "friction", {v.reynolds, v.aspect, length_ratio}},
+        {"entry_loss", "entry", {v.free_area_ratio}}};
+    if (v.bypass_velocity > 0.0) {
+        uses.push_back({"flat_plate", "outer faces and tips", {v.outer_reynolds, v.prandtl}});
+        uses.push_back({"air_split",
+                        "share of the air between the fins",
+                        {v.entering_flow / v.volume_flow, v.exit_flow / v.volume_flow}});
+    }
+    return uses;
 }
 
 /// Rates the flow side: what the films see, what the air loses, which laws say so.
@@ -100,12 +108,18 @@ void rate_air(Rating& rating, const Duty& duty, double driving_rise) {
     }
     const MovingAirSink<double> model(g, duty);
     const auto view = model.view(driving_rise);
-    rating.laws = ducted_air_laws(view, g);
+    rating.laws = moving_air_laws(view, g);
     rating.view = view;
 }
 
+/// In still air by the series; in a stream by the map, whose pads meet the air that others warmed.
+std::vector<double> rated_pad_rises(const Rating& rating, const Duty& duty) {
+    if (duty.surroundings.still()) return pad_rises(rating.geometry, duty, rating.base_rise);
+    return base_field(base_map(rating.geometry, duty, rating)).pad_rises;
+}
+
 void rate_parts(Rating& rating, const Duty& duty) {
-    const std::vector<double> rises = pad_rises(rating.geometry, duty, rating.base_rise);
+    const std::vector<double> rises = rated_pad_rises(rating, duty);
     for (std::size_t i = 0; i < duty.parts.size(); ++i)
         rating.parts.push_back(
             rate_part(duty.parts[i], rating.air_temperature + rises[i], duty.margin));
@@ -138,6 +152,18 @@ std::vector<double> powers_of(const Duty& duty) {
     for (const job::Part& part : duty.parts)
         powers.push_back(part.power);
     return powers;
+}
+
+/// Film that holds the mean rise, under the parts' power and the sun on the fins.
+UniformFilm film_of(const Rating& rating, double footprint) {
+    const double film = (rating.power + rating.sun) / (rating.base_rise * footprint);
+    return {film, rating.sun / (film * footprint)};
+}
+
+/// The channels' air. What outer faces and tips give to the air beside them counts as more of it.
+WarmingAir warming(const MovingAirView<double>& v, const Rating& rating) {
+    const double taken = rating.heat.channels / (v.capacity_flow * rating.base_rise);
+    return {v.capacity_flow * rating.heat.total() / rating.heat.channels, -std::log1p(-taken)};
 }
 
 } // namespace
@@ -190,6 +216,16 @@ std::vector<Dual<5>> pad_rises(const Geometry<Dual<5>>& g, const Duty& duty,
         rises.push_back(total + sun);
     }
     return rises;
+}
+
+BaseMap base_map(const Geometry<double>& g, const Duty& duty, const Rating& rating) {
+    BaseMap map{g.width(), g.length, g.base, duty.material.conductivity, {}, powers_of(duty), {}};
+    map.pads = pads_on_base(duty.parts, map.width, map.length);
+    if (const auto* moving = std::get_if<MovingAirView<double>>(&rating.view))
+        map.air = warming(*moving, rating);
+    else
+        map.air = film_of(rating, g.footprint());
+    return map;
 }
 
 Rating rate(const Geometry<double>& g, const Duty& duty) {

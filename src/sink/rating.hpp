@@ -5,6 +5,7 @@
 #include "correlations/numbers/dual.hpp"
 #include "correlations/spreading.hpp"
 #include "src/sink/balance.hpp"
+#include "src/sink/base_map.hpp"
 #include "src/sink/law_use.hpp"
 #include "src/sink/moving_air.hpp"
 #include "src/sink/still_air.hpp"
@@ -68,6 +69,10 @@ std::vector<correlations::Dual<5>> pad_rises(const Geometry<correlations::Dual<5
 /// needs.
 correlations::ModeSet modes_up_to(double half_waves, const Geometry<double>& g, const Duty& duty);
 correlations::ModeSet modes_for_means(const Geometry<double>& g, const Duty& duty);
+
+/// The base of a rated sink: in still air one film that holds the rating's mean rise, the sun
+/// falling on the fins evenly; in moving air a stream that takes up what the rating says.
+BaseMap base_map(const Geometry<double>& g, const Duty& duty, const Rating& rating);
 
 /// The whole rating. Throws std::domain_error for impossible geometry.
 Rating rate(const Geometry<double>& g, const Duty& duty);

@@ -131,10 +131,27 @@ private:
     MixedOutcome mixed_;
 };
 
+/// The aim of a design as the search sees it, every part on air of one temperature [SI].
 struct Aimed {
     job::Aim aim;
+
     double of(const Geometry<double>& g, const sink::Duty& duty) const {
-        return aim_value(aim, sink::rate(g, duty));
+        switch (aim) {
+        case job::Aim::mass:
+            return g.metal() * duty.material.density;
+        case job::Aim::volume:
+            return g.envelope();
+        case job::Aim::height:
+            return g.overall_height();
+        case job::Aim::footprint:
+            return g.footprint();
+        case job::Aim::pressure_drop:
+            return sink::balance(g, duty).pressure_drop;
+        case job::Aim::resistance:
+            break;
+        }
+        const auto rises = sink::pad_rises(g, duty, sink::balance(g, duty).base_rise);
+        return *std::max_element(rises.begin(), rises.end()) / duty.power();
     }
 };
 
@@ -352,7 +369,7 @@ std::optional<Geometry<double>> search(const job::Job& job, const SearchOptions&
     return search.settled(*feasible.front())->geometry(feasible.front()->outcome.x);
 }
 
-Sizing size(const job::Job& job, const SearchOptions& options) {
+Sizing size_on_even_air(const job::Job& job, const SearchOptions& options) {
     const sink::Duty duty = sink::duty_of(job);
     const Search search(job, duty, pursuit_of(job.sink.aim), options);
     const auto designs = rounded_designs(search, job, duty);

@@ -34,6 +34,12 @@ struct Design {
     double rounded_aim = 0.0;
 };
 
+/// What one of several fans leads to.
+struct FanChoice {
+    std::string name;
+    std::optional<double> aim; ///< of its rounded design, SI; empty where there is none
+};
+
 struct Answer {
     Design design;
     sink::Rating rating; ///< of the rounded design
@@ -42,6 +48,11 @@ struct Answer {
     double least_aim = 0.0;           ///< before rounding, at the best fin count for that [SI]
     int fin_counts_tried = 0;
     int evaluations = 0;
+    /// What air warmed by the others adds to each part, kept free of the rise the search allowed it
+    /// [K]; empty in still air.
+    std::vector<double> warmed;
+    std::size_t fan = 0;         ///< of the job's fans, the one this answer rests on
+    std::vector<FanChoice> fans; ///< all of them, where there are several
 };
 
 /// Why no design exists, and what is left to try.
@@ -60,7 +71,15 @@ struct SearchOptions {
     int threads = 1;
 };
 
+/// With one fan after the other where the job leaves the choice, and downstream parts held to what
+/// the base map says of them.
 Sizing size(const job::Job& job, const SearchOptions& options = {});
+
+/// The same for the first fan, every part on air of one temperature.
+Sizing size_on_even_air(const job::Job& job, const SearchOptions& options = {});
+
+/// The job with the fan the answer rests on, and no other.
+job::Job as_answered(const job::Job& job, const Answer& answer);
 
 /// The search over all fin counts alone, before rounding: the optimum, if there is one.
 std::optional<sink::Geometry<double>> search(const job::Job& job,

@@ -47,6 +47,34 @@ void balance(benchmark::State& state, const char* name) {
     }
 }
 
+job::Job with_fan_and_bypass() {
+    auto job = demo("bench_supply");
+    job::Fan fan;
+    fan.name = "fan";
+    fan.flows = {0.0, 4e-3, 7e-3, 1e-2};
+    fan.pressures = {45.0, 30.0, 18.0, 0.0};
+    job.air.state = job::FanAir{{fan}, job::Clearance{5e-3, 3e-3}};
+    return job;
+}
+
+void balance_fan(benchmark::State& state) {
+    const auto duty = sink::duty_of(with_fan_and_bypass());
+    auto g = typical();
+    for (auto _ : state) {
+        g.height += 1e-12;
+        benchmark::DoNotOptimize(sink::balance(g, duty));
+    }
+}
+
+void balance_fan_with_slopes(benchmark::State& state) {
+    const auto duty = sink::duty_of(with_fan_and_bypass());
+    auto g = typical();
+    for (auto _ : state) {
+        g.height += 1e-12;
+        benchmark::DoNotOptimize(sink::balance(seeded(g), duty));
+    }
+}
+
 void balance_with_slopes(benchmark::State& state, const char* name) {
     const auto duty = sink::duty_of(demo(name));
     auto g = typical();
@@ -132,6 +160,8 @@ void search_random(benchmark::State& state, job::Job (tests::RandomJobs::*make)(
 
 BENCHMARK_CAPTURE(balance, still, pump)->Unit(benchmark::kMicrosecond);
 BENCHMARK_CAPTURE(balance, ducted, bench)->Unit(benchmark::kMicrosecond);
+BENCHMARK(balance_fan)->Unit(benchmark::kMicrosecond);
+BENCHMARK(balance_fan_with_slopes)->Unit(benchmark::kMicrosecond);
 BENCHMARK_CAPTURE(balance_with_slopes, still, pump)->Unit(benchmark::kMicrosecond);
 BENCHMARK_CAPTURE(balance_with_slopes, ducted, bench)->Unit(benchmark::kMicrosecond);
 BENCHMARK_CAPTURE(spreading_series, three_pads, pump)->Unit(benchmark::kMicrosecond);

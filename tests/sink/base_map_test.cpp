@@ -2,6 +2,7 @@
 // & Yovanovich 2003 (correlations/spreading.hpp). In a stream: closed forms in the limits of high
 // and low conductivity, an ordinary differential equation between them, and reciprocity.
 #include "src/sink/base_map.hpp"
+#include "src/sink/rating.hpp"
 #include "tests/near.hpp"
 #include "tests/reference_rows.hpp"
 #include "tests/sink/random_sinks.hpp"
