@@ -26,9 +26,9 @@ struct ChannelRadiationFit {
 ///   Y = v ((eps + m)/(1 + m))^-p, v = (1 - pi/4)/(1 + x), m = c x, x = (k/w)^n,
 ///   w = (A/G - 1)(1 + d t (1 - t)), t = 2 H/(L + 2 H), A = (2 H + S) L.
 /// Limits kept: eps = 1 gives G exactly (black walls of one temperature need no zones); shallow
-/// channels the one-zone law; black-most deep ones Y = 1 - pi/4, which is A/G times the mean square
-/// of the walls' view (1 - z/sqrt(S^2 + z^2))/2 of an endless slot's mouth. Fitted over H/S 0.2 to
-/// 25, L/H 0.5 to 40, eps 0.03 to 0.98; error in the passport.
+/// channels the one-zone law; deep, nearly black ones Y = 1 - pi/4, which is A/G times the mean
+/// square of the view (1 - z/sqrt(S^2 + z^2))/2 that walls have of an endless slot's mouth. Fitted
+/// over H/S 0.2 to 25, L/H 0.5 to 40, eps 0.03 to 0.98; error in the passport.
 template <class T>
 T channel_radiation_zoned(double emissivity, const T& gap, const T& height, const T& length,
                           const ChannelRadiationFit& fit = {}) {
