@@ -12,11 +12,11 @@ namespace finwright::correlations {
 /// (tests/data/reference/channel_radiation.csv) by least squares of the logarithm; tests/validation
 /// fits them again.
 struct ChannelRadiationFit {
-    double depth = 7.5091;    ///< closedness at which half the deep channel's loss is reached ...
-    double rise = 1.3811;     ///< ... and the exponent of that rise
-    double corner = 4.0601;   ///< closedness added where front and ends are seen alike
-    double trapped = 0.4369;  ///< emissivity below which the depth, not the walls, limits the heat
-    double exponent = 0.6246; ///< of the emissivity above that
+    double depth = 7.5091;    ///< k: closedness w at half the deep channel's loss ...
+    double rise = 1.3811;     ///< n: ... and the exponent of that rise
+    double corner = 4.0601;   ///< d: closedness added where front and ends are seen alike
+    double trapped = 0.4369;  ///< c: m is the emissivity below which depth limits the loss
+    double exponent = 0.6246; ///< p: of the loss's growth as walls get barer
 };
 
 /// Radiation conductance of a grey channel at one wall temperature, zoned [m2]: heat = this times

@@ -3,11 +3,11 @@
 //
 // Two fin faces (gap apart, height x length) and the base strip between them, all at one
 // temperature, grey and diffuse, open in front and at both ends. Unit sigma (Ts^4 - Te^4): every
-// zone's radiosity is J_i = eps + (1 - eps) sum_j F_ij J_j, the heat is eps/(1 - eps) sum A (1 -
-// J). Exchange areas of zones are exact, by differences of the closed integrals of the two kernels,
-// so the solution is Galerkin's with constants on the zones: it lies above the true one and falls
-// towards it as zones get smaller. Both mirror symmetries are used: one fin, half its length, half
-// the base.
+// zone's radiosity is J_i = eps + (1 - eps) sum_j F_ij J_j, the heat is eps/(1 - eps) sum
+// A (1 - J). Exchange areas of zones are exact, by differences of the two kernels' closed
+// integrals, so the solution is Galerkin's with constants on the zones: it lies above the true one
+// and falls towards it as zones get smaller. Both mirror symmetries are used: one fin, half its
+// length, half the base.
 
 #include <Eigen/Dense>
 #include <algorithm>
