@@ -28,11 +28,13 @@ inline std::vector<std::string> cells_of(const std::string& line) {
     return cells;
 }
 
+/// A table by its file name; comment lines (#) may stand above its head.
 inline std::vector<Row> rows_of(const std::string& file) {
     std::ifstream in(std::string(TEST_DATA_DIR) + "/reference/" + file);
     if (!in) throw std::runtime_error("no reference table " + file);
     std::string line;
-    std::getline(in, line);
+    while (std::getline(in, line) && line.starts_with('#')) {
+    }
     const auto names = cells_of(line);
     std::vector<Row> rows;
     while (std::getline(in, line)) {

@@ -2,6 +2,7 @@
 // range.
 #include "correlations/air.hpp"
 #include "correlations/atmosphere.hpp"
+#include "correlations/channel_radiation.hpp"
 #include "correlations/fin.hpp"
 #include "correlations/forced_channel.hpp"
 #include "correlations/interface.hpp"
@@ -120,6 +121,10 @@ TEST_CASE("fins, radiation, spreading") {
                  [](const auto& x) { return channel_opening(x[0], x[1], x[2]); });
     check_law<2>("conductance", {{side, side}},
                  [](const auto& x) { return channel_radiation_conductance(0.3, x[0], x[1]); });
+    for (const double emissivity : {0.05, 0.3, 0.9})
+        check_law<3>(
+            "zoned channel", {{{2e-3, 2e-2}, {5e-3, 0.1}, {0.05, 0.3}}},
+            [&](const auto& x) { return channel_radiation_zoned(emissivity, x[0], x[1], x[2]); });
     check_law<2>("radiation", {{kelvin, kelvin}},
                  [](const auto& x) { return radiation_coefficient(0.8, x[0], x[1]); });
     check_law<3>("spreading", {{{0.05, 0.9}, {0.01, 1.0}, {0.01, 10.0}}},

@@ -5,7 +5,7 @@
 #include "correlations/natural_channel.hpp"
 #include "correlations/natural_face.hpp"
 #include "tests/reference_rows.hpp"
-#include <Eigen/Dense>
+#include "tests/validation/least_squares.hpp"
 #include <cmath>
 #include <vector>
 
@@ -37,50 +37,19 @@ inline std::vector<ChannelSolution> channel_solutions() {
     return list;
 }
 
-using Coefficients = Eigen::Matrix<double, 6, 1>;
-
-inline Coefficients packed(const correlations::FinChannelFit& f) {
-    Coefficients c;
-    c << f.opening, f.opening_power, f.base_weight, f.layer_excess, f.sharpness, f.sharpness_fall;
-    return c;
-}
-inline correlations::FinChannelFit unpacked(const Coefficients& c) {
+inline correlations::FinChannelFit unpacked(const Eigen::VectorXd& c) {
     return {c[0], c[1], c[2], c[3], c[4], c[5]};
 }
 
-/// Least squares of ln(law/solution) by Levenberg-Marquardt (Marquardt 1963), slopes by
-/// differences.
+/// Least squares of ln(law/solution), from plain superposition.
 inline correlations::FinChannelFit fitted(const std::vector<ChannelSolution>& rows) {
-    const auto residuals = [&](const Coefficients& c) {
+    const Eigen::Vector<double, 6> start{1.0, 0.0, 1.0, 0.0, 1.5, 0.0};
+    return unpacked(least_squares(start, [&](const Eigen::VectorXd& c) {
         Eigen::VectorXd r(Eigen::Index(rows.size()));
         for (std::size_t i = 0; i < rows.size(); ++i)
             r[Eigen::Index(i)] = rows[i].weight * std::log(rows[i].by(unpacked(c)) / rows[i].film);
         return r;
-    };
-    Coefficients c;
-    c << 1.0, 0.0, 1.0, 0.0, 1.5, 0.0; // plain superposition
-    Eigen::VectorXd r = residuals(c);
-    double damping = 1e-2;
-    for (int step = 0; step < 500 && damping < 1e12; ++step) {
-        Eigen::MatrixXd slopes(r.size(), 6);
-        for (int j = 0; j < 6; ++j) {
-            Coefficients moved = c;
-            moved[j] += 1e-6;
-            slopes.col(j) = (residuals(moved) - r) / 1e-6;
-        }
-        Eigen::Matrix<double, 6, 6> normal = slopes.transpose() * slopes;
-        normal.diagonal() *= 1.0 + damping;
-        const Coefficients next = c - normal.ldlt().solve(slopes.transpose() * r);
-        const Eigen::VectorXd there = residuals(next);
-        if (there.allFinite() && there.squaredNorm() < r.squaredNorm()) {
-            c = next;
-            r = there;
-            damping /= 3.0;
-        } else {
-            damping *= 4.0;
-        }
-    }
-    return unpacked(c);
+    }));
 }
 
 /// Law over solution on every row, each predicted by a fit that has not seen it: ten folds, row i
