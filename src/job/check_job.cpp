@@ -169,10 +169,11 @@ void check_width_sum(const Job& job, const Document& d) {
     const Sink& s = job.sink;
     if (!s.fins.fixed() || !s.fin_thickness.fixed() || !s.gap.fixed() || !s.width.fixed()) return;
     if (s.fin_draft > 0.0 && !s.fin_height.fixed()) return;
+    if (*s.fins.from == 0.0) return;
     const double n = *s.fins.from;
     const double taper = s.fin_draft > 0.0 ? 2.0 * std::tan(s.fin_draft) * *s.fin_height.from : 0.0;
     const double root = *s.fin_thickness.from + taper;
-    const double sum = n * root + (n - 1.0) * *s.gap.from;
+    const double sum = n * root + (n - 1.0) * *s.gap.from + 2.0 * s.details.flange;
     if (std::abs(sum - *s.width.from) > 5e-6)
         d.fail(s.width.place,
                fmt::format("width {:.4g} mm is not what fins and gaps add up to: {:.4g} mm",
@@ -258,6 +259,19 @@ void check_pads(const Job& job, const Document& d, const Space& space) {
 } // namespace
 
 void check_sized_job(const Job& job, const Document& document) {
+    if (job.sink.fins.fixed() && *job.sink.fins.from == 0.0)
+        document.fail(
+            job.sink.fins.place, "a plate without fins leaves nothing to search",
+            "rate it with finwright rate, or leave the key out: size says whether a plate "
+            "would do");
+    if (job.limits.space.width && 2.0 * job.sink.details.flange >= *job.limits.space.width)
+        document.fail(place_in(document, "sink", "flange"), "the flanges fill the whole width",
+                      "make them narrower, or give more space",
+                      place_in(document, "limits", "space"));
+    if (job.limits.space.length && job.sink.details.fin_free >= *job.limits.space.length)
+        document.fail(
+            place_in(document, "sink", "fin_free_length"), "nothing of the length is left for fins",
+            "clear less of it, or give more space", place_in(document, "limits", "space"));
     check_target(job, document);
     check_pressure(job, document);
     check_budgets(job, document);
@@ -267,6 +281,15 @@ void check_sized_job(const Job& job, const Document& document) {
 }
 
 void check_rated_job(const Job& job, const Document& document) {
+    const bool plate = job.sink.fins.fixed() && *job.sink.fins.from == 0.0;
+    if (plate && !std::holds_alternative<StillAir>(job.air.state))
+        document.fail(job.sink.fins.place, "a plate without fins is rated in still air only",
+                      "write air state: still, with a drift if there is one",
+                      place_in(document, "air", "state"));
+    if (job.sink.length.fixed() && job.sink.details.fin_free >= *job.sink.length.from)
+        document.fail(place_in(document, "sink", "fin_free_length"),
+                      "nothing of the length is left for fins", "clear less of it",
+                      job.sink.length.place);
     const auto* driven = std::get_if<FanAir>(&job.air.state);
     if (driven && driven->fans.size() > 1)
         document.fail(place_in(document, "air", "fans"), "a rating is made with one fan",

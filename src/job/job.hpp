@@ -194,12 +194,22 @@ struct Steps {
 /// What the search makes smallest.
 enum class Aim { mass, volume, height, footprint, resistance, pressure_drop };
 
+/// What a drawing adds to N, H, t, S, tb and L.
+struct FinDetails {
+    double flange = 0.0;      ///< of the base, beyond the fins on each side [m]
+    double fin_free = 0.0;    ///< of the length, cleared of fins for mounting [m]
+    double joint = 0.0;       ///< of a bonded fin in its groove, over the root's section [m2 K/W]
+    double area_factor = 1.0; ///< of serrated fin faces over smooth ones, for convection [-]
+    bool round_tips = false;  ///< full radius instead of square
+};
+
 struct Sink {
     Process process;
     Alloy alloy;
     Finish finish; ///< emissivity already overruled by the job where it says so
     Aim aim = Aim::mass;
     Range fins, fin_height, fin_thickness, gap, base_thickness, width, length;
+    FinDetails details;
     double fin_draft = 0.0; ///< taper of each fin face from root to tip [rad]
     Steps steps;
 };

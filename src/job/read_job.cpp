@@ -223,9 +223,6 @@ Range read_range(const Document& d, Mapping& m, std::string_view key,
             d.fail(node->place, fmt::format("{} states neither from nor to", key),
                    "leave the key out to free it");
     }
-    if ((range.from && *range.from <= 0.0) || (range.to && *range.to <= 0.0))
-        d.fail(range.place, fmt::format("{} must be above zero", key),
-               "leave the key out to free it");
     if (range.from && range.to && *range.from > *range.to)
         d.fail(range.place, fmt::format("{} runs from more to less", key), "swap from and to");
     return range;
@@ -234,6 +231,9 @@ Range read_range(const Document& d, Mapping& m, std::string_view key,
 Range length_range(const Document& d, Mapping& m, std::string_view key, double longest) {
     return read_range(d, m, key, [&](const TreeNode& node, const std::string& what) {
         const double value = quantity_of(d, node, what, quantity::length);
+        if (value <= 0.0)
+            d.fail(node.place, fmt::format("{} must be above zero", key),
+                   "leave the key out to free it");
         if (value > longest)
             d.fail(node.place,
                    fmt::format("{} of {:.4g} m is not for a plate-fin sink", key, value),
@@ -257,10 +257,30 @@ Aim read_aim(Mapping& m) {
            "write mass, volume, height, footprint, resistance or pressure_drop");
 }
 
+FinDetails read_details(const Document& d, Mapping& m) {
+    FinDetails details;
+    const std::string tips = m.optional_text("tips").value_or("square");
+    if (tips != "square" && tips != "round")
+        m.fail("tips", fmt::format("fin tips cannot be '{}'", tips),
+               "write square, or round for a full radius");
+    details.round_tips = tips == "round";
+    if (m.has("flange")) details.flange = not_negative(d, m, "flange", quantity::length);
+    if (m.has("fin_free_length"))
+        details.fin_free = not_negative(d, m, "fin_free_length", quantity::length);
+    if (m.has("fin_joint"))
+        details.joint = not_negative(d, m, "fin_joint", quantity::area_resistance);
+    details.area_factor = m.optional_number("area_factor", quantity::pure).value_or(1.0);
+    if (details.area_factor < 1.0 || details.area_factor > 3.0)
+        m.fail("area_factor", "serrated faces have one to three times the area of smooth ones",
+               "write for example area_factor: 1.15, as your shop states it");
+    return details;
+}
+
 Sink read_sink(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "sink");
     m.only({"process", "alloy", "finish", "emissivity", "aim", "fins", "fin_height",
-            "fin_thickness", "fin_draft", "gap", "base_thickness", "width", "length"});
+            "fin_thickness", "fin_draft", "gap", "base_thickness", "width", "length", "tips",
+            "flange", "fin_free_length", "fin_joint", "area_factor"});
     Sink sink;
     sink.process = from_catalogue(d, m, "process", processes());
     sink.alloy = from_catalogue(d, m, "alloy", alloys());
@@ -276,9 +296,13 @@ Sink read_sink(const Document& d, const TreeNode& node) {
     sink.fins = read_range(d, m, "fins", [&](const TreeNode& n, const std::string& what) {
         return double(whole_number(d, n, what));
     });
-    if ((sink.fins.from && *sink.fins.from < 2.0) || (sink.fins.to && *sink.fins.to < 2.0))
-        d.fail(sink.fins.place, "a plate-fin sink has at least two fins",
-               "write for example fins: 12, or leave the key out");
+    const bool plate = sink.fins.fixed() && *sink.fins.from == 0.0;
+    if (!plate &&
+        ((sink.fins.from && *sink.fins.from < 2.0) || (sink.fins.to && *sink.fins.to < 2.0)))
+        d.fail(
+            sink.fins.place, "a plate-fin sink has at least two fins",
+            "write for example fins: 12, fins: 0 for a plain plate to be rated, or leave the key "
+            "out");
     if ((sink.fins.from && *sink.fins.from > most_fins) ||
         (sink.fins.to && *sink.fins.to > most_fins))
         d.fail(sink.fins.place, fmt::format("more than {} fins", most_fins),
@@ -295,6 +319,7 @@ Sink read_sink(const Document& d, const TreeNode& node) {
                    "write for example fin_draft: 0.5 deg");
         sink.fin_draft = *draft;
     }
+    sink.details = read_details(d, m);
     return sink;
 }
 

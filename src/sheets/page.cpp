@@ -176,7 +176,28 @@ std::string budget(const Job& job, const Rating& rating) {
     return out;
 }
 
+/// A plate without fins.
+std::string plate_table(const Job& job, const Geometry<double>& g) {
+    const job::Steps& steps = job.sink.steps;
+    TextTable table;
+    table.left(3);
+    table.row({"plate thickness", dimension(g.base, steps.base_thickness), "mm", "tb"});
+    table.row({"width", dimension(g.width(), steps.length), "mm", "W"});
+    table.row({"length", dimension(g.length, steps.length), "mm", "L"});
+    return heading("Dimensions: a plain plate") + table.text();
+}
+
+/// What the drawing adds to the plain shape.
+void detail_rows(TextTable& table, const job::FinDetails& details) {
+    if (details.round_tips) table.row({"fin tips", "full radius", "", ""});
+    if (details.flange > 0.0)
+        table.row({"flange of the base, each side", millimetres(details.flange, 2), "mm", ""});
+    if (details.fin_free > 0.0)
+        table.row({"of the length, free of fins", millimetres(details.fin_free, 1), "mm", ""});
+}
+
 std::string dimension_table(const Job& job, const Geometry<double>& g) {
+    if (g.plate()) return plate_table(job, g);
     const job::Steps& steps = job.sink.steps;
     TextTable table;
     table.left(3);
@@ -195,6 +216,7 @@ std::string dimension_table(const Job& job, const Geometry<double>& g) {
     table.row({"width across the fins", mm(g.width(), std::min(steps.gap, steps.fin_thickness)),
                "mm", "W"});
     table.row({"length along the fins", mm(g.length, steps.length), "mm", "L"});
+    detail_rows(table, g.details);
     table.row({"(pitch)", fmt::format("({})", millimetres(g.pitch(), 3)), "mm",
                fmt::format("{} x pitch = {} mm", g.fins - 1,
                            millimetres(double(g.fins - 1) * g.pitch(), 2))});
@@ -273,6 +295,7 @@ std::string heat_split(const Rating& rating) {
     row("outer faces", rating.heat.outer_faces);
     row("fin tips and end faces", rating.heat.tips_edges);
     row("rim of the base", rating.heat.rim);
+    row(rating.geometry.plate() ? "front of the plate" : "base beside the fins", rating.heat.bare);
     row("back of the base", rating.heat.back);
     row("radiation, all surfaces", rating.heat.radiation);
     row("wall behind", rating.heat.wall);
@@ -280,6 +303,7 @@ std::string heat_split(const Rating& rating) {
     if (rating.sun > 0.0)
         out += paragraph(fmt::format("of which {} W come from the sun, taken up by the fins' side",
                                      significant(rating.sun, 3)));
+    if (rating.geometry.plate()) return out;
     if (const auto* still = std::get_if<sink::StillAirView<double>>(&rating.view))
         out += paragraph(fmt::format(
             "film {} W/(m² K) in the channels, {} outside; fin efficiency {}; radiation {} per "
@@ -336,7 +360,7 @@ bool upright(const job::Mounting& m) {
 /// The same sink by each channel law, for still air: what the choice of law is worth.
 std::string by_each_channel_law(const Job& job, const Rating& rating) {
     const auto* still = std::get_if<job::StillAir>(&job.air.state);
-    if (!still || !upright(job.air.mounting)) return {};
+    if (!still || !upright(job.air.mounting) || rating.geometry.plate()) return {};
     using job::ChannelLaw;
     constexpr std::pair<ChannelLaw, const char*> laws[] = {
         {ChannelLaw::fin_channel, "fin_channel"},
@@ -491,6 +515,19 @@ std::string rounding_line(const Answer& answer, const Job& job) {
         aim_text(job.sink.aim, answer.least_aim)));
 }
 
+/// Whether fins are needed at all.
+std::string plate_line(const Answer& answer) {
+    if (!answer.plate) return {};
+    const auto& plate = *answer.plate;
+    return paragraph(fmt::format(
+        "Are fins needed? A plain plate filling the space ({} x {} x {} mm, {} g) would {}.",
+        millimetres(plate.geometry.width(), 0), millimetres(plate.geometry.length, 0),
+        millimetres(plate.geometry.base, 1), grams(plate.mass),
+        plate.excess > 0.0
+            ? fmt::format("leave the hottest part {} K too hot", fixed(plate.excess, 1))
+            : fmt::format("do, with {} K left", fixed(-plate.excess, 1))));
+}
+
 std::string fan_choice(const Answer& answer, const Job& job) {
     if (answer.fans.empty()) return {};
     std::string others;
@@ -523,11 +560,11 @@ std::string warmed_line(const Answer& answer, const Job& job) {
 
 std::string size_page(const Job& job, const Answer& answer) {
     return title_lines(job) + heading("The sink") + key_line(answer.rating, job) +
-           rounding_line(answer, job) + fan_choice(answer, job) + warmed_line(answer, job) +
-           dimension_table(job, answer.rating.geometry) + budget(job, answer.rating) +
-           heat_split(answer.rating) + binding_table(job, answer.binding) +
-           alternatives_table(job, answer) + laws_used(job, answer.rating) +
-           caution_list(job, answer.rating);
+           plate_line(answer) + rounding_line(answer, job) + fan_choice(answer, job) +
+           warmed_line(answer, job) + dimension_table(job, answer.rating.geometry) +
+           budget(job, answer.rating) + heat_split(answer.rating) +
+           binding_table(job, answer.binding) + alternatives_table(job, answer) +
+           laws_used(job, answer.rating) + caution_list(job, answer.rating);
 }
 
 std::string rate_page(const Job& job, const Rating& rating) {

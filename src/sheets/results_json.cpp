@@ -27,6 +27,9 @@ Json geometry_json(const sink::Geometry<double>& g) {
             {"length_m", g.length},
             {"overall_height_m", g.overall_height()},
             {"circumscribing_circle_m", std::hypot(g.width(), g.overall_height())},
+            {"flange_m", g.details.flange},
+            {"fin_free_length_m", g.details.fin_free},
+            {"round_tips", g.details.round_tips},
             {"section_area_m2", g.section()}};
 }
 
@@ -118,6 +121,7 @@ Json rating_json(const sink::Rating& r) {
               {"outer_faces", r.heat.outer_faces},
               {"tips_edges", r.heat.tips_edges},
               {"rim", r.heat.rim},
+              {"bare_base", r.heat.bare},
               {"back", r.heat.back},
               {"radiation", r.heat.radiation},
               {"wall", r.heat.wall}}},

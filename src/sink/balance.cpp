@@ -70,9 +70,12 @@ double balanced_rise(const Model& model, double power, double guess) {
 }
 
 void require_room(const Geometry<double>& g) {
+    if (g.plate() && g.gap > 0 && g.base > 0 && g.length > 0) return;
     const bool sound = g.gap > 0 && g.height > 0 && g.thickness > 0 && g.tip_thickness() > 0 &&
-                       g.base > 0 && g.length > 0 && g.fins >= 2;
-    if (!sound) throw std::domain_error("a sink needs two fins, and every dimension above zero");
+                       g.base > 0 && g.fin_length() > 0 && g.fins >= 2;
+    if (!sound)
+        throw std::domain_error(
+            "a sink has no fins or at least two, and every dimension above zero");
 }
 
 Geometry<Dual<6>> widened(const Geometry<Dual<5>>& g) {
@@ -83,7 +86,7 @@ Geometry<Dual<6>> widened(const Geometry<Dual<5>>& g) {
         return b;
     };
     return {g.fins,        widen(g.height), widen(g.thickness), widen(g.gap),
-            widen(g.base), widen(g.length), g.draft_tangent};
+            widen(g.base), widen(g.length), g.draft_tangent,    g.details};
 }
 
 /// f(x, rise) with rise = rise(x): total slopes.
@@ -100,7 +103,7 @@ template <class T>
 Geometry<double> plain(const Geometry<T>& g) {
     using correlations::value_of;
     return {g.fins,           value_of(g.height), value_of(g.thickness), value_of(g.gap),
-            value_of(g.base), value_of(g.length), g.draft_tangent};
+            value_of(g.base), value_of(g.length), g.draft_tangent,       g.details};
 }
 template Geometry<double> plain(const Geometry<double>&);
 template Geometry<double> plain(const Geometry<Dual<5>>&);

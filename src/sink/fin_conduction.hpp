@@ -32,14 +32,22 @@ template <class T>
 T fin_shape(const Geometry<T>& g, double conductivity) {
     const T corrected_height = g.height + 0.5 * g.tip_thickness();
     return taper_factor(T(g.tip_thickness() / g.thickness)) * corrected_height /
-           (conductivity * g.thickness * g.length);
+           (conductivity * g.thickness * g.fin_length());
 }
 
-/// Mean rise of the fin over its base's rise, G as above [-].
+/// Mean rise of the fin over its root's rise, G as above [-].
 template <class T>
 T efficiency(const T& conductance, const T& shape) {
     using std::sqrt;
     return correlations::fin_efficiency(T(sqrt(conductance * shape)));
+}
+
+/// The same over the base's rise, with the joint a bonded fin stands in: eta/(1 + eta G R) [-].
+template <class T>
+T joined_efficiency(const T& conductance, const T& shape, const Geometry<T>& g) {
+    const T eta = efficiency(conductance, shape);
+    if (g.details.joint == 0.0) return eta;
+    return eta / (1.0 + eta * conductance * g.details.joint / (g.thickness * g.fin_length()));
 }
 
 } // namespace finwright::sink

@@ -10,11 +10,14 @@ struct HeatPaths {
     T outer_faces = T(0.0); ///< convection from the two outermost fin faces
     T tips_edges = T(0.0);  ///< convection from fin tips and the fins' end faces
     T rim = T(0.0);         ///< convection from the base's four narrow sides
+    T bare = T(0.0);        ///< convection from base that looks past the fins
     T back = T(0.0);        ///< convection from the base's back beside the parts
     T radiation = T(0.0);   ///< from all of these
     T wall = T(0.0);        ///< conducted into the wall behind
 
-    T total() const { return channels + outer_faces + tips_edges + rim + back + radiation + wall; }
+    T total() const {
+        return channels + outer_faces + tips_edges + rim + bare + back + radiation + wall;
+    }
 };
 
 } // namespace finwright::sink

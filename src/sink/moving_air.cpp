@@ -40,7 +40,7 @@ template <class T>
 T duct_flow(const Geometry<T>& g, const Surroundings& s) {
     if (const auto* flow = std::get_if<DuctFlow>(&s.air)) return T(flow->volume);
     if (const auto* velocity = std::get_if<DuctVelocity>(&s.air))
-        return velocity->approach * g.width() * g.height;
+        return velocity->approach * g.field_width() * g.height;
     return T(0.0);
 }
 
@@ -79,15 +79,15 @@ MovingAirSink<T>::MovingAirSink(const Geometry<T>& geometry, const Duty& duty)
                                                                      surroundings_.pressure)),
       fin_shape_(fin_shape(geometry, duty.material.conductivity)),
       channels_area_(free_between(geometry)) {
-    const T face = g_.width() * g_.height;
+    const T face = g_.field_width() * g_.height;
     duct_area_ = face;
     bypass_area_ = bypass_diameter_ = T(0.0);
     free_ = !walls_around(surroundings_);
     if (const auto clearance = clearance_of(surroundings_)) {
-        duct_area_ = (g_.width() + 2.0 * clearance->beside) * (g_.height + clearance->above);
+        duct_area_ = (g_.field_width() + 2.0 * clearance->beside) * (g_.height + clearance->above);
         bypass_area_ = duct_area_ - face;
         // The duct's walls and the outer fin faces; between the tips there is air, not wall.
-        const T wetted = g_.width() + 4.0 * clearance->beside +
+        const T wetted = g_.field_width() + 4.0 * clearance->beside +
                          2.0 * (g_.height + clearance->above) + 2.0 * g_.height;
         bypass_diameter_ = 4.0 * bypass_area_ / wetted;
     }
@@ -155,7 +155,7 @@ MovingAirView<T> MovingAirSink<T>::passing(const Flow& flow, const T& base_rise)
     v.entering_flow = entering_flow(v);
     v.approach_velocity = flow.total / duct_area_;
     v.channel_velocity = v.channel_flow / channels_area_;
-    v.free_area_ratio = channels_area_ / (g_.width() * g_.height);
+    v.free_area_ratio = channels_area_ / (g_.field_width() * g_.height);
     v.hydraulic_diameter = 2.0 * gap * g_.height / (gap + g_.height);
     v.aspect = min(gap, g_.height) / max(gap, g_.height);
     v.reynolds = inlet_density_ * v.channel_velocity * v.hydraulic_diameter / viscosity;
@@ -165,7 +165,7 @@ MovingAirView<T> MovingAirSink<T>::passing(const Flow& flow, const T& base_rise)
         v.bypass_velocity = mean.beside / bypass_area_;
         v.bypass_reynolds = inlet_density_ * v.bypass_velocity * bypass_diameter_ / viscosity;
     }
-    v.outer_reynolds = inlet_density_ * v.bypass_velocity * g_.length / viscosity;
+    v.outer_reynolds = inlet_density_ * v.bypass_velocity * g_.fin_length() / viscosity;
     v.capacity_flow = inlet_density_ * v.entering_flow * correlations::air_specific_heat(held);
     lose_pressure(v);
     return v;
@@ -179,20 +179,21 @@ void MovingAirSink<T>::convect(MovingAirView<T>& v) const {
                              surroundings_.pressure);
     v.prandtl = air.prandtl();
     v.film = correlations::nusselt_duct_all_regimes(v.reynolds, v.prandtl, v.aspect,
-                                                    T(g_.length / v.hydraulic_diameter)) *
+                                                    T(g_.fin_length() / v.hydraulic_diameter)) *
              air.conductivity / v.hydraulic_diameter;
     if (value_of(v.bypass_velocity) > 0.0)
         v.outer_film = correlations::nusselt_flat_plate(v.outer_reynolds, v.prandtl) *
-                       air.conductivity / g_.length;
-    const T face = g_.height * g_.length;
-    const T ends = g_.tip_thickness() * g_.length * v.outer_film;
-    v.inner_efficiency = efficiency(T(2.0 * face * v.film + ends), fin_shape_);
-    v.outer_efficiency = efficiency(T(face * (v.film + v.outer_film) + ends), fin_shape_);
+                       air.conductivity / g_.fin_length();
+    const T face = g_.height * g_.fin_length();
+    const T ends = g_.tip() * v.outer_film;
+    v.inner_efficiency = joined_efficiency(T(2.0 * face * v.film + ends), fin_shape_, g_);
+    v.outer_efficiency =
+        joined_efficiency(T(face * (v.film + v.outer_film) + ends), fin_shape_, g_);
     v.leaving_share = 1.0 - v.exit_flow / v.entering_flow;
     const double n = g_.fins;
     const T effective_area =
         face * (2.0 * (n - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency) +
-        (n - 1.0) * g_.gap * g_.length;
+        (n - 1.0) * g_.gap * g_.fin_length();
     v.transfer_units = v.film * effective_area / v.capacity_flow;
 }
 
@@ -201,7 +202,7 @@ T MovingAirSink<T>::bypass_loss(const MovingAirView<T>& v) const {
     const T mean = v.bypass_velocity * v.bypass_velocity;
     if (free_) return 0.5 * inlet_density_ * mean;
     const T exit = v.bypass_exit_flow / bypass_area_;
-    const T length_ratio = g_.length / bypass_diameter_;
+    const T length_ratio = g_.fin_length() / bypass_diameter_;
     const T friction = 4.0 *
                        correlations::fapp_all_regimes(v.bypass_reynolds, T(0.0), length_ratio) *
                        length_ratio;
@@ -213,7 +214,7 @@ void MovingAirSink<T>::lose_pressure(MovingAirView<T>& v) const {
     const T bulk_mean = surroundings_.air_temperature + 0.5 * power_ / v.capacity_flow;
     const T bulk_density = correlations::air_density(
         correlations::clamp(bulk_mean, coldest_film, hottest_film), surroundings_.pressure);
-    const T length_ratio = g_.length / v.hydraulic_diameter;
+    const T length_ratio = g_.fin_length() / v.hydraulic_diameter;
     const T friction =
         4.0 * correlations::fapp_all_regimes(v.reynolds, v.aspect, length_ratio) * length_ratio;
     const T through = inlet_density_ * v.channel_velocity; // mass per area and time, as all below
@@ -366,8 +367,9 @@ HeatPaths<T> MovingAirSink<T>::heat(const MovingAirView<T>& v) const {
     q.channels = v.capacity_flow * taken_up(v.transfer_units, v.leaving_share) * v.base_rise;
     const double n = g_.fins;
     const T fins_mean = (n - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency;
-    q.outer_faces = 2.0 * g_.height * g_.length * v.outer_efficiency * v.outer_film * v.base_rise;
-    q.tips_edges = g_.tip_thickness() * g_.length * fins_mean * v.outer_film * v.base_rise;
+    q.outer_faces =
+        2.0 * g_.height * g_.fin_length() * v.outer_efficiency * v.outer_film * v.base_rise;
+    q.tips_edges = g_.tip() * fins_mean * v.outer_film * v.base_rise;
     return q;
 }
 

@@ -56,8 +56,14 @@ std::vector<LawUse> channel_laws(const StillAirView<double>& v, const Geometry<d
 }
 
 std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry<double>& g,
-                                   const StillAir& still) {
+                                   const StillAir& still, double emissivity) {
     std::vector<LawUse> uses{{"air_conductivity", "air in the film", {v.film_temperature}}};
+    if (g.plate()) {
+        uses.push_back({"inclined_face",
+                        "the plate's faces and rim",
+                        {v.grashof_unit, v.prandtl, g.length, g.width(), still.mounting.tilt}});
+        return uses;
+    }
     for (LawUse& use : channel_laws(v, g, still))
         uses.push_back(std::move(use));
     if (std::sin(still.mounting.tilt) == 0.0 && !still.mounting.fins_level)
@@ -75,8 +81,9 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
             uses.push_back(
                 {"mixed_against", "drift against rising air", {v.forced_film, v.natural_film}});
     }
-    uses.push_back(
-        {"channel_opening", "radiation of the channels", {g.mean_gap(), g.height, g.length}});
+    uses.push_back({"channel_radiation_zoned",
+                    "radiation of the channels",
+                    {emissivity, g.mean_gap(), g.height, g.length}});
     return uses;
 }
 
@@ -102,7 +109,7 @@ void rate_air(Rating& rating, const Duty& duty, double driving_rise) {
     if (const auto* still = std::get_if<StillAir>(&duty.surroundings.air)) {
         const StillAirSink<double> model(g, duty);
         const auto view = model.view(driving_rise);
-        rating.laws = still_air_laws(view, g, *still);
+        rating.laws = still_air_laws(view, g, *still, duty.material.emissivity);
         rating.view = view;
         return;
     }

@@ -1,6 +1,7 @@
 #include "src/sink/still_air.hpp"
 
 #include "correlations/air.hpp"
+#include "correlations/channel_radiation.hpp"
 #include "correlations/forced_channel.hpp"
 #include "correlations/natural_inclined.hpp"
 #include "correlations/numbers/dual.hpp"
@@ -40,22 +41,29 @@ struct StillAirSink<T>::AirFilm {
 
 template <class T>
 StillAirSink<T>::StillAirSink(const Geometry<T>& geometry, const Duty& duty)
-    : g_(geometry), fin_channel_(geometry.mean_gap(), geometry.height, geometry.length),
+    : g_(geometry),
+      fin_channel_(geometry.plate()
+                       ? correlations::FinChannel<T>()
+                       : correlations::FinChannel<T>(geometry.mean_gap(), geometry.height,
+                                                     geometry.fin_length())),
       surroundings_(duty.surroundings), material_(duty.material),
       state_(std::get<StillAir>(duty.surroundings.air)),
       radiating_(surroundings_.radiating_temperature.value_or(surroundings_.air_temperature)),
       along_(std::max(0.0, std::cos(state_.mounting.tilt))),
       away_(std::abs(std::sin(state_.mounting.tilt))) {
-    const T gap = g_.mean_gap();
-    wetted_ = (2.0 * g_.height + g_.gap) * g_.length;
-    exchange_ = correlations::channel_radiation_conductance(
-        material_.emissivity, wetted_, correlations::channel_opening(gap, g_.height, g_.length));
-    fin_shape_ = fin_shape(g_, material_.conductivity);
-    edges_ = 2.0 * g_.mean_thickness() * g_.height;
-    tip_ = g_.tip_thickness() * g_.length;
     rim_ = 2.0 * (g_.length + g_.width()) * g_.base;
+    bare_ = g_.bare();
     back_ = open_back(g_, duty, state_);
     sun_ = sun_taken(g_, surroundings_);
+    wetted_ = exchange_ = fin_shape_ = edges_ = tip_ = T(0.0);
+    if (g_.plate()) return;
+    const T gap = g_.mean_gap();
+    wetted_ = (2.0 * g_.height + g_.gap) * g_.fin_length();
+    exchange_ = correlations::channel_radiation_zoned(material_.emissivity, gap, g_.height,
+                                                      g_.fin_length());
+    fin_shape_ = fin_shape(g_, material_.conductivity);
+    edges_ = 2.0 * g_.mean_thickness() * g_.height;
+    tip_ = g_.tip();
 }
 
 template <class T>
@@ -87,7 +95,7 @@ T StillAirSink<T>::channel_coefficient(const StillAirView<T>& v, const T& conduc
     const T flat =
         share *
         correlations::nusselt_horizontal_array(T(away_ * v.grashof_unit * gap * gap * gap)) *
-        correlations::horizontal_length_factor(g_.length) * conductivity / gap;
+        correlations::horizontal_length_factor(g_.fin_length()) * conductivity / gap;
     return greater_of(along, flat);
 }
 
@@ -108,13 +116,13 @@ T StillAirSink<T>::outer_coefficient(const StillAirView<T>& v) const {
     if (state_.mounting.fins_level) {
         const double lean = upside - std::abs(state_.mounting.tilt);
         const auto face = [&](double tilt) {
-            return correlations::inclined_face(v.grashof_unit, v.prandtl, g_.height, g_.length,
-                                               tilt);
+            return correlations::inclined_face(v.grashof_unit, v.prandtl, g_.height,
+                                               g_.fin_length(), tilt);
         };
         return 0.5 * (face(lean) + face(-lean));
     }
-    if (away_ == 0.0) return v.plate / g_.length;
-    const T rise = 1.0 / (along_ / g_.length + away_ / g_.height);
+    if (away_ == 0.0) return v.plate / g_.fin_length();
+    const T rise = 1.0 / (along_ / g_.fin_length() + away_ / g_.height);
     return correlations::nusselt_vertical_laminar(T(v.grashof_unit * rise * rise * rise),
                                                   v.prandtl) /
            rise;
@@ -150,12 +158,14 @@ void StillAirSink<T>::drift(StillAirView<T>& v, const AirFilm& air) const {
     v.outer_film = mixed(plate, v.outer_film);
     v.edge_film = mixed(plate, v.edge_film);
     if (state_.mounting.back_exposed) v.back_film = mixed(plate, v.back_film);
-    if (across) return;
+    if (across || g_.plate()) return;
     const T gap = g_.mean_gap();
-    const T inside = correlations::drift_in_channel(speed, air.kinematic_viscosity, gap, g_.length);
-    const T forced = correlations::nusselt_inlet_plates(
-                         T(inside * gap / air.kinematic_viscosity * gap / g_.length), v.prandtl) *
-                     air.conductivity / gap;
+    const T inside =
+        correlations::drift_in_channel(speed, air.kinematic_viscosity, gap, g_.fin_length());
+    const T forced =
+        correlations::nusselt_inlet_plates(
+            T(inside * gap / air.kinematic_viscosity * gap / g_.fin_length()), v.prandtl) *
+        air.conductivity / gap;
     v.kinematic_viscosity = air.kinematic_viscosity;
     v.natural_film = v.channel_film;
     v.forced_film = forced;
@@ -164,6 +174,7 @@ void StillAirSink<T>::drift(StillAirView<T>& v, const AirFilm& air) const {
 
 template <class T>
 StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
+    if (g_.plate()) return plate_view(wall_rise);
     const double ambient = surroundings_.air_temperature;
     const T gap = g_.mean_gap();
     StillAirView<T> v;
@@ -178,9 +189,10 @@ StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
     const T radius = correlations::hydraulic_radius(gap, g_.height);
     const T gap2 = gap * gap, radius2 = radius * radius;
     const T along = along_ * v.grashof_unit;
-    v.elenbaas = along * gap2 * gap2 / g_.length;
-    v.rayleigh_radius = along * radius2 * radius2 / g_.length;
-    v.rayleigh_length = along * g_.length * g_.length * g_.length;
+    const T run = g_.fin_length();
+    v.elenbaas = along * gap2 * gap2 / run;
+    v.rayleigh_radius = along * radius2 * radius2 / run;
+    v.rayleigh_length = along * run * run * run;
     v.plate = correlations::nusselt_vertical_laminar(v.rayleigh_length, v.prandtl);
     const AirFilm film{air.conductivity, air.kinematic_viscosity()};
     convect(v, film);
@@ -188,18 +200,28 @@ StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
     const T black = correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(radiating_));
     v.channel_radiation = black * exchange_ / wetted_;
     v.outer_radiation = material_.emissivity * black;
+    roughen(v);
     conduct(v);
     return v;
 }
 
+/// Serrated faces: more area for convection, taken into the films. Radiation sees no more of them.
+template <class T>
+void StillAirSink<T>::roughen(StillAirView<T>& v) const {
+    const double more = g_.details.area_factor - 1.0;
+    if (more == 0.0) return;
+    v.channel_film *= 1.0 + more * 2.0 * g_.height / (2.0 * g_.height + g_.gap);
+    v.outer_film *= 1.0 + more;
+}
+
 template <class T>
 void StillAirSink<T>::conduct(StillAirView<T>& v) const {
-    const T face = g_.height * g_.length;
+    const T face = g_.height * g_.fin_length();
     const T inside = v.channel_film + v.channel_radiation;
     const T outside = v.outer_film + v.outer_radiation;
     const T ends = (tip_ + edges_) * (v.edge_film + v.outer_radiation);
-    v.inner_efficiency = efficiency(T(2.0 * face * inside + ends), fin_shape_);
-    v.outer_efficiency = efficiency(T(face * (inside + outside) + ends), fin_shape_);
+    v.inner_efficiency = joined_efficiency(T(2.0 * face * inside + ends), fin_shape_, g_);
+    v.outer_efficiency = joined_efficiency(T(face * (inside + outside) + ends), fin_shape_, g_);
     const T fin_share = 2.0 * g_.height / (2.0 * g_.height + g_.gap);
     v.base_rise = v.wall_rise / (1.0 - fin_share * (1.0 - v.inner_efficiency));
 }
@@ -208,21 +230,48 @@ void StillAirSink<T>::conduct(StillAirView<T>& v) const {
 
 template <class T>
 T StillAirSink<T>::channel_area(const StillAirView<T>& v) const {
+    if (g_.plate()) return T(0.0);
     const double n = g_.fins;
-    return g_.height * g_.length *
+    return g_.height * g_.fin_length() *
                (2.0 * (n - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency) +
-           (n - 1.0) * g_.gap * g_.length;
+           (n - 1.0) * g_.gap * g_.fin_length();
 }
 
 template <class T>
 T StillAirSink<T>::outer_area(const StillAirView<T>& v) const {
-    return 2.0 * g_.height * g_.length * v.outer_efficiency;
+    if (g_.plate()) return T(0.0);
+    return 2.0 * g_.height * g_.fin_length() * v.outer_efficiency;
 }
 
 template <class T>
 T StillAirSink<T>::ends_area(const StillAirView<T>& v) const {
+    if (g_.plate()) return T(0.0);
     return (tip_ + edges_) *
            ((double(g_.fins) - 2.0) * v.inner_efficiency + 2.0 * v.outer_efficiency);
+}
+
+/// A plate without fins, stated by its own rise.
+template <class T>
+StillAirView<T> StillAirSink<T>::plate_view(const T& rise) const {
+    StillAirView<T> v;
+    v.wall_rise = v.base_rise = rise;
+    v.film_temperature = surroundings_.air_temperature + 0.5 * rise;
+    const auto air =
+        correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
+                             surroundings_.pressure);
+    v.prandtl = air.prandtl();
+    v.grashof_unit =
+        gravity * air.expansion * rise / (air.kinematic_viscosity() * air.diffusivity());
+    v.rayleigh_length = along_ * v.grashof_unit * g_.length * g_.length * g_.length;
+    v.edge_film = front_coefficient(v, state_.mounting.tilt) * air.conductivity;
+    v.outer_film = v.edge_film;
+    if (state_.mounting.back_exposed)
+        v.back_film = front_coefficient(v, -state_.mounting.tilt) * air.conductivity;
+    if (state_.drift) drift(v, {air.conductivity, air.kinematic_viscosity()});
+    v.outer_radiation =
+        material_.emissivity * correlations::radiation_coefficient(
+                                   1.0, T(surroundings_.air_temperature + rise), T(radiating_));
+    return v;
 }
 
 template <class T>
@@ -233,16 +282,18 @@ HeatPaths<T> StillAirSink<T>::heat(const StillAirView<T>& v) const {
     q.outer_faces = outside * v.outer_film * v.base_rise;
     q.tips_edges = ends * v.edge_film * v.base_rise;
     q.rim = rim_ * v.edge_film * v.base_rise;
+    q.bare = bare_ * v.edge_film * v.base_rise;
     if (state_.mounting.back_exposed) q.back = back_ * v.back_film * v.base_rise;
-    q.radiation =
-        (inside * v.channel_radiation + (outside + ends + rim_ + back_) * v.outer_radiation) *
-        v.base_rise;
+    q.radiation = (inside * v.channel_radiation +
+                   (outside + ends + rim_ + bare_ + back_) * v.outer_radiation) *
+                  v.base_rise;
     if (radiating_ != surroundings_.air_temperature) {
         StillAirView<T> whole = v; // every surface at full area: the air lies off what it sees
         whole.inner_efficiency = whole.outer_efficiency = T(1.0);
-        q.radiation += (channel_area(whole) * v.channel_radiation +
-                        (outer_area(whole) + ends_area(whole) + rim_ + back_) * v.outer_radiation) *
-                       (surroundings_.air_temperature - radiating_);
+        q.radiation +=
+            (channel_area(whole) * v.channel_radiation +
+             (outer_area(whole) + ends_area(whole) + rim_ + bare_ + back_) * v.outer_radiation) *
+            (surroundings_.air_temperature - radiating_);
     }
     if (const auto& wall = state_.mounting.wall_conductance)
         q.wall = *wall * (v.base_rise + (surroundings_.air_temperature -
@@ -255,9 +306,10 @@ T sun_taken(const Geometry<T>& g, const Surroundings& surroundings) {
     const auto* still = std::get_if<StillAir>(&surroundings.air);
     if (!still || !still->sun) return T(0.0);
     const double alpha = still->sun->absorptivity;
+    if (g.plate()) return still->sun->irradiance * alpha * g.footprint();
     const T cavity =
         1.0 / (1.0 + (1.0 / alpha - 1.0) * g.mean_gap() / (g.mean_gap() + 2.0 * g.height));
-    const T mouths = double(g.fins - 1) * (g.gap + 2.0 * (g.mean_gap() - g.gap)) * g.length;
+    const T mouths = double(g.fins - 1) * (g.gap + 2.0 * (g.mean_gap() - g.gap)) * g.fin_length();
     const T rest = g.footprint() - mouths;
     return still->sun->irradiance * (cavity * mouths + alpha * rest);
 }

@@ -6,12 +6,12 @@
 // the share of gravity along them, and the horizontal-array law with the share away from them; the
 // outer fin faces are single plates; tips, end faces and rim follow the plate the fins' front
 // makes, because the same rising film bathes them. A drift adds its own film to each. Radiation:
-// channels as grey one-zone cavities through their exact openings, outer surfaces with view factor
-// 1. A fin is conducted with convection and radiation together, its tip and end faces added to its
-// conductance and half its thickness to its height (Harper & Brown). Properties at the film
-// temperature of the channel wall. Its mean rise is what everything is stated by: the films follow
-// from it, the fins' efficiency from the films, and the base's rise from the efficiency, with
-// nothing to iterate.
+// channels as grey cavities through their exact openings, zoned (channel_radiation.hpp); outer
+// surfaces with view factor 1. A fin is conducted with convection and radiation together, its tip
+// and end faces added to its conductance and half its thickness to its height (Harper & Brown).
+// Properties at the film temperature of the channel wall. Its mean rise is what everything is
+// stated by: the films follow from it, the fins' efficiency from the films, and the base's rise
+// from the efficiency, with nothing to iterate.
 
 #include "correlations/natural_channel.hpp"
 #include "src/sink/duty.hpp"
@@ -73,7 +73,9 @@ private:
     T channel_coefficient(const StillAirView<T>& v, const T& conductivity) const;
     T outer_coefficient(const StillAirView<T>& v) const;
     T front_coefficient(const StillAirView<T>& v, double tilt) const;
+    void roughen(StillAirView<T>& v) const;
     void conduct(StillAirView<T>& v) const;
+    StillAirView<T> plate_view(const T& rise) const;
     T channel_area(const StillAirView<T>& v) const;
     T outer_area(const StillAirView<T>& v) const;
     T ends_area(const StillAirView<T>& v) const;
@@ -92,6 +94,7 @@ private:
     T edges_;     ///< one fin: its two end faces [m2]
     T tip_;       ///< one fin: its tip [m2]
     T rim_;       ///< four sides of the base [m2]
+    T bare_;      ///< base that looks past the fins [m2]
     T back_;      ///< of the base, beside the pads; 0 where covered [m2]
     T sun_;       ///< heat taken up [W]
 };

@@ -41,14 +41,17 @@ std::vector<std::string> broken_limits(const job::Job& job, const sink::Rating& 
         if (range.from) b.at_least(name, value, *range.from, 1e3, " mm");
     };
     within("width", g.width(), job.sink.width);
-    within("gap", g.gap, job.sink.gap);
-    within("fin thickness", g.tip_thickness(), job.sink.fin_thickness);
+    if (!g.plate()) {
+        within("gap", g.gap, job.sink.gap);
+        within("fin thickness", g.tip_thickness(), job.sink.fin_thickness);
+    }
     b.at_most("width", g.width(), limits.space.width, 1e3, " mm");
     b.at_most("overall height", g.overall_height(), limits.space.height, 1e3, " mm");
     b.at_most("length", g.length, limits.space.length, 1e3, " mm");
     b.at_most("mass", rating.mass, limits.mass, 1e3, " g");
     b.at_most("pressure drop", rating.pressure_drop, limits.pressure_drop, 1.0, " Pa");
     b.at_most("sink resistance", rating.sink_resistance(), limits.sink_resistance, 1.0, " °C/W");
+    if (g.plate()) return b.sentences;
     b.at_least("fin thickness", g.tip_thickness(), shop.smallest_thickness, 1e3, " mm");
     b.at_least("gap", g.gap, shop.smallest_gap, 1e3, " mm");
     b.at_least("base thickness", g.base, shop.smallest_base, 1e3, " mm");

@@ -93,7 +93,8 @@ std::array<Room, dimension_count> rooms_of(const Job& job, int fins) {
     narrow(base, sink.base_thickness);
 
     Room& length = rooms[std::size_t(Dimension::length)];
-    length = room(std::max(pads.length, 5e-3), "pads", longest, "search range", sink.steps.length);
+    length = room(std::max({pads.length, 5e-3, 1.2 * sink.details.fin_free}), "pads", longest,
+                  "search range", sink.steps.length);
     cap(length, job.limits.space.length, "space");
     narrow(length, sink.length);
     return rooms;
@@ -181,7 +182,7 @@ std::vector<std::optional<double>> allowed_pad_rises(const Job& job) {
 }
 
 FinCounts fin_counts(const Job& job) {
-    const double width = widest_of(job).value;
+    const double width = widest_of(job).value - 2.0 * job.sink.details.flange;
     const double thinnest =
         std::max(job.sink.process.smallest_thickness, job.sink.fin_thickness.from.value_or(0.0));
     const double narrowest =
@@ -198,7 +199,9 @@ std::optional<DesignSpace> design_space(const Job& job, int fins) {
     space.rooms = rooms_of(job, fins);
     space.draft_tangent = std::tan(job.sink.fin_draft);
     space.width_rule = width_rule(job.sink);
-    space.width = job.sink.width.fixed() ? *job.sink.width.from : 0.0;
+    space.details = job.sink.details;
+    space.width =
+        job.sink.width.fixed() ? *job.sink.width.from - 2.0 * job.sink.details.flange : 0.0;
     for (const Room& r : space.rooms)
         if (r.lower > r.upper) return std::nullopt;
     add_width_limits(space, job);

@@ -62,6 +62,7 @@ struct DesignSpace {
     std::array<Room, dimension_count> rooms;
     WidthRule width_rule = WidthRule::follows;
     double width = 0.0; ///< the fixed width, where there is one [m]
+    job::FinDetails details;
     double draft_tangent = 0.0;
     std::vector<Limit> limits;
 };

@@ -213,7 +213,7 @@ Geometry<T> SearchProblem::build(Seed&& seed) const {
     for (std::size_t i = 0; i < free_.size(); ++i)
         d[std::size_t(free_[i])] = seed(i);
     const T root = d[1] + 2.0 * space_.draft_tangent * d[0];
-    Geometry<T> g{space_.fins, d[0], root, d[2], d[3], d[4], space_.draft_tangent};
+    Geometry<T> g{space_.fins, d[0], root, d[2], d[3], d[4], space_.draft_tangent, space_.details};
     if (space_.width_rule == WidthRule::sets_gap)
         g.gap = floored(sink::gap_for_width(g.fins, T(space_.width), g.thickness), d[2]);
     if (space_.width_rule == WidthRule::sets_thickness)

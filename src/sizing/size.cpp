@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 namespace finwright::sizing {
 
@@ -39,10 +40,10 @@ std::vector<double> warmed_parts(const sink::Geometry<double>& g, const sink::Du
     return warmed;
 }
 
-/// How far the hottest part stands above what it is allowed [K].
+/// How far the hottest part stands above what it is allowed; negative: what is left [K].
 double excess(const Job& job, const sink::Rating& rating) {
     const auto allowed = allowed_pad_rises(job);
-    double most = 0.0;
+    double most = -std::numeric_limits<double>::infinity();
     for (std::size_t i = 0; i < allowed.size(); ++i)
         if (allowed[i])
             most = std::max(most,
@@ -52,6 +53,20 @@ double excess(const Job& job, const sink::Rating& rating) {
 
 double rounded_aim(const Sizing& sizing) {
     return std::get<Answer>(sizing).design.rounded_aim;
+}
+
+std::optional<PlainPlate> plain_plate(const Job& job, double thickness) {
+    const job::Space& space = job.limits.space;
+    const auto allowed = allowed_pad_rises(job);
+    const bool held = std::any_of(allowed.begin(), allowed.end(),
+                                  [](const auto& rise) { return rise.has_value(); });
+    if (!space.width || !space.length || !held) return std::nullopt;
+    PlainPlate plate;
+    plate.geometry = {0, 0.0, 0.0, *space.width, thickness, *space.length};
+    const sink::Rating rating = sink::rate(plate.geometry, sink::duty_of(job));
+    plate.mass = rating.mass;
+    plate.excess = excess(job, rating);
+    return plate;
 }
 
 /// Whether the map says anything the search did not know [K].
@@ -66,7 +81,11 @@ bool matters(const std::vector<double>& warmed, const std::vector<double>& kept)
 /// end.
 Sizing size_with_one_fan(const Job& job, const SearchOptions& options) {
     Sizing sizing = size_on_even_air(job, options);
-    if (std::holds_alternative<job::StillAir>(job.air.state)) return sizing;
+    if (std::holds_alternative<job::StillAir>(job.air.state)) {
+        if (auto* answer = std::get_if<Answer>(&sizing))
+            answer->plate = plain_plate(job, answer->design.rounded.base);
+        return sizing;
+    }
     const sink::Duty duty = sink::duty_of(job);
     std::vector<double> kept(job.parts.size(), 0.0);
     std::optional<Sizing> best;

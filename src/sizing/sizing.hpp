@@ -40,6 +40,13 @@ struct FanChoice {
     std::optional<double> aim; ///< of its rounded design, SI; empty where there is none
 };
 
+/// The space filled by a plate without fins, as thick as the answer's base.
+struct PlainPlate {
+    sink::Geometry<double> geometry;
+    double mass = 0.0;   ///< [kg]
+    double excess = 0.0; ///< of the hottest part over what it is allowed; negative: left [K]
+};
+
 struct Answer {
     Design design;
     sink::Rating rating; ///< of the rounded design
@@ -51,8 +58,9 @@ struct Answer {
     /// What air warmed by the others adds to each part, kept free of the rise the search allowed it
     /// [K]; empty in still air.
     std::vector<double> warmed;
-    std::size_t fan = 0;         ///< of the job's fans, the one this answer rests on
-    std::vector<FanChoice> fans; ///< all of them, where there are several
+    std::optional<PlainPlate> plate; ///< still air in a space of known sides
+    std::size_t fan = 0;             ///< of the job's fans, the one this answer rests on
+    std::vector<FanChoice> fans;     ///< all of them, where there are several
 };
 
 /// Why no design exists, and what is left to try.

@@ -22,7 +22,8 @@ sink::Geometry<Dual5> independent(const sink::Geometry<double>& g) {
             Dual5::variable(g.gap, 2),
             Dual5::variable(g.base, 3),
             Dual5::variable(g.length, 4),
-            g.draft_tangent};
+            g.draft_tangent,
+            g.details};
 }
 
 } // namespace

@@ -23,7 +23,16 @@ double stated(const Job& job, const Range& range, const char* key) {
 sink::Geometry<double> stated_dimensions(const Job& job) {
     const job::Sink& sink = job.sink;
     sink::Geometry<double> g;
+    g.details = sink.details;
     g.fins = int(std::lround(stated(job, sink.fins, "fins")));
+    if (g.plate()) {
+        g.height = g.thickness = 0.0;
+        g.details = {};
+        g.gap = stated(job, sink.width, "width");
+        g.base = stated(job, sink.base_thickness, "base_thickness");
+        g.length = stated(job, sink.length, "length");
+        return g;
+    }
     g.height = stated(job, sink.fin_height, "fin_height");
     g.draft_tangent = std::tan(sink.fin_draft);
     g.base = stated(job, sink.base_thickness, "base_thickness");
@@ -31,16 +40,20 @@ sink::Geometry<double> stated_dimensions(const Job& job) {
     const double taper = 2.0 * g.draft_tangent * g.height;
     if (sink.width.fixed() && sink.gap.fixed() && !sink.fin_thickness.fixed()) {
         g.gap = *sink.gap.from;
-        g.thickness = (*sink.width.from - double(g.fins - 1) * g.gap) / double(g.fins);
+        g.thickness = (*sink.width.from - 2.0 * sink.details.flange - double(g.fins - 1) * g.gap) /
+                      double(g.fins);
         return g;
     }
     g.thickness = stated(job, sink.fin_thickness, "fin_thickness") + taper;
-    g.gap = sink.width.fixed() ? sink::gap_for_width(g.fins, *sink.width.from, g.thickness)
-                               : stated(job, sink.gap, "gap");
+    g.gap =
+        sink.width.fixed()
+            ? sink::gap_for_width(g.fins, *sink.width.from - 2.0 * sink.details.flange, g.thickness)
+            : stated(job, sink.gap, "gap");
     return g;
 }
 
 void require_air(const Job& job, const sink::Geometry<double>& g) {
+    if (g.plate()) return;
     const Range& width = job.sink.width;
     if (g.gap <= 0.0)
         throw job::InputError(job.file, job.text, width.place,
