@@ -10,6 +10,7 @@ namespace finwright::cli {
 struct JobCommand {
     std::string job_file;
     std::optional<std::string> json_file;
+    std::optional<std::string> curves_file; ///< of rate
 };
 
 int size_command(const JobCommand& command);

@@ -72,6 +72,9 @@ int run(int argc, char** argv) {
     CLI::App* check = job_command(app, "check", "read a job and say what was understood", command);
     add_json(size, command);
     add_json(rate, command);
+    rate->add_option("--curves", command.curves_file,
+                     "write °C/W over power, air and altitude to FILE (.csv or .json)")
+        ->type_name("FILE");
     CLI::App* laws = app.add_subcommand("laws", "list the laws, show one, or evaluate it by hand");
     laws->add_option("NAME", law, "a law's short name");
     laws->add_option("values", values, "its inputs in SI, as symbol=number");

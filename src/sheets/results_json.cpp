@@ -103,6 +103,29 @@ Json laws_json(const std::vector<sink::LawUse>& laws) {
     return list;
 }
 
+/// The base's temperature place by place: values[j][i] at (x[i], y[j]).
+Json base_map_json(const job::Job& job, const sink::Rating& r) {
+    const auto duty = sink::duty_of(job);
+    const auto field = sink::base_field(sink::base_map(r.geometry, duty, r));
+    Json x = Json::array(), y = Json::array(), rises = Json::array();
+    for (int i = 0; i < field.across.cells(); ++i)
+        x.push_back(field.across.centre(i));
+    for (int j = 0; j < field.along.cells(); ++j) {
+        y.push_back(field.along.centre(j));
+        Json row = Json::array();
+        for (int i = 0; i < field.across.cells(); ++i)
+            row.push_back(std::round(field.rise(i, j) * 1e4) * 1e-4);
+        rises.push_back(std::move(row));
+    }
+    return {{"across_m", x},
+            {"along_m", y},
+            {"rise_over_inlet_K", rises},
+            {"hottest",
+             {{"across_m", field.hottest.x},
+              {"along_m", field.hottest.y},
+              {"rise_K", field.hottest.rise}}}};
+}
+
 Json rating_json(const sink::Rating& r) {
     Json parts = Json::array();
     for (const auto& part : r.parts)
@@ -246,6 +269,7 @@ std::string results_json(const job::Job& job, const sizing::Answer& answer) {
          {"job", job_json(job)},
          {"geometry", geometry_json(answer.rating.geometry)},
          {"rating", rating_json(answer.rating)},
+         {"base_map", base_map_json(job, answer.rating)},
          {"design", design_json(answer.design)},
          {"binding_limits", binding_json(answer.binding, "aim_saved_SI_per_SI_unit_eased")},
          {"least_aim_before_rounding_SI", answer.least_aim},
@@ -260,6 +284,7 @@ std::string results_json(const job::Job& job, const sink::Rating& rating) {
                      {"job", job_json(job)},
                      {"geometry", geometry_json(rating.geometry)},
                      {"rating", rating_json(rating)},
+                     {"base_map", base_map_json(job, rating)},
                      {"cautions", cautions(job, rating)}});
 }
 

@@ -3,6 +3,7 @@
 #include "src/job/read_job.hpp"
 #include "tests/cli/run_program.hpp"
 #include "tests/near.hpp"
+#include <algorithm>
 #include <cmath>
 #include <filesystem>
 #include <nlohmann/json.hpp>
@@ -187,4 +188,34 @@ TEST_CASE("laws: a value worked by hand") {
     const auto at = run.output.rfind("Nu = ");
     REQUIRE(at != std::string::npos);
     CHECK(std::strtod(run.output.c_str() + at + 5, nullptr) == near(by_hand, 1e-8));
+}
+
+TEST_CASE("rate --curves: through the rated point, monotone, as CSV and as JSON") {
+    const Folder folder;
+    const auto csv = (folder.path / "c.csv").string(), json = (folder.path / "c.json").string();
+    REQUIRE(run_program("rate configs/jobs/drawer_sink.yaml --curves " + csv).exit_code == 0);
+    REQUIRE(run_program("rate configs/jobs/drawer_sink.yaml --curves " + json).exit_code == 0);
+    const auto lines = text_of(csv);
+    const Json points = Json::parse(text_of(json));
+    CHECK(std::count(lines.begin(), lines.end(), '\n') == long(points.size()) + 1);
+    double before = 0.0, resistance = 1e9;
+    for (const auto& p : points) {
+        if (p["altitude_m"].get<double>() != 0.0) break;
+        CHECK(p["hottest_pad_rise_K"].get<double>() > before);
+        CHECK(p["sink_resistance_K_W"].get<double>() < resistance);
+        before = p["hottest_pad_rise_K"].get<double>();
+        resistance = p["sink_resistance_K_W"].get<double>();
+    }
+}
+
+TEST_CASE("JSON: the base map's hottest place is no cooler than any pad") {
+    const Folder folder;
+    const auto file = (folder.path / "r.json").string();
+    REQUIRE(run_program("rate configs/jobs/drawer_sink.yaml --json " + file).exit_code == 0);
+    const Json j = Json::parse(text_of(file));
+    const auto& map = j["base_map"];
+    CHECK(map["rise_over_inlet_K"].size() == map["along_m"].size());
+    CHECK(map["rise_over_inlet_K"][0].size() == map["across_m"].size());
+    CHECK(map["hottest"]["rise_K"].get<double>() >=
+          j["rating"]["hottest_pad_rise_K"].get<double>() - 0.05);
 }
