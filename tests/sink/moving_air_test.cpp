@@ -4,6 +4,7 @@
 #include "src/sink/rating.hpp"
 #include "tests/near.hpp"
 #include "tests/reference_rows.hpp"
+#include "tests/sink/forced_reference.hpp"
 #include "tests/sink/random_sinks.hpp"
 
 using namespace finwright;
@@ -21,36 +22,13 @@ job::Fan straight_fan(double shut_off, double free_delivery) {
     return fan;
 }
 
-/// Very many thin fins of a perfect conductor on a base held 40 K above the air: what the reference
-/// solutions assume.
-struct Reference {
-    sink::Geometry<double> g;
-    sink::Duty duty;
-
-    explicit Reference(const tests::Row& row) {
-        g.fins = 201;
-        g.gap = number(row, "S_mm") * 1e-3;
-        g.thickness = 1e-7;
-        g.height = number(row, "H_mm") * 1e-3;
-        g.length = number(row, "L_mm") * 1e-3;
-        g.base = 5e-3;
-        duty.surroundings.air_temperature = number(row, "T_film_K") - 0.5 * number(row, "dT_K");
-        duty.material = {1e9, 2700.0, 0.1};
-        const double clearance = number(row, "clearance_mm") * 1e-3;
-        job::StreamAir stream{number(row, "V_approach_m_s"), std::nullopt};
-        if (clearance > 0.0) stream.clearance = job::Clearance{clearance, 0.0};
-        duty.surroundings.air = stream;
-        if (clearance == 0.0) duty.surroundings.air = sink::DuctVelocity{stream.velocity};
-    }
-};
-
 } // namespace
 
 // Reference solution, this project (tests/data/reference/README.md): a gap of an endless row under
 // a clearance, laminar. The aim set for heat is 10 %.
 TEST_CASE("bypass: heat within 10 %, share of the flow within 6 % of the reference solutions") {
     for (const auto& row : tests::rows_of("forced_cfd.csv")) {
-        const Reference at(row);
+        const tests::ForcedReference at(row);
         const sink::MovingAirSink<double> model(at.g, at.duty);
         const auto v = model.view(number(row, "dT_K"));
         const double gaps = at.g.fins - 1;
