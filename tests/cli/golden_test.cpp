@@ -28,6 +28,12 @@ void check_golden(const std::string& arguments, const std::string& file) {
 TEST_CASE("size: the demo jobs") {
     check_golden("size configs/jobs/pump_controller.yaml", "size_pump_controller.txt");
     check_golden("size configs/jobs/bench_supply.yaml", "size_bench_supply.txt");
+    check_golden("size configs/jobs/seed_dryer.yaml", "size_seed_dryer.txt");
+}
+
+TEST_CASE("size and rate: a tilted sink with all that acts on it, a plate without fins") {
+    check_golden("size tests/data/jobs/tilted_lamp.yaml", "size_tilted_lamp.txt");
+    check_golden("rate tests/data/jobs/plate.yaml", "rate_plate.txt");
 }
 
 TEST_CASE("rate: the sink already in the drawer") {

@@ -28,7 +28,51 @@ public:
         return job;
     }
 
+    /// Still air in some mounting, with what may act on it.
+    job::Job mounted() {
+        job::Job job = common();
+        job::StillAir still;
+        if (whole(0, 2) == 0)
+            still.drift = job::Drift{log_between(0.05, 0.5), job::Drift::Direction(whole(0, 2))};
+        job.air.state = still;
+        job.air.mounting.tilt = whole(0, 1) * between(-1.57, 1.57);
+        job.air.mounting.fins_level = whole(0, 3) == 0;
+        job.air.mounting.back_exposed = whole(0, 1) == 1;
+        if (whole(0, 1) == 1) job.air.around.sun = job::Sun{between(100.0, 900.0), 0.5};
+        if (whole(0, 2) == 0) job.sink.details.flange = between(1e-3, 10e-3);
+        if (whole(0, 2) == 0) job.sink.details.fin_free = between(5e-3, 20e-3);
+        for (job::Part& part : job.parts)
+            part.power *= 0.4;
+        return job;
+    }
+
+    /// A stream or one or two fans, mostly with room beside the fins.
+    job::Job driven() {
+        job::Job job = common();
+        std::optional<job::Clearance> clearance;
+        if (whole(0, 3) > 0) clearance = job::Clearance{between(1e-3, 15e-3), between(0.0, 8e-3)};
+        if (whole(0, 1) == 0) {
+            job.air.state = job::StreamAir{log_between(0.8, 8.0), clearance};
+        } else {
+            job::FanAir air{{fan("first")}, clearance};
+            if (whole(0, 1) == 0) air.fans.push_back(fan("second"));
+            job.air.state = air;
+        }
+        for (job::Part& part : job.parts)
+            part.power *= 2.0;
+        return job;
+    }
+
 private:
+    job::Fan fan(const char* name) {
+        const double flow = log_between(3e-3, 3e-2), pressure = log_between(15.0, 120.0);
+        job::Fan fan;
+        fan.name = name;
+        fan.flows = {0.0, 0.4 * flow, 0.7 * flow, flow};
+        fan.pressures = {pressure, 0.75 * pressure, 0.5 * pressure, 0.0};
+        return fan;
+    }
+
     double between(double low, double high) {
         return std::uniform_real_distribution<double>(low, high)(engine_);
     }
