@@ -6,6 +6,7 @@
 #include "src/job/input_error.hpp"
 #include "src/job/nearest_word.hpp"
 #include "src/sheets/laws_page.hpp"
+#include "src/sink/rating.hpp"
 #include <CLI/CLI.hpp>
 #include <cstdio>
 #include <fmt/format.h>
@@ -46,6 +47,9 @@ int guarded(const std::function<int()>& run) {
     } catch (const sheets::WrongLawInput& error) {
         fmt::print(stderr, "finwright: {}\n", error.what());
         return cli::wrong_command_line;
+    } catch (const sink::ColderThanAir& error) {
+        fmt::print(stderr, "finwright: {}\n", error.what());
+        return cli::impossible_job;
     } catch (const cli::UnwritableFile& error) {
         fmt::print(stderr, "finwright: {}\n", error.what());
         return cli::unwritable_file;

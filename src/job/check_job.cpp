@@ -8,6 +8,8 @@ namespace finwright::job {
 
 namespace {
 
+constexpr double most_cleared = 0.5; // of the length [-]
+
 /// Where a key of a top-level group stands, or the group, or the file.
 Place place_in(const Document& d, std::string_view group, std::string_view key) {
     for (const TreeNode::Entry& entry : d.root.entries) {
@@ -268,10 +270,12 @@ void check_sized_job(const Job& job, const Document& document) {
         document.fail(place_in(document, "sink", "flange"), "the flanges fill the whole width",
                       "make them narrower, or give more space",
                       place_in(document, "limits", "space"));
-    if (job.limits.space.length && job.sink.details.fin_free >= *job.limits.space.length)
-        document.fail(
-            place_in(document, "sink", "fin_free_length"), "nothing of the length is left for fins",
-            "clear less of it, or give more space", place_in(document, "limits", "space"));
+    if (job.limits.space.length &&
+        job.sink.details.fin_free > most_cleared * *job.limits.space.length)
+        document.fail(place_in(document, "sink", "fin_free_length"),
+                      "more than half of the length is cleared of fins",
+                      "clear less of it, or give more space",
+                      place_in(document, "limits", "space"));
     check_target(job, document);
     check_pressure(job, document);
     check_budgets(job, document);
@@ -286,9 +290,9 @@ void check_rated_job(const Job& job, const Document& document) {
         document.fail(job.sink.fins.place, "a plate without fins is rated in still air only",
                       "write air state: still, with a drift if there is one",
                       place_in(document, "air", "state"));
-    if (job.sink.length.fixed() && job.sink.details.fin_free >= *job.sink.length.from)
+    if (job.sink.length.fixed() && job.sink.details.fin_free > most_cleared * *job.sink.length.from)
         document.fail(place_in(document, "sink", "fin_free_length"),
-                      "nothing of the length is left for fins", "clear less of it",
+                      "more than half of the length is cleared of fins", "clear less of it",
                       job.sink.length.place);
     const auto* driven = std::get_if<FanAir>(&job.air.state);
     if (driven && driven->fans.size() > 1)

@@ -199,7 +199,7 @@ struct FinDetails {
     double flange = 0.0;      ///< of the base, beyond the fins on each side [m]
     double fin_free = 0.0;    ///< of the length, cleared of fins for mounting [m]
     double joint = 0.0;       ///< of a bonded fin in its groove, over the root's section [m2 K/W]
-    double area_factor = 1.0; ///< of serrated fin faces over smooth ones, for convection [-]
+    double area_factor = 1.0; ///< of serrated fin faces over smooth ones, in moving air [-]
     bool round_tips = false;  ///< full radius instead of square
 };
 

@@ -9,10 +9,12 @@ namespace finwright::job {
 namespace {
 
 // Beyond these a number is a slip of the unit, not a job (common practice, no source).
-constexpr double fastest_air = 100.0;              // [m/s]
-constexpr double largest_flow = 10.0;              // [m3/s]
-constexpr double fastest_drift = 1.0;              // faster air is a stream [m/s]
-constexpr double brightest_sun = 1500.0;           // [W/m2]
+constexpr double fastest_air = 100.0;                            // [m/s]
+constexpr double largest_flow = 10.0;                            // [m3/s]
+constexpr double fastest_drift = 1.0;                            // faster air is a stream [m/s]
+constexpr double brightest_sun = 1500.0;                         // [W/m2]
+constexpr double most_upright = 80.0 * std::numbers::pi / 180.0; // [rad]
+constexpr double least_distance = 20e-3;                         // between stacked sinks [m]
 constexpr double least_clearance = 1e-4;           // tighter is a duct that closes [m]
 constexpr double quarter = 0.5 * std::numbers::pi; // [rad]
 
@@ -123,8 +125,13 @@ Sun read_sun(const Document& d, const TreeNode& node) {
 SinkBelow read_sink_below(const Document& d, const TreeNode& node) {
     Mapping m(d, node, "sink_below");
     m.only({"power", "width", "distance"});
-    return {positive(d, m, "power", quantity::power), positive(d, m, "width", quantity::length),
-            positive(d, m, "distance", quantity::length)};
+    const SinkBelow below{positive(d, m, "power", quantity::power),
+                          positive(d, m, "width", quantity::length),
+                          positive(d, m, "distance", quantity::length)};
+    if (below.distance < least_distance)
+        m.fail("distance", "a sink that close below is the same sink",
+               "leave 20 mm or more between them, or size both as one");
+    return below;
 }
 
 Around read_around(const Document& d, const TreeNode& node) {
@@ -137,6 +144,14 @@ Around read_around(const Document& d, const TreeNode& node) {
     if (const TreeNode* below = m.optional("sink_below"))
         around.sink_below = read_sink_below(d, *below);
     return around;
+}
+
+/// Up the fins and down them needs fins that stand.
+void refuse_drift_without_up(Mapping& air, const StillAir& still, const Mounting& mounting) {
+    const bool stands = !mounting.fins_level && std::abs(mounting.tilt) < most_upright;
+    if (!still.drift || stands || still.drift->direction == Drift::Direction::crossing) return;
+    air.fail("drift", "lying or level fins have no up for a drift to assist or oppose",
+             "write direction: crossing");
 }
 
 void refuse_for_moving_air(const Document& d, const TreeNode* group, const char* name,
@@ -315,6 +330,7 @@ Air read_air(const Document& d, const TreeNode& node, const TreeNode* mounting,
         refuse_keys(m, {"clearance", "fans"}, "still");
         air.state = read_still(d, m);
         if (mounting) air.mounting = read_mounting(d, *mounting);
+        refuse_drift_without_up(m, std::get<StillAir>(air.state), air.mounting);
         if (around) air.around = read_around(d, *around);
         return air;
     }

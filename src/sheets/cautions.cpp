@@ -17,9 +17,10 @@ constexpr double gap_that_clogs = 2e-3;       // unfiltered air [m]
 constexpr double heavy = 0.4;                 // for leads to carry [kg]
 constexpr double sharp = 1e-3;                // fin edge [m]
 constexpr double beyond_reading =
-    273.15 + 250.0;                    // a figure above it would say more than is known [K]
-constexpr double worn_interface = 1.5; // end of life, common practice [-]
-constexpr double clogged_flow = 0.7;   // filter loaded, common practice [-]
+    273.15 + 250.0;                      // a figure above it would say more than is known [K]
+constexpr double worn_interface = 1.5;   // end of life, common practice [-]
+constexpr double specific_heat = 1007.0; // of air, near enough for a density [J/(kg K)]
+constexpr double clogged_flow = 0.7;     // filter loaded, common practice [-]
 
 double least_headroom(const Rating& rating) {
     double least = std::numeric_limits<double>::infinity();
@@ -101,6 +102,64 @@ std::string fan_loss(const job::Job& job, const Rating& rating) {
         hottest_junction(at_stopped));
 }
 
+std::string drift_dies(const job::Job& job, const Rating& rating) {
+    const auto* still = std::get_if<job::StillAir>(&job.air.state);
+    if (!still || !still->drift) return {};
+    job::Job calm = job;
+    std::get<job::StillAir>(calm.air.state).drift.reset();
+    return fmt::format("A drift comes and goes. Without it: {}. Rely on it only where something "
+                       "keeps it up.",
+                       hottest_junction(sink::rate(rating.geometry, sink::duty_of(calm))));
+}
+
+/// Moving air so slow that the sink's own buoyancy, which is left out, would do more.
+std::string slower_than_still(const job::Job& job, const Rating& rating) {
+    if (std::holds_alternative<job::StillAir>(job.air.state)) return {};
+    job::Job still = job;
+    still.air.state = job::StillAir{};
+    const Rating calm = sink::rate(rating.geometry, sink::duty_of(still));
+    if (calm.base_rise >= rating.base_rise) return {};
+    return fmt::format(
+        "Air this slow counts for less than still air would ({} K rise of the hottest "
+        "pad, fins upright): buoyancy and radiation are left out of moving air. "
+        "Write state: still with a drift instead.",
+        fixed(calm.hottest_pad_rise, 1));
+}
+
+std::string fan_curve_cautions(const job::Job& job, const Rating& rating) {
+    const auto* driven = std::get_if<job::FanAir>(&job.air.state);
+    if (!driven) return {};
+    const job::Fan& fan = driven->fans.front();
+    const auto& v = std::get<sink::MovingAirView<double>>(rating.view);
+    const sink::FanCurve curve(fan, v.capacity_flow / v.entering_flow / specific_heat);
+    std::string text;
+    if (!curve.falls())
+        text =
+            "The fan's curve dips: there can be several operating points, and this is the one of "
+            "highest flow. Starting from rest the fan may stay at a lower one (stall). ";
+    if (v.volume_flow > curve.last_stated_flow())
+        text +=
+            "The fan runs beyond the last point of its curve, which was continued in a straight "
+            "line: add points towards free delivery. ";
+    if (fan.count > 1)
+        text += "If one of several fans stops, air flows back through it: less is left than the "
+                "others' share. ";
+    return text;
+}
+
+std::string serrations(const Rating& rating) {
+    if (rating.geometry.details.area_factor == 1.0) return {};
+    return "Serrated faces count in moving air only: in still air the film is thicker than the "
+           "serrations are deep, and nothing is credited for them.";
+}
+
+std::string stacked_parts(const job::Job& job) {
+    if (!std::holds_alternative<job::StillAir>(job.air.state) || job.parts.size() < 2) return {};
+    return "In still air all parts are rated on air of one temperature: of two above each other "
+           "the "
+           "upper one runs somewhat hotter than stated, the lower cooler.";
+}
+
 } // namespace
 
 std::vector<std::string> cautions(const job::Job& job, const Rating& rating) {
@@ -111,6 +170,11 @@ std::vector<std::string> cautions(const job::Job& job, const Rating& rating) {
     const bool still = std::holds_alternative<job::StillAir>(job.air.state);
     add(touch(rating));
     if (!still) add(fan_loss(job, rating));
+    add(slower_than_still(job, rating));
+    add(fan_curve_cautions(job, rating));
+    add(drift_dies(job, rating));
+    add(stacked_parts(job));
+    add(serrations(rating));
     add(worn(job, rating));
     add("Tabs and leads may be live: check creepage and clearance for your voltage. A pad's "
         "thickness "

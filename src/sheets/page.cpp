@@ -192,6 +192,11 @@ void detail_rows(TextTable& table, const job::FinDetails& details) {
     if (details.round_tips) table.row({"fin tips", "full radius", "", ""});
     if (details.flange > 0.0)
         table.row({"flange of the base, each side", millimetres(details.flange, 2), "mm", ""});
+    if (details.joint > 0.0)
+        table.row(
+            {"joint of a fin in its groove", significant(details.joint * 1e4, 3), "K cm²/W", ""});
+    if (details.area_factor != 1.0)
+        table.row({"area factor of serrated faces", significant(details.area_factor, 3), "", ""});
     if (details.fin_free > 0.0)
         table.row({"of the length, free of fins", millimetres(details.fin_free, 1), "mm", ""});
 }
@@ -384,7 +389,8 @@ std::string laws_used(const Job& job, const Rating& rating) {
     for (const sink::LawUse& use : rating.laws) {
         const auto* passport = correlations::find_passport(use.passport);
         lines += wrapped(fmt::format("{}: {} [{}], {}", use.role, passport->title,
-                                     passport->source_key, passport->stated_error),
+                                     passport->estimate ? "estimate" : passport->source_key,
+                                     passport->stated_error),
                          page_width, "  ", "      ");
         if (passport->estimate)
             estimates += wrapped(fmt::format("{}: {}; stated error {}", use.role, passport->title,
@@ -510,9 +516,9 @@ std::string understood_space(const Job& job) {
 std::string rounding_line(const Answer& answer, const Job& job) {
     const double price = answer.design.rounded_aim / answer.least_aim - 1.0;
     return paragraph(fmt::format(
-        "Least {} over {} fin counts; rounding to the shop's steps costs {} % ({} before).",
-        aim_name(job.sink.aim), answer.fin_counts_tried, fixed(price * 100.0, 1),
-        aim_text(job.sink.aim, answer.least_aim)));
+        "Least {} over {} fin count{}; rounding to the shop's steps costs {} % ({} before).",
+        aim_name(job.sink.aim), answer.fin_counts_tried, answer.fin_counts_tried == 1 ? "" : "s",
+        fixed(price * 100.0, 1), aim_text(job.sink.aim, answer.least_aim)));
 }
 
 /// Whether fins are needed at all.

@@ -30,6 +30,8 @@ Json geometry_json(const sink::Geometry<double>& g) {
             {"flange_m", g.details.flange},
             {"fin_free_length_m", g.details.fin_free},
             {"round_tips", g.details.round_tips},
+            {"fin_joint_m2K_W", g.details.joint},
+            {"area_factor", g.details.area_factor},
             {"section_area_m2", g.section()}};
 }
 

@@ -120,7 +120,9 @@ Balance<double> balance(const Geometry<double>& g, const Duty& duty, double gues
     return with_model(g, duty, [&](const auto& model) {
         const double rise = balanced_rise(model, duty.power(), guess);
         const auto view = model.view(rise);
-        return Balance<double>{view.base_rise, model.pressure_drop(view), rise};
+        const auto heat = model.heat(view);
+        return Balance<double>{view.base_rise, model.pressure_drop(view), rise,
+                               (heat.total() - heat.fixed) / view.base_rise};
     });
 }
 
@@ -128,12 +130,14 @@ Balance<Dual<5>> balance(const Geometry<Dual<5>>& g, const Duty& duty, double gu
     const double rise = balance(plain(g), duty, guess).driving_rise;
     return with_model(widened(g), duty, [&](const auto& model) {
         const auto view = model.view(Dual<6>::variable(rise, 5));
-        const Dual<6> heat = model.heat(view).total() - model.load();
+        const HeatPaths<Dual<6>> paths = model.heat(view);
+        const Dual<6> heat = paths.total() - model.load();
         Dual<5> implicit(rise);
         for (std::size_t i = 0; i < 5; ++i)
             implicit.slope[i] = -heat.slope[i] / heat.slope[5];
         return Balance<Dual<5>>{along(view.base_rise, implicit),
-                                along(model.pressure_drop(view), implicit), implicit};
+                                along(model.pressure_drop(view), implicit), implicit,
+                                along((paths.total() - paths.fixed) / view.base_rise, implicit)};
     });
 }
 

@@ -16,6 +16,8 @@ struct Balance {
     /// The rise the air side is stated by: the channel walls' in still air, the base's in a duct
     /// [K].
     T driving_rise = T(0.0);
+    /// Heat shed per kelvin of the base's rise, beyond what flows at no rise [W/K].
+    T conductance = T(0.0);
 };
 
 inline constexpr double first_guess = 40.0; ///< [K]

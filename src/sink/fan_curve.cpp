@@ -75,6 +75,10 @@ double FanCurve::slope(double flow) const {
     return pressure_scale_ / flow_scale_ * points_->slope(flow / flow_scale_);
 }
 
+double FanCurve::last_stated_flow() const {
+    return flow_scale_ * points_->flows.back();
+}
+
 double FanCurve::free_delivery() const {
     return flow_scale_ * points_->free_delivery;
 }

@@ -25,6 +25,8 @@ public:
 
     /// Total flow against no pressure [m3/s].
     double free_delivery() const;
+    /// Where the stated points end [m3/s].
+    double last_stated_flow() const;
     /// Pressure against no flow [Pa].
     double shut_off() const { return pressure(0.0); }
     /// Whether the pressure falls all the way, so that every sink has one operating point.

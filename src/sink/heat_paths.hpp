@@ -14,6 +14,8 @@ struct HeatPaths {
     T back = T(0.0);        ///< convection from the base's back beside the parts
     T radiation = T(0.0);   ///< from all of these
     T wall = T(0.0);        ///< conducted into the wall behind
+    /// What of these would flow, at the air's temperature, to a wall and surroundings off it.
+    T fixed = T(0.0);
 
     T total() const {
         return channels + outer_faces + tips_edges + rim + bare + back + radiation + wall;

@@ -184,6 +184,11 @@ void MovingAirSink<T>::convect(MovingAirView<T>& v) const {
     if (value_of(v.bypass_velocity) > 0.0)
         v.outer_film = correlations::nusselt_flat_plate(v.outer_reynolds, v.prandtl) *
                        air.conductivity / g_.fin_length();
+    // Serrated faces: their area, taken into the films of channel (fins over all its walls) and
+    // side.
+    const double more = g_.details.area_factor - 1.0;
+    v.film *= 1.0 + more * 2.0 * g_.height / (2.0 * g_.height + g_.gap);
+    v.outer_film *= 1.0 + more;
     const T face = g_.height * g_.fin_length();
     const T ends = g_.tip() * v.outer_film;
     v.inner_efficiency = joined_efficiency(T(2.0 * face * v.film + ends), fin_shape_, g_);

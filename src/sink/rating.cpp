@@ -121,7 +121,9 @@ void rate_air(Rating& rating, const Duty& duty, double driving_rise) {
 
 /// In still air by the series; in a stream by the map, whose pads meet the air that others warmed.
 std::vector<double> rated_pad_rises(const Rating& rating, const Duty& duty) {
-    if (duty.surroundings.still()) return pad_rises(rating.geometry, duty, rating.base_rise);
+    if (duty.surroundings.still())
+        return pad_rises(rating.geometry, duty,
+                         {rating.base_rise, rating.pressure_drop, 0.0, rating.conductance});
     return base_field(base_map(rating.geometry, duty, rating)).pad_rises;
 }
 
@@ -141,17 +143,11 @@ correlations::Slab slab_of(const Geometry<T>& g, const Duty& duty, const T& film
             value_of(film)};
 }
 
-/// Heat per base area and kelvin that holds the base at this mean rise [W/(m2 K)].
+/// What wall, surroundings and sun shift the whole base by, over what the parts' power alone would
+/// raise it [K].
 template <class T>
-T base_film(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
-    return (duty.power() + sun_taken(g, duty.surroundings)) / (base_rise * g.footprint());
-}
-
-/// What the sun, spread over the whole base, adds under every pad [K].
-template <class T>
-T sun_rise(const Geometry<T>& g, const Duty& duty, const T& base_rise) {
-    const T sun = sun_taken(g, duty.surroundings);
-    return base_rise * sun / (duty.power() + sun);
+T common_shift(const Duty& duty, const Balance<T>& balance) {
+    return balance.base_rise - duty.power() / balance.conductance;
 }
 
 std::vector<double> powers_of(const Duty& duty) {
@@ -161,10 +157,9 @@ std::vector<double> powers_of(const Duty& duty) {
     return powers;
 }
 
-/// Film that holds the mean rise, under the parts' power and the sun on the fins.
+/// Film to air shifted as the whole base is.
 UniformFilm film_of(const Rating& rating, double footprint) {
-    const double film = (rating.power + rating.sun) / (rating.base_rise * footprint);
-    return {film, rating.sun / (film * footprint)};
+    return {rating.conductance / footprint, rating.base_rise - rating.power / rating.conductance};
 }
 
 /// The channels' air. What outer faces and tips give to the air beside them counts as more of it.
@@ -192,27 +187,29 @@ correlations::ModeSet modes_for_means(const Geometry<double>& g, const Duty& dut
     return correlations::ModeSet::for_means(slab_of(g, duty, 1.0), pads);
 }
 
-std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise,
-                              const correlations::ModeSet& modes) {
-    const auto slab = slab_of(g, duty, base_film(g, duty, base_rise));
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty,
+                              const Balance<double>& balance, const correlations::ModeSet& modes) {
+    const auto slab = slab_of(g, duty, balance.conductance / g.footprint());
     const auto pads = pads_on_base(duty.parts, slab.width, slab.length);
     auto rises = correlations::pad_mean_rises(slab, pads, powers_of(duty), modes);
     for (double& rise : rises)
-        rise += sun_rise(g, duty, base_rise);
+        rise += common_shift(duty, balance);
     return rises;
 }
 
-std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise) {
-    return pad_rises(g, duty, base_rise, modes_for_means(g, duty));
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty,
+                              const Balance<double>& balance) {
+    return pad_rises(g, duty, balance, modes_for_means(g, duty));
 }
 
 std::vector<Dual<5>> pad_rises(const Geometry<Dual<5>>& g, const Duty& duty,
-                               const Dual<5>& base_rise, const correlations::ModeSet& modes) {
-    const Dual<5> width = g.width(), film = base_film(g, duty, base_rise);
+                               const Balance<Dual<5>>& balance,
+                               const correlations::ModeSet& modes) {
+    const Dual<5> width = g.width(), film = balance.conductance / g.footprint();
     const auto slab = slab_of(g, duty, film);
     const auto pads = pads_on_base(duty.parts, Dual<1>::variable(slab.width, 0),
                                    Dual<1>::variable(slab.length, 0));
-    const Dual<5> sun = sun_rise(g, duty, base_rise);
+    const Dual<5> shift = common_shift(duty, balance);
     std::vector<Dual<5>> rises;
     for (const Dual<4>& rise :
          correlations::pad_mean_rises_with_slopes(slab, pads, powers_of(duty), modes)) {
@@ -220,7 +217,7 @@ std::vector<Dual<5>> pad_rises(const Geometry<Dual<5>>& g, const Duty& duty,
         for (std::size_t k = 0; k < 5; ++k)
             total.slope[k] = rise.slope[0] * width.slope[k] + rise.slope[1] * g.length.slope[k] +
                              rise.slope[2] * g.base.slope[k] + rise.slope[3] * film.slope[k];
-        rises.push_back(total + sun);
+        rises.push_back(total + shift);
     }
     return rises;
 }
@@ -244,8 +241,10 @@ Rating rate(const Geometry<double>& g, const Duty& duty) {
     rating.mass = g.metal() * duty.material.density;
     rating.base_rise = settled.base_rise;
     rating.pressure_drop = settled.pressure_drop;
+    rating.conductance = settled.conductance;
     rating.sun = sun_taken(g, duty.surroundings);
     rating.heat = shed(g, duty, settled.driving_rise);
+    if (rating.heat.total() > (rating.power + rating.sun) * (1.0 + 1e-6)) throw ColderThanAir();
     rate_air(rating, duty, settled.driving_rise);
     rating.laws.insert(rating.laws.end(), duty.inlet_laws.begin(), duty.inlet_laws.end());
     rate_parts(rating, duty);

@@ -10,6 +10,7 @@
 #include "src/sink/moving_air.hpp"
 #include "src/sink/still_air.hpp"
 #include <optional>
+#include <stdexcept>
 #include <string>
 #include <variant>
 #include <vector>
@@ -40,6 +41,7 @@ struct Rating {
     double base_rise = 0.0;       ///< mean of the base over inlet air [K]
     double hottest_pad_rise = 0.0;
     double pressure_drop = 0.0; ///< [Pa]
+    double conductance = 0.0;   ///< as in Balance [W/K]
     HeatPaths<double> heat;     ///< [W]
     double sun = 0.0;           ///< taken up besides the parts' power [W]
     std::variant<StillAirView<double>, MovingAirView<double>> view;
@@ -55,14 +57,15 @@ struct Rating {
 };
 
 /// Rise of the base under each pad over the inlet air, spreading included [K].
-std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise);
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty,
+                              const Balance<double>& balance);
 
 /// The same with a stated set of the base's modes, and with its slopes.
-std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty, double base_rise,
-                              const correlations::ModeSet& modes);
+std::vector<double> pad_rises(const Geometry<double>& g, const Duty& duty,
+                              const Balance<double>& balance, const correlations::ModeSet& modes);
 std::vector<correlations::Dual<5>> pad_rises(const Geometry<correlations::Dual<5>>& g,
                                              const Duty& duty,
-                                             const correlations::Dual<5>& base_rise,
+                                             const Balance<correlations::Dual<5>>& balance,
                                              const correlations::ModeSet& modes);
 
 /// The base's modes up to so many half waves over the smallest pad, and those a pad's mean rise
@@ -74,7 +77,16 @@ correlations::ModeSet modes_for_means(const Geometry<double>& g, const Duty& dut
 /// falling on the fins evenly; in moving air a stream that takes up what the rating says.
 BaseMap base_map(const Geometry<double>& g, const Duty& duty, const Rating& rating);
 
-/// The whole rating. Throws std::domain_error for impossible geometry.
+/// A wall or surroundings that take more than the parts give: the base would be colder than its
+/// air, where these laws do not hold.
+struct ColderThanAir : std::runtime_error {
+    ColderThanAir()
+        : std::runtime_error("the wall or the surroundings take more heat than the parts give: the "
+                             "base would be colder than its air, which is not covered here. Check "
+                             "the wall's conductance and both temperatures") {}
+};
+
+/// The whole rating. Throws ColderThanAir. Throws std::domain_error for impossible geometry.
 Rating rate(const Geometry<double>& g, const Duty& duty);
 
 } // namespace finwright::sink

@@ -5,6 +5,7 @@
 #include "correlations/forced_channel.hpp"
 #include "correlations/natural_inclined.hpp"
 #include "correlations/numbers/dual.hpp"
+#include "correlations/numbers/smooth.hpp"
 #include "correlations/radiation.hpp"
 #include "src/sink/fin_conduction.hpp"
 #include <algorithm>
@@ -147,8 +148,9 @@ void StillAirSink<T>::drift(StillAirView<T>& v, const AirFilm& air) const {
     const double speed = state_.drift->velocity;
     const Direction direction = state_.drift->direction;
     const auto mixed = [&](const T& forced, const T& natural) {
-        return direction == Direction::opposing ? correlations::mixed_against(forced, natural)
-                                                : correlations::mixed_assisting(forced, natural);
+        if (direction != Direction::opposing) return correlations::mixed_assisting(forced, natural);
+        // Slower air than stated may do worse: the stated speed is the most the drift reaches.
+        return correlations::mixed_against(correlations::lesser_of(forced, natural), natural);
     };
     const bool across = direction == Direction::crossing;
     const T run = across ? g_.width() : g_.length;
@@ -200,18 +202,8 @@ StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
     const T black = correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(radiating_));
     v.channel_radiation = black * exchange_ / wetted_;
     v.outer_radiation = material_.emissivity * black;
-    roughen(v);
     conduct(v);
     return v;
-}
-
-/// Serrated faces: more area for convection, taken into the films. Radiation sees no more of them.
-template <class T>
-void StillAirSink<T>::roughen(StillAirView<T>& v) const {
-    const double more = g_.details.area_factor - 1.0;
-    if (more == 0.0) return;
-    v.channel_film *= 1.0 + more * 2.0 * g_.height / (2.0 * g_.height + g_.gap);
-    v.outer_film *= 1.0 + more;
 }
 
 template <class T>
@@ -290,14 +282,18 @@ HeatPaths<T> StillAirSink<T>::heat(const StillAirView<T>& v) const {
     if (radiating_ != surroundings_.air_temperature) {
         StillAirView<T> whole = v; // every surface at full area: the air lies off what it sees
         whole.inner_efficiency = whole.outer_efficiency = T(1.0);
-        q.radiation +=
+        q.fixed =
             (channel_area(whole) * v.channel_radiation +
              (outer_area(whole) + ends_area(whole) + rim_ + bare_ + back_) * v.outer_radiation) *
             (surroundings_.air_temperature - radiating_);
+        q.radiation += q.fixed;
     }
-    if (const auto& wall = state_.mounting.wall_conductance)
-        q.wall = *wall * (v.base_rise + (surroundings_.air_temperature -
-                                         state_.mounting.wall_temperature.value()));
+    if (const auto& wall = state_.mounting.wall_conductance) {
+        const T off(*wall *
+                    (surroundings_.air_temperature - state_.mounting.wall_temperature.value()));
+        q.wall = *wall * v.base_rise + off;
+        q.fixed += off;
+    }
     return q;
 }
 

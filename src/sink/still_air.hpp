@@ -73,7 +73,6 @@ private:
     T channel_coefficient(const StillAirView<T>& v, const T& conductivity) const;
     T outer_coefficient(const StillAirView<T>& v) const;
     T front_coefficient(const StillAirView<T>& v, double tilt) const;
-    void roughen(StillAirView<T>& v) const;
     void conduct(StillAirView<T>& v) const;
     StillAirView<T> plate_view(const T& rise) const;
     T channel_area(const StillAirView<T>& v) const;

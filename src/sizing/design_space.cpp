@@ -93,7 +93,7 @@ std::array<Room, dimension_count> rooms_of(const Job& job, int fins) {
     narrow(base, sink.base_thickness);
 
     Room& length = rooms[std::size_t(Dimension::length)];
-    length = room(std::max({pads.length, 5e-3, 1.2 * sink.details.fin_free}), "pads", longest,
+    length = room(std::max({pads.length, 5e-3, 2.0 * sink.details.fin_free}), "pads", longest,
                   "search range", sink.steps.length);
     cap(length, job.limits.space.length, "space");
     narrow(length, sink.length);

@@ -237,8 +237,7 @@ void SearchProblem::evaluate(std::span<const double> x, Evaluation& out) {
     const std::size_t n = variables_.size(), dims = free_.size();
     const sink::Balance<Dual5> balance = sink::balance(g, duty_, last_rise_);
     last_rise_ = balance.driving_rise.value;
-    Measured<Dual5> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance.base_rise),
-                      Dual5(1.0)};
+    Measured<Dual5> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance), Dual5(1.0)};
     if (pursues_worst_pad()) m.worst = Dual5(x[dims]);
 
     const auto store = [&](const Dual5& value, double* slopes) {
@@ -258,7 +257,7 @@ void SearchProblem::evaluate(std::span<const double> x, Evaluation& out) {
 void SearchProblem::judge(std::span<const double> x, double& value, std::span<double> constraints) {
     const Geometry<double> g = geometry(x);
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance.base_rise), 1.0};
+    Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance), 1.0};
     if (pursues_worst_pad()) m.worst = x[free_.size()];
     value = objective(pursuit_, m);
     for (std::size_t c = 0; c < space_.limits.size(); ++c)
@@ -267,13 +266,13 @@ void SearchProblem::judge(std::span<const double> x, double& value, std::span<do
 
 bool SearchProblem::recentre(std::span<const double> x) {
     const Geometry<double> g = geometry(x);
-    const double base_rise = sink::balance(g, duty_).base_rise;
+    const auto balance = sink::balance(g, duty_);
     SpreadingModel moved;
     moved.centre(g, duty_);
     bool material = !spreading_.centred();
     if (!material) {
-        const auto before = spreading_.pad_rises(g, duty_, base_rise);
-        const auto after = moved.pad_rises(g, duty_, base_rise);
+        const auto before = spreading_.pad_rises(g, duty_, balance);
+        const auto after = moved.pad_rises(g, duty_, balance);
         for (std::size_t i = 0; i < after.size(); ++i)
             material = material || std::abs(after[i] - before[i]) > stands_still * after[i];
     }
@@ -288,7 +287,7 @@ double SearchProblem::quick_objective(std::span<const double> dimensions) const 
         return objective(pursuit_, Measured<double>{g, duty_, unused, {}, 1.0});
     }
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    const auto rises = spreading_.pad_rises(g, duty_, balance.base_rise);
+    const auto rises = spreading_.pad_rises(g, duty_, balance);
     const double worst = *std::max_element(rises.begin(), rises.end()) / duty_.power();
     return objective(pursuit_, Measured<double>{g, duty_, balance, rises, worst});
 }
@@ -301,8 +300,7 @@ bool SearchProblem::quickly_feasible(std::span<const double> dimensions) const {
             constraint(limit, Measured<double>{g, duty_, unused, {}, 1.0}) > feasible_tolerance)
             return false;
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    const Measured<double> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance.base_rise),
-                             1.0};
+    const Measured<double> m{g, duty_, balance, spreading_.pad_rises(g, duty_, balance), 1.0};
     return std::none_of(space_.limits.begin(), space_.limits.end(), [&](const Limit& limit) {
         return limit.kind != LimitKind::worst_pad && constraint(limit, m) > rounding_slack;
     });
@@ -312,7 +310,7 @@ bool SearchProblem::feasible(std::span<const double> dimensions) const {
     const Geometry<double> g = geometry(dimensions);
     if (sink::overlap_on(duty_.parts, g.width(), g.length)) return false;
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    const Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance.base_rise), 1.0};
+    const Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance), 1.0};
     return std::none_of(space_.limits.begin(), space_.limits.end(), [&](const Limit& limit) {
         return limit.kind != LimitKind::worst_pad && constraint(limit, m) > feasible_tolerance;
     });
@@ -321,7 +319,7 @@ bool SearchProblem::feasible(std::span<const double> dimensions) const {
 std::vector<const Limit*> SearchProblem::broken(std::span<const double> dimensions) const {
     const Geometry<double> g = geometry(dimensions);
     const sink::Balance<double> balance = sink::balance(g, duty_);
-    const Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance.base_rise), 1.0};
+    const Measured<double> m{g, duty_, balance, sink::pad_rises(g, duty_, balance), 1.0};
     std::vector<const Limit*> list;
     for (const Limit& limit : space_.limits)
         if (limit.kind != LimitKind::worst_pad && constraint(limit, m) > broken_tolerance)

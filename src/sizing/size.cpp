@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <fmt/format.h>
 #include <limits>
 
 namespace finwright::sizing {
@@ -34,7 +35,7 @@ Job lowered(const Job& job, const std::vector<double>& warmed) {
 /// Rise of each pad by the map over its rise on even air [K].
 std::vector<double> warmed_parts(const sink::Geometry<double>& g, const sink::Duty& duty) {
     const sink::Rating rating = sink::rate(g, duty);
-    std::vector<double> warmed = sink::pad_rises(g, duty, rating.base_rise);
+    std::vector<double> warmed = sink::pad_rises(g, duty, sink::balance(g, duty));
     for (std::size_t i = 0; i < warmed.size(); ++i)
         warmed[i] = rating.parts[i].pad_temperature - rating.air_temperature - warmed[i];
     return warmed;
@@ -111,9 +112,27 @@ Sizing size_with_one_fan(const Job& job, const SearchOptions& options) {
     return refusal;
 }
 
+/// The air that arrives, warmed by a sink below, may leave nothing to work with.
+std::optional<Refusal> too_warm_to_begin(const Job& job) {
+    const auto allowed = allowed_pad_rises(job);
+    for (std::size_t i = 0; i < allowed.size(); ++i)
+        if (allowed[i] && *allowed[i] <= 0.0) {
+            Refusal refusal;
+            refusal.reason = fmt::format(
+                "The air that reaches the fins has {:.1f} °C: {} could not be kept cool enough "
+                "even "
+                "by a perfect sink. Move the sink below further away or aside, lower its power, or "
+                "bring cooler air.",
+                sink::inlet_temperature(job) - 273.15, job.parts[i].name);
+            return refusal;
+        }
+    return std::nullopt;
+}
+
 } // namespace
 
 Sizing size(const Job& job, const SearchOptions& options) {
+    if (auto refusal = too_warm_to_begin(job)) return *refusal;
     const auto* air = std::get_if<job::FanAir>(&job.air.state);
     if (!air || air->fans.size() == 1) return size_with_one_fan(job, options);
     std::optional<Sizing> best;

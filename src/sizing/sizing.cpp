@@ -150,7 +150,7 @@ struct Aimed {
         case job::Aim::resistance:
             break;
         }
-        const auto rises = sink::pad_rises(g, duty, sink::balance(g, duty).base_rise);
+        const auto rises = sink::pad_rises(g, duty, sink::balance(g, duty));
         return *std::max_element(rises.begin(), rises.end()) / duty.power();
     }
 };

@@ -30,11 +30,11 @@ sink::Geometry<Dual5> independent(const sink::Geometry<double>& g) {
 
 void SpreadingModel::centre(const sink::Geometry<double>& plain, const sink::Duty& duty) {
     const sink::Geometry<Dual5> g = independent(plain);
-    const Dual5 base_rise = sink::balance(g, duty).base_rise;
+    const auto balance = sink::balance(g, duty);
     modes_ = sink::modes_up_to(coarse_half_waves, plain, duty);
     const std::vector<Dual5> full =
-        sink::pad_rises(g, duty, base_rise, sink::modes_for_means(plain, duty));
-    const std::vector<Dual5> coarse = sink::pad_rises(g, duty, base_rise, modes_);
+        sink::pad_rises(g, duty, balance, sink::modes_for_means(plain, duty));
+    const std::vector<Dual5> coarse = sink::pad_rises(g, duty, balance, modes_);
     const auto values = dimensions_of(plain);
     for (std::size_t k = 0; k < 5; ++k)
         log_centre_[k] = std::log(values[k]);
@@ -62,20 +62,22 @@ T SpreadingModel::Tail::at(const std::array<T, 5>& away) const {
 
 template <class T>
 std::vector<T> SpreadingModel::pad_rises(const sink::Geometry<T>& g, const sink::Duty& duty,
-                                         const T& base_rise) const {
+                                         const sink::Balance<T>& balance) const {
     using std::log;
     std::array<T, 5> away = dimensions_of(g);
     for (std::size_t k = 0; k < 5; ++k)
         away[k] = log(away[k]) - log_centre_[k];
-    std::vector<T> rises = sink::pad_rises(g, duty, base_rise, modes_);
+    std::vector<T> rises = sink::pad_rises(g, duty, balance, modes_);
     for (std::size_t i = 0; i < rises.size(); ++i)
         rises[i] += tails_[i].at(away);
     return rises;
 }
 
 template std::vector<double> SpreadingModel::pad_rises(const sink::Geometry<double>&,
-                                                       const sink::Duty&, const double&) const;
+                                                       const sink::Duty&,
+                                                       const sink::Balance<double>&) const;
 template std::vector<Dual5> SpreadingModel::pad_rises(const sink::Geometry<Dual5>&,
-                                                      const sink::Duty&, const Dual5&) const;
+                                                      const sink::Duty&,
+                                                      const sink::Balance<Dual5>&) const;
 
 } // namespace finwright::sizing

@@ -9,6 +9,7 @@
 
 #include "correlations/numbers/dual.hpp"
 #include "correlations/spreading.hpp"
+#include "src/sink/balance.hpp"
 #include "src/sink/duty.hpp"
 #include "src/sink/geometry.hpp"
 #include <array>
@@ -27,7 +28,7 @@ public:
     /// Rise of the base under each pad over the inlet air [K].
     template <class T>
     std::vector<T> pad_rises(const sink::Geometry<T>& g, const sink::Duty& duty,
-                             const T& base_rise) const;
+                             const sink::Balance<T>& balance) const;
 
 private:
     /// What the modes left out add to one pad: a monomial of the dimensions, or linear in their

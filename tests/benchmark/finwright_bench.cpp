@@ -87,9 +87,11 @@ void balance_with_slopes(benchmark::State& state, const char* name) {
 void spreading_series(benchmark::State& state, const char* name) {
     const auto duty = sink::duty_of(demo(name));
     const auto g = typical();
-    double rise = 60.0;
-    for (auto _ : state)
-        benchmark::DoNotOptimize(sink::pad_rises(g, duty, rise += 1e-9));
+    auto balance = sink::balance(g, duty);
+    for (auto _ : state) {
+        balance.conductance += 1e-9;
+        benchmark::DoNotOptimize(sink::pad_rises(g, duty, balance));
+    }
 }
 
 void spreading_in_search(benchmark::State& state, const char* name) {
@@ -98,10 +100,10 @@ void spreading_in_search(benchmark::State& state, const char* name) {
     sizing::SpreadingModel model;
     model.centre(g, duty);
     const auto s = seeded(g);
-    D5 rise(60.0);
+    auto balance = sink::balance(s, duty);
     for (auto _ : state) {
-        rise.value += 1e-9;
-        benchmark::DoNotOptimize(model.pad_rises(s, duty, rise));
+        balance.conductance.value += 1e-9;
+        benchmark::DoNotOptimize(model.pad_rises(s, duty, balance));
     }
 }
 

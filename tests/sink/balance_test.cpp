@@ -46,14 +46,14 @@ struct Values {
 Values values(const sink::Geometry<double>& g, const sink::Duty& duty,
               const correlations::ModeSet& modes) {
     const auto b = sink::balance(g, duty);
-    return {b.base_rise, b.pressure_drop, sink::pad_rises(g, duty, b.base_rise, modes)[0]};
+    return {b.base_rise, b.pressure_drop, sink::pad_rises(g, duty, b, modes)[0]};
 }
 
 /// Slopes against central differences, on the scale of value per dimension.
 void check_slopes(const sink::Geometry<double>& g, const sink::Duty& duty) {
     const auto balance = sink::balance(seeded(g), duty);
     const auto modes = sink::modes_for_means(g, duty);
-    const auto pads = sink::pad_rises(seeded(g), duty, balance.base_rise, modes);
+    const auto pads = sink::pad_rises(seeded(g), duty, balance, modes);
     const Values at = values(g, duty, modes);
     for (int i = 0; i < 5; ++i) {
         auto high = g, low = g;
