@@ -18,6 +18,8 @@ using correlations::greater_of;
 namespace {
 
 constexpr double gravity = 9.80665; // standard acceleration of free fall, ISO 80000-3 [m/s2]
+constexpr double worst_opposing =
+    0.98477; // forced over natural film where mixed_against is least [-]
 constexpr double upside = 0.5 * std::numbers::pi;
 
 /// Back of the base beside the pads, where the mounting leaves it open [m2]. Pads that leave
@@ -150,7 +152,8 @@ void StillAirSink<T>::drift(StillAirView<T>& v, const AirFilm& air) const {
     const auto mixed = [&](const T& forced, const T& natural) {
         if (direction != Direction::opposing) return correlations::mixed_assisting(forced, natural);
         // Slower air than stated may do worse: the stated speed is the most the drift reaches.
-        return correlations::mixed_against(correlations::lesser_of(forced, natural), natural);
+        return correlations::mixed_against(
+            correlations::lesser_of(forced, T(worst_opposing * natural)), natural);
     };
     const bool across = direction == Direction::crossing;
     const T run = across ? g_.width() : g_.length;

@@ -179,3 +179,50 @@ TEST_CASE("every estimate that enters a rating is named in it") {
               s.drift = job::Drift{0.3, job::Drift::Direction::opposing};
           }) == 2);
 }
+
+TEST_CASE("a drift against the rising air never helps, however strong it is stated") {
+    RandomSinks random(75);
+    for (int n = 0; n < 20; ++n) {
+        const auto g = random.geometry();
+        const auto duty = random.duty(g);
+        double before = rise(g, duty, [](auto&, auto&) {});
+        for (double speed = 0.02; speed < 1.0; speed *= 1.2) {
+            const double now = rise(g, duty, [&](auto& s, auto&) {
+                s.drift = job::Drift{speed, job::Drift::Direction::opposing};
+            });
+            CHECK(now >= before * (1.0 - 1e-9));
+            before = now;
+        }
+    }
+}
+
+TEST_CASE("a wall that takes more than the parts give is refused, not answered") {
+    RandomSinks random(76);
+    const auto g = random.geometry();
+    const auto duty = random.duty(g);
+    const auto cold = changed(duty, [&](auto& s, auto& around) {
+        s.mounting.wall_conductance = duty.power();
+        s.mounting.wall_temperature = around.air_temperature - 2.0;
+    });
+    CHECK_THROWS_AS(sink::rate(g, cold), sink::ColderThanAir);
+}
+
+// The film that spreads the heat under a pad is what the base sheds per kelvin, whatever a wall off
+// the air's temperature adds to or takes from the whole: the same wall at any temperature leaves
+// the rise of a pad over the base's mean nearly where it was (films change with the rise a little).
+TEST_CASE("a wall's temperature shifts the base, not the spreading in it") {
+    RandomSinks random(77);
+    for (int n = 0; n < 40; ++n) {
+        const auto g = random.geometry();
+        const auto duty = random.duty(g);
+        const auto over_mean = [&](double off) {
+            const auto rating = sink::rate(g, changed(duty, [&](auto& s, auto& around) {
+                                               s.mounting.wall_conductance = 0.2;
+                                               s.mounting.wall_temperature =
+                                                   around.air_temperature + off;
+                                           }));
+            return rating.hottest_pad_rise - rating.base_rise;
+        };
+        CHECK(over_mean(-5.0) == near(over_mean(5.0), 0.02));
+    }
+}
