@@ -177,20 +177,26 @@ void StillAirSink<T>::drift(StillAirView<T>& v, const AirFilm& air) const {
     v.channel_film = mixed(forced, v.channel_film);
 }
 
+/// The air in the film at a rise of the wall it touches.
 template <class T>
-StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
-    if (g_.plate()) return plate_view(wall_rise);
-    const double ambient = surroundings_.air_temperature;
-    const T gap = g_.mean_gap();
-    StillAirView<T> v;
-    v.wall_rise = wall_rise;
-    v.film_temperature = ambient + 0.5 * wall_rise;
+auto StillAirSink<T>::film_at(StillAirView<T>& v, const T& rise) const -> AirFilm {
+    v.wall_rise = rise;
+    v.film_temperature = surroundings_.air_temperature + 0.5 * rise;
     const auto air =
         correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
                              surroundings_.pressure);
     v.prandtl = air.prandtl();
     v.grashof_unit =
-        gravity * air.expansion * wall_rise / (air.kinematic_viscosity() * air.diffusivity());
+        gravity * air.expansion * rise / (air.kinematic_viscosity() * air.diffusivity());
+    return {air.conductivity, air.kinematic_viscosity()};
+}
+
+template <class T>
+StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
+    if (g_.plate()) return plate_view(wall_rise);
+    const T gap = g_.mean_gap();
+    StillAirView<T> v;
+    const AirFilm film = film_at(v, wall_rise);
     const T radius = correlations::hydraulic_radius(gap, g_.height);
     const T gap2 = gap * gap, radius2 = radius * radius;
     const T along = along_ * v.grashof_unit;
@@ -199,10 +205,10 @@ StillAirView<T> StillAirSink<T>::view(const T& wall_rise) const {
     v.rayleigh_radius = along * radius2 * radius2 / run;
     v.rayleigh_length = along * run * run * run;
     v.plate = correlations::nusselt_vertical_laminar(v.rayleigh_length, v.prandtl);
-    const AirFilm film{air.conductivity, air.kinematic_viscosity()};
     convect(v, film);
     if (state_.drift) drift(v, film);
-    const T black = correlations::radiation_coefficient(1.0, T(ambient + wall_rise), T(radiating_));
+    const T black = correlations::radiation_coefficient(
+        1.0, T(surroundings_.air_temperature + wall_rise), T(radiating_));
     v.channel_radiation = black * exchange_ / wetted_;
     v.outer_radiation = material_.emissivity * black;
     conduct(v);
@@ -249,20 +255,14 @@ T StillAirSink<T>::ends_area(const StillAirView<T>& v) const {
 template <class T>
 StillAirView<T> StillAirSink<T>::plate_view(const T& rise) const {
     StillAirView<T> v;
-    v.wall_rise = v.base_rise = rise;
-    v.film_temperature = surroundings_.air_temperature + 0.5 * rise;
-    const auto air =
-        correlations::air_at(correlations::clamp(v.film_temperature, coldest_film, hottest_film),
-                             surroundings_.pressure);
-    v.prandtl = air.prandtl();
-    v.grashof_unit =
-        gravity * air.expansion * rise / (air.kinematic_viscosity() * air.diffusivity());
+    const AirFilm film = film_at(v, rise);
+    v.base_rise = rise;
     v.rayleigh_length = along_ * v.grashof_unit * g_.length * g_.length * g_.length;
-    v.edge_film = front_coefficient(v, state_.mounting.tilt) * air.conductivity;
+    v.edge_film = front_coefficient(v, state_.mounting.tilt) * film.conductivity;
     v.outer_film = v.edge_film;
     if (state_.mounting.back_exposed)
-        v.back_film = front_coefficient(v, -state_.mounting.tilt) * air.conductivity;
-    if (state_.drift) drift(v, {air.conductivity, air.kinematic_viscosity()});
+        v.back_film = front_coefficient(v, -state_.mounting.tilt) * film.conductivity;
+    if (state_.drift) drift(v, film);
     v.outer_radiation =
         material_.emissivity * correlations::radiation_coefficient(
                                    1.0, T(surroundings_.air_temperature + rise), T(radiating_));

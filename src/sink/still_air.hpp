@@ -67,6 +67,7 @@ public:
 
 private:
     struct AirFilm;
+    AirFilm film_at(StillAirView<T>& v, const T& rise) const;
     void convect(StillAirView<T>& v, const AirFilm& air) const;
     void drift(StillAirView<T>& v, const AirFilm& air) const;
     T along_channel(const StillAirView<T>& v, const T& conductivity) const;
