@@ -30,7 +30,7 @@ int rate_command(const JobCommand& command) {
     if (command.json_file) write_whole(*command.json_file, sheets::results_json(job, rating));
     if (command.curves_file) write_curves(*command.curves_file, sheets::curves(job, g));
     fmt::print("{}", sheets::rate_page(job, rating));
-    return done;
+    return rating.runs_away() ? impossible_job : done;
 }
 
 } // namespace finwright::cli

@@ -22,7 +22,7 @@ int size_command(const JobCommand& command) {
     const job::Job answered = sizing::as_answered(job, answer);
     if (command.json_file) write_whole(*command.json_file, sheets::results_json(answered, answer));
     fmt::print("{}", sheets::size_page(answered, answer));
-    return done;
+    return answer.rating.runs_away() ? impossible_job : done;
 }
 
 } // namespace finwright::cli

@@ -59,6 +59,16 @@ void check_pressure(const Job& job, const Document& d) {
                "choose another aim", place_in(d, "air", "state"));
 }
 
+/// The search reads a table at the junction allowed.
+void check_tables(const Job& job, const Document& d) {
+    for (const Part& part : job.parts)
+        if (part.power_table && !part.junction_limit)
+            d.fail(place_in(d, part, "power"),
+                   fmt::format("'{}' has a power table but no junction limit to read it at",
+                               part.name),
+                   "add junction_limit: 150 degC; finwright rate needs none");
+}
+
 void check_budgets(const Job& job, const Document& d) {
     for (const Part& part : job.parts) {
         if (!part.junction_limit) continue;
@@ -278,6 +288,7 @@ void check_sized_job(const Job& job, const Document& document) {
                       place_in(document, "limits", "space"));
     check_target(job, document);
     check_pressure(job, document);
+    check_tables(job, document);
     check_budgets(job, document);
     check_dimensions(job, document);
     check_width_sum(job, document);

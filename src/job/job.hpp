@@ -2,6 +2,7 @@
 // What the engineer asks for, as plain values in SI: metres, watts, kelvin, pascals, kilograms.
 // Absolute temperatures are in K; rises, margins and resistances are differences.
 
+#include "src/job/power_table.hpp"
 #include <optional>
 #include <string>
 #include <variant>
@@ -31,21 +32,35 @@ struct Coordinate {
     bool share_of_side = true;
 };
 
+/// A junction hotter than this is no semiconductor's: a slip of the unit, or a part that ran away.
+inline constexpr double hottest_junction = 873.15; // 600 degC [K]
+
+/// What a data sheet allows at 25 degC case: so much power brings the junction to its maximum.
+struct CaseRating {
+    double power = 0.0;        ///< [W]
+    double junction_max = 0.0; ///< [K]
+};
+
 /// One power part bolted to the base.
 struct Part {
     std::string name;
-    double power = 0.0;                   ///< dissipated [W]
-    std::optional<double> junction_limit; ///< absolute maximum [K]
-    double junction_to_case = 0.0;        ///< [K/W]
-    std::optional<double> rated_power;    ///< the 25 degC rating R_jc was taken from, if it was [W]
-    double interface = 0.0;               ///< case to base, over the pad [K/W]
-    double pad_across = 0.0;              ///< pad side along the width [m]
-    double pad_along = 0.0;               ///< pad side along the length [m]
+    double power = 0.0; ///< dissipated; of a table, what the part is sized for [W]
+    std::optional<PowerTable> power_table; ///< power by junction temperature
+    std::optional<double> junction_limit;  ///< absolute maximum [K]
+    double junction_to_case = 0.0;         ///< [K/W]
+    std::optional<CaseRating> rating;      ///< what R_jc was taken from, if it was
+    double interface = 0.0;                ///< case to base [K/W]
+    std::optional<double> contact_area;    ///< of the interface, where it is not the pad's [m2]
+    std::optional<bool> insulated;         ///< tab from what is live inside, if stated
+    double pad_across = 0.0;               ///< pad side along the width [m]
+    double pad_along = 0.0;                ///< pad side along the length [m]
     std::optional<Coordinate>
         across; ///< pad centre from the left edge; empty: placed by the program
     std::optional<Coordinate>
         along; ///< pad centre from the inlet (lower) end; empty: placed by the program
     Place place;
+
+    double pad_area() const { return pad_across * pad_along; } ///< [m2]
 };
 
 /// Which law gives the film coefficient inside still-air channels: this project's fit over
@@ -223,6 +238,13 @@ struct Job {
     Limits limits;
     Sink sink;
 
+    bool has_power_table() const {
+        for (const Part& part : parts)
+            if (part.power_table) return true;
+        return false;
+    }
+
+    /// Parts with a table at what they are sized for [W].
     double total_power() const {
         double sum = 0.0;
         for (const Part& part : parts)

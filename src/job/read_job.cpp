@@ -6,6 +6,7 @@
 #include "src/job/nearest_word.hpp"
 #include "src/job/read_air.hpp"
 #include "src/job/read_numbers.hpp"
+#include "src/job/read_power.hpp"
 #include <cmath>
 #include <fmt/format.h>
 #include <numbers>
@@ -22,15 +23,30 @@ constexpr int most_fins = 10000;
 constexpr double longest_space = 2.0;                                             // [m]
 constexpr double longest_side = 2.0;                                              // [m]
 constexpr double highest_fin = 1.0;                                               // [m]
-constexpr double hottest_junction = 873.15;                                       // 600 degC [K]
 constexpr double steepest_draft = 5.0 * std::numbers::pi / 180.0 * (1.0 + 1e-12); // [rad]
-constexpr double largest_power = 2e4;                                             // of one part [W]
 
 // ---- parts ----
 
-double read_interface(const Document& d, const TreeNode& node, double pad_area) {
+/// The area a resistance times area stands for, where it is not the pad's.
+double read_contact(const Document& d, const TreeNode& node) {
+    Mapping m(d, node, "contact");
+    m.only({"across", "along"});
+    return positive(d, m, "across", quantity::length) * positive(d, m, "along", quantity::length);
+}
+
+/// The one form an interface is stated in, as a resistance times area.
+double read_area_resistance(const Document& d, Mapping& m) {
+    if (m.has("area_resistance"))
+        return not_negative(d, m, "area_resistance", quantity::area_resistance);
+    const double layer = not_negative(d, m, "thickness", quantity::length) /
+                         positive(d, m, "conductivity", quantity::conductivity);
+    return layer +
+           (m.has("contacts") ? not_negative(d, m, "contacts", quantity::area_resistance) : 0.0);
+}
+
+void read_interface(const Document& d, const TreeNode& node, Part& part) {
     Mapping m(d, node, "interface");
-    m.only({"resistance", "area_resistance", "thickness", "conductivity", "contacts"});
+    m.only({"resistance", "area_resistance", "thickness", "conductivity", "contacts", "contact"});
     const int forms = int(m.has("resistance")) + int(m.has("area_resistance")) +
                       int(m.has("thickness") || m.has("conductivity"));
     if (forms != 1)
@@ -39,14 +55,14 @@ double read_interface(const Document& d, const TreeNode& node, double pad_area) 
             "give resistance (K/W), or area_resistance (K cm2/W), or thickness with conductivity");
     if (m.has("contacts") && !m.has("thickness"))
         m.fail("contacts", "contacts go with thickness and conductivity", "leave the line out");
-    if (m.has("resistance")) return not_negative(d, m, "resistance", quantity::resistance);
-    if (m.has("area_resistance"))
-        return not_negative(d, m, "area_resistance", quantity::area_resistance) / pad_area;
-    const double layer = not_negative(d, m, "thickness", quantity::length) /
-                         positive(d, m, "conductivity", quantity::conductivity);
-    const double contacts =
-        m.has("contacts") ? not_negative(d, m, "contacts", quantity::area_resistance) : 0.0;
-    return (layer + contacts) / pad_area;
+    if (m.has("contact") && m.has("resistance"))
+        m.fail("contact", "a resistance in K/W asks for no area", "leave the contact out",
+               m.place_of("resistance"));
+    if (const TreeNode* contact = m.optional("contact"))
+        part.contact_area = read_contact(d, *contact);
+    part.interface = m.has("resistance")
+                         ? not_negative(d, m, "resistance", quantity::resistance)
+                         : read_area_resistance(d, m) / part.contact_area.value_or(part.pad_area());
 }
 
 Coordinate read_coordinate(const Document& d, Mapping& m, std::string_view key) {
@@ -61,6 +77,19 @@ Coordinate read_coordinate(const Document& d, Mapping& m, std::string_view key) 
     return {value, share};
 }
 
+/// R_jc = (Tj,max - 25 degC)/P, common practice in data sheets.
+void read_rating(const Document& d, const TreeNode& node, Part& part) {
+    Mapping m(d, node, "rating");
+    m.only({"power", "junction_max"});
+    const CaseRating rating{positive(d, m, "power", quantity::power),
+                            m.number("junction_max", quantity::temperature)};
+    if (rating.junction_max <= rating_case)
+        m.fail("junction_max", "a part rated at 25 degC case has its junction's maximum above that",
+               "check the unit: degC, degF or K");
+    part.rating = rating;
+    part.junction_to_case = (rating.junction_max - rating_case) / rating.power;
+}
+
 void read_junction(const Document& d, Mapping& m, Part& part) {
     part.junction_limit = m.optional_number("junction_limit", quantity::temperature);
     if (part.junction_limit && *part.junction_limit > hottest_junction)
@@ -68,48 +97,49 @@ void read_junction(const Document& d, Mapping& m, Part& part) {
                fmt::format("a junction at {:.0f} degC is no semiconductor's",
                            *part.junction_limit - 273.15),
                "check the unit: degC, degF or K");
-    const bool direct = m.has("junction_to_case"), rated = m.has("rated_power");
+    const bool direct = m.has("junction_to_case"), rated = m.has("rating");
     if (direct && rated)
-        m.fail("rated_power", "junction_to_case and rated_power say the same thing twice",
-               "keep one of them", m.place_of("junction_to_case"));
-    if (part.junction_limit && !direct && !rated)
+        m.fail("rating", "junction_to_case and rating say the same thing twice", "keep one of them",
+               m.place_of("junction_to_case"));
+    if ((part.junction_limit || part.power_table) && !direct && !rated)
         d.fail(m.place(),
-               fmt::format("'{}' has a junction limit but nothing between junction and case",
-                           part.name),
-               "add junction_to_case: 0.8 K/W, or rated_power: 150 W (the data sheet's rating at "
-               "25 degC case)");
+               fmt::format("'{}' has a {} but nothing between junction and case", part.name,
+                           part.junction_limit ? "junction limit" : "power table"),
+               "add junction_to_case: 0.8 K/W, or the data sheet's rating at 25 degC case: "
+               "rating: {power: 150 W, junction_max: 150 degC}");
     if (direct)
         part.junction_to_case = not_negative(d, m, "junction_to_case", quantity::resistance);
     if (!rated) return;
-    if (!part.junction_limit)
-        m.fail("rated_power", "a 25 degC rating needs the junction limit it goes with",
-               "add junction_limit: 150 degC");
-    if (*part.junction_limit <= rating_case)
-        m.fail("junction_limit", "a part rated at 25 degC case has its junction limit above that",
-               "check the unit: degC, degF or K");
-    part.rated_power = positive(d, m, "rated_power", quantity::power);
-    part.junction_to_case = (*part.junction_limit - rating_case) / *part.rated_power;
+    read_rating(d, m.required("rating"), part);
+    if (part.junction_limit && *part.junction_limit > part.rating->junction_max * (1.0 + 1e-9))
+        m.fail("junction_limit", "the junction limit lies above the maximum its rating goes with",
+               "lower it, or check junction_max", m.place_of("rating"));
+}
+
+std::optional<bool> read_insulated(Mapping& m) {
+    const auto text = m.optional_text("insulated");
+    if (!text) return std::nullopt;
+    if (*text != "yes" && *text != "no")
+        m.fail("insulated", fmt::format("insulated cannot be '{}'", *text),
+               "write yes where the tab is insulated inside the part, no where it is live");
+    return *text == "yes";
 }
 
 Part read_part(const Document& d, const TreeNode& node, int& count) {
     Mapping m(d, node, "a part");
-    m.only({"name", "power", "junction_limit", "junction_to_case", "rated_power", "interface",
-            "pad", "place", "count"});
+    m.only({"name", "power", "junction_limit", "junction_to_case", "rating", "interface",
+            "insulated", "pad", "place", "count"});
     Part part;
     part.place = m.place();
     part.name = m.text("name");
-    part.power = positive(d, m, "power", quantity::power);
-    if (part.power > largest_power)
-        m.fail("power",
-               fmt::format("{:.4g} kW in one part is beyond air cooling", part.power * 1e-3),
-               "check the unit: mW, W or kW");
+    read_power(d, m, part);
     Mapping pad(d, m.required("pad"), "pad");
     pad.only({"across", "along"});
     part.pad_across = positive(d, pad, "across", quantity::length);
     part.pad_along = positive(d, pad, "along", quantity::length);
     read_junction(d, m, part);
-    if (const TreeNode* interface = m.optional("interface"))
-        part.interface = read_interface(d, *interface, part.pad_across * part.pad_along);
+    if (const TreeNode* interface = m.optional("interface")) read_interface(d, *interface, part);
+    part.insulated = read_insulated(m);
     if (const TreeNode* place = m.optional("place")) {
         Mapping p(d, *place, "place");
         p.only({"across", "along"});
@@ -367,6 +397,7 @@ Job read_document(const Document& d) {
     job.limits = read_limits(d, m.required("limits"));
     job.sink = read_sink(d, m.required("sink"));
     if (const TreeNode* shop = m.optional("shop")) read_shop(d, *shop, job.sink);
+    set_sizing_powers(job);
     return job;
 }
 

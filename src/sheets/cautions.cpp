@@ -3,7 +3,9 @@
 #include "src/sheets/numbers_text.hpp"
 #include <algorithm>
 #include <fmt/format.h>
+#include <functional>
 #include <limits>
+#include <optional>
 
 namespace finwright::sheets {
 
@@ -30,6 +32,7 @@ double least_headroom(const Rating& rating) {
 }
 
 std::string hottest_junction(const Rating& rating) {
+    if (rating.runs_away()) return rating.feedback->runaway->part + " runs away";
     const auto hottest = std::max_element(
         rating.parts.begin(), rating.parts.end(), [](const auto& a, const auto& b) {
             return a.junction_temperature < b.junction_temperature;
@@ -52,24 +55,57 @@ std::string touch(const Rating& rating) {
                           "the product's own standard the limits; anodise counts as bare metal.");
 }
 
+/// The sink rated again with every interface worn; none where no part has one.
+std::optional<Rating> rated_worn(const job::Job& job, const Rating& rating) {
+    sink::Duty duty = sink::duty_of(job);
+    bool any = false;
+    for (job::Part& part : duty.parts) {
+        part.interface *= worn_interface;
+        any = any || part.interface > 0.0;
+    }
+    return any ? std::optional(sink::rate(rating.geometry, duty)) : std::nullopt;
+}
+
 std::string worn(const job::Job& job, const Rating& rating) {
+    const auto later = rated_worn(job, rating);
+    if (!later) return {};
     double least = std::numeric_limits<double>::infinity();
     std::string name;
-    for (std::size_t i = 0; i < rating.parts.size(); ++i) {
-        const auto headroom = rating.parts[i].headroom();
-        if (!headroom || job.parts[i].interface == 0.0) continue;
-        const double left =
-            *headroom - (worn_interface - 1.0) * job.parts[i].interface * job.parts[i].power;
-        if (left < least) {
-            least = left;
-            name = job.parts[i].name;
-        }
+    for (std::size_t i = 0; i < later->parts.size(); ++i) {
+        const auto headroom = later->parts[i].headroom();
+        if (!headroom || job.parts[i].interface == 0.0 || *headroom >= least) continue;
+        least = *headroom;
+        name = job.parts[i].name;
     }
+    const std::string start = fmt::format(
+        "Grease pumps out and pads relax. With {} times its interface resistance ", worn_interface);
+    if (later->runs_away()) return start + later->feedback->runaway->part + " runs away.";
     if (name.empty()) return {};
-    return fmt::format("Grease pumps out and pads relax. With {} times its interface resistance {} "
-                       "{} what is allowed by {} K.",
-                       worn_interface, name, least < 0.0 ? "exceeds" : "stays below",
-                       fixed(std::abs(least), 1));
+    return fmt::format("{}{} {} what is allowed by {} K.", start, name,
+                       least < 0.0 ? "exceeds" : "stays below", fixed(std::abs(least), 1));
+}
+
+std::string names(const job::Job& job, const std::function<bool(const job::Part&)>& chosen) {
+    std::string list;
+    for (const job::Part& part : job.parts)
+        if (chosen(part)) list += (list.empty() ? "" : ", ") + part.name;
+    return list;
+}
+
+/// By what the job says of the tabs; nothing said is taken as live.
+std::string live_tabs(const job::Job& job) {
+    const std::string live = names(job, [](const auto& p) { return p.insulated == false; });
+    const std::string open = names(job, [](const auto& p) { return !p.insulated; });
+    const std::string rule =
+        "check creepage and clearance for your voltage. A pad's thickness is not creepage, and "
+        "anodise is not safety insulation; an unearthed sink is live or radiates.";
+    if (live.empty() && open.empty())
+        return "The tabs are stated to be insulated inside their parts. Leads may still be live: " +
+               rule;
+    if (live.empty()) return "Tabs and leads may be live: " + rule;
+    return "Stated as live: the tab of " + live +
+           ". An interface that does not insulate makes the sink live and joins all live tabs: " +
+           rule;
 }
 
 void slow_down(sink::StillAir&) {}
@@ -176,10 +212,7 @@ std::vector<std::string> cautions(const job::Job& job, const Rating& rating) {
     add(stacked_parts(job));
     add(serrations(rating));
     add(worn(job, rating));
-    add("Tabs and leads may be live: check creepage and clearance for your voltage. A pad's "
-        "thickness "
-        "is not creepage, and anodise is not safety insulation; an unearthed sink is live or "
-        "radiates.");
+    add(live_tabs(job));
     if (still)
         add("Still air: leave free space above and below, and take the air entering the fins, not "
             "the "

@@ -4,6 +4,7 @@
 #include "src/sheets/cautions.hpp"
 #include "src/sheets/numbers_text.hpp"
 #include "src/sheets/plain_units.hpp"
+#include "src/sheets/powers_text.hpp"
 #include "src/sheets/text_table.hpp"
 #include "src/sizing/broken_limits.hpp"
 #include <algorithm>
@@ -32,6 +33,7 @@ std::string heading(const std::string& text) {
 }
 
 std::string paragraph(const std::string& text) {
+    if (text.empty()) return {};
     return wrapped(text, page_width, "  ", "  ");
 }
 
@@ -122,8 +124,9 @@ std::string air_line(const Job& job) {
 
 std::string title_lines(const Job& job) {
     return fmt::format("{}   [{}]\n", job.title, job.file) +
-           wrapped(fmt::format("{} W in {} part{}; {}", significant(job.total_power(), 4),
-                               job.parts.size(), job.parts.size() == 1 ? "" : "s", air_line(job)),
+           wrapped(fmt::format("{}{} W in {} part{}; {}", job.has_power_table() ? "up to " : "",
+                               significant(job.total_power(), 4), job.parts.size(),
+                               job.parts.size() == 1 ? "" : "s", air_line(job)),
                    page_width, "  ", "    ") +
            paragraph(fmt::format("{} of {}, {} (emissivity {})", job.sink.process.name,
                                  job.sink.alloy.name, job.sink.finish.name,
@@ -376,9 +379,11 @@ std::string by_each_channel_law(const Job& job, const Rating& rating) {
     std::string text;
     for (const auto& [law, name] : laws) {
         std::get<sink::StillAir>(duty.surroundings.air).channel_law = law;
-        const double rise = sink::rate(rating.geometry, duty).hottest_pad_rise;
-        text += fmt::format("{}{} {} K{}", text.empty() ? "" : ", ", name, fixed(rise, 1),
-                            law == still->channel_law ? " (used)" : "");
+        const Rating rated = sink::rate(rating.geometry, duty);
+        text +=
+            fmt::format("{}{} {}{}", text.empty() ? "" : ", ", name,
+                        rated.runs_away() ? "runs away" : fixed(rated.hottest_pad_rise, 1) + " K",
+                        law == still->channel_law ? " (used)" : "");
     }
     return paragraph("Hottest pad's rise by each channel law: " + text +
                      ". Choose with air: channel_law.");
@@ -408,15 +413,16 @@ std::string laws_used(const Job& job, const Rating& rating) {
 
 /// Which part comes nearest to what it is allowed, and which limits the stated sink breaks.
 std::string standing(const Job& job, const Rating& rating) {
-    std::string text;
+    std::string text = paragraph(settled_powers(job, rating));
     const sink::PartRating* nearest = nullptr;
     for (const auto& part : rating.parts)
         if (part.headroom() && (!nearest || *part.headroom() < *nearest->headroom()))
             nearest = &part;
-    if (nearest) {
+    if (nearest && !rating.runs_away()) {
         const double left = *nearest->headroom();
-        text = paragraph(fmt::format("{} is nearest to what it is allowed: {} K {}.", nearest->name,
-                                     fixed(std::abs(left), 1), left < 0.0 ? "TOO HOT" : "left"));
+        text +=
+            paragraph(fmt::format("{} is nearest to what it is allowed: {} K {}.", nearest->name,
+                                  fixed(std::abs(left), 1), left < 0.0 ? "TOO HOT" : "left"));
     }
     for (const std::string& breach : sizing::broken_limits(job, rating))
         text += wrapped(breach, page_width, "  LIMIT BROKEN: ", "    ");
@@ -458,24 +464,62 @@ std::vector<std::string> levers(const Job& job, const Refusal& refusal) {
 
 std::string interface_forms(const job::Part& part) {
     if (part.interface == 0.0) return "none";
-    const double area_resistance = part.interface * part.pad_across * part.pad_along;
-    return fmt::format("{} K/W = {} K cm²/W = {} °C in²/W over the pad",
-                       significant(part.interface, 3), significant(area_resistance * 1e4, 3),
-                       significant(area_resistance / 6.4516e-4, 3));
+    const double area_resistance = part.interface * part.contact_area.value_or(part.pad_area());
+    return fmt::format("{} K/W = {} K cm²/W = {} °C in²/W over {}", significant(part.interface, 3),
+                       significant(area_resistance * 1e4, 3),
+                       significant(area_resistance / 6.4516e-4, 3),
+                       part.contact_area ? fmt::format("a contact of {} mm²",
+                                                       significant(*part.contact_area * 1e6, 3))
+                                         : "the pad");
+}
+
+/// R_jc and the 25 degC case rating behind it, or the one it amounts to, in brackets.
+std::string rating_text(const job::Part& part) {
+    constexpr double rating_case = 298.15; // [K]
+    if (part.rating)
+        return fmt::format("{} W to {} °C", significant(part.rating->power, 3),
+                           celsius(part.rating->junction_max, 0));
+    if (!part.junction_limit || part.junction_to_case == 0.0) return "-";
+    return fmt::format(
+        "({} W)", significant((*part.junction_limit - rating_case) / part.junction_to_case, 3));
+}
+
+std::string insulation_text(const job::Part& part) {
+    if (!part.insulated) return "-";
+    return *part.insulated ? "insulated" : "live";
+}
+
+std::string understood_tables(const Job& job) {
+    if (!job.has_power_table()) return {};
+    std::string out;
+    for (const job::Part& part : job.parts) {
+        if (!part.power_table) continue;
+        std::string points;
+        for (const auto& point : part.power_table->points())
+            points += fmt::format("{}{} W at {} °C", points.empty() ? "" : ", ",
+                                  significant(point.power, 3), celsius(point.temperature, 0));
+        out += wrapped(
+            fmt::format("{}: {}; taken as {} W", part.name, points, significant(part.power, 3)),
+            page_width, "  ", "      ");
+    }
+    return heading("Power by junction temperature (taken at the most up to the junction allowed)") +
+           out;
 }
 
 std::string understood_parts(const Job& job) {
     TextTable table;
-    table.left(5);
-    table.row({"part", "W", "limit °C", "junction-case K/W", "pad mm", "interface"});
+    for (const std::size_t column : {5, 6, 7})
+        table.left(column);
+    table.row({"part", "W", "limit °C", "junction-case K/W", "at 25 °C case", "pad mm", "interface",
+               "tab"});
     for (const job::Part& part : job.parts)
         table.row(
             {part.name, significant(part.power, 3),
              part.junction_limit ? celsius(*part.junction_limit, 0) : "-",
-             significant(part.junction_to_case, 3),
+             significant(part.junction_to_case, 3), rating_text(part),
              fmt::format("{} x {}", millimetres(part.pad_across), millimetres(part.pad_along)),
-             interface_forms(part)});
-    std::string out = heading("Parts") + table.text();
+             interface_forms(part), insulation_text(part)});
+    std::string out = heading("Parts") + table.text() + understood_tables(job);
     const auto allowed = sizing::allowed_pad_rises(job);
     TextTable budget;
     for (std::size_t i = 0; i < job.parts.size(); ++i)
@@ -567,10 +611,12 @@ std::string warmed_line(const Answer& answer, const Job& job) {
 std::string size_page(const Job& job, const Answer& answer) {
     return title_lines(job) + heading("The sink") + key_line(answer.rating, job) +
            plate_line(answer) + rounding_line(answer, job) + fan_choice(answer, job) +
-           warmed_line(answer, job) + dimension_table(job, answer.rating.geometry) +
-           budget(job, answer.rating) + heat_split(answer.rating) +
-           binding_table(job, answer.binding) + alternatives_table(job, answer) +
-           laws_used(job, answer.rating) + caution_list(job, answer.rating);
+           warmed_line(answer, job) + paragraph(sizing_powers(job)) +
+           paragraph(settled_powers(job, answer.rating)) +
+           dimension_table(job, answer.rating.geometry) + budget(job, answer.rating) +
+           heat_split(answer.rating) + binding_table(job, answer.binding) +
+           alternatives_table(job, answer) + laws_used(job, answer.rating) +
+           caution_list(job, answer.rating);
 }
 
 std::string rate_page(const Job& job, const Rating& rating) {
@@ -580,8 +626,8 @@ std::string rate_page(const Job& job, const Rating& rating) {
 }
 
 std::string refusal_page(const Job& job, const Refusal& refusal) {
-    std::string out =
-        title_lines(job) + heading("Not possible as stated") + paragraph(refusal.reason);
+    std::string out = title_lines(job) + heading("Not possible as stated") +
+                      paragraph(refusal.reason) + paragraph(sizing_powers(job));
     if (!refusal.closest) return out;
     const Rating& closest = *refusal.closest;
     if (const auto target = job.limits.sink_resistance;

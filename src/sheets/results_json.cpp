@@ -128,6 +128,19 @@ Json base_map_json(const job::Job& job, const sink::Rating& r) {
               {"rise_K", field.hottest.rise}}}};
 }
 
+/// How powers by table settle; null without a table.
+Json feedback_json(const std::optional<sink::Feedback>& feedback) {
+    if (!feedback) return nullptr;
+    Json runaway = nullptr;
+    if (const auto& away = feedback->runaway)
+        runaway = {{"part", away->part},
+                   {"junction_temperature_K", away->junction},
+                   {"loop_gain", away->loop_gain}};
+    return {{"loop_gain", feedback->loop_gain},
+            {"inlet_air_left_K", optional_json(feedback->air_left)},
+            {"runaway", runaway}};
+}
+
 Json rating_json(const sink::Rating& r) {
     Json parts = Json::array();
     for (const auto& part : r.parts)
@@ -152,6 +165,7 @@ Json rating_json(const sink::Rating& r) {
               {"wall", r.heat.wall}}},
             {"sun_W", r.sun},
             {"parts", parts},
+            {"feedback", feedback_json(r.feedback)},
             {"films", std::visit([](const auto& v) { return view_json(v); }, r.view)},
             {"laws", laws_json(r.laws)}};
 }
@@ -192,14 +206,32 @@ const char* si_unit(job::Aim aim) {
     return "";
 }
 
+/// [junction in K, power in W], null where the power is one number.
+Json table_json(const std::optional<job::PowerTable>& table) {
+    if (!table) return nullptr;
+    Json points = Json::array();
+    for (const auto& point : table->points())
+        points.push_back({point.temperature, point.power});
+    return points;
+}
+
+Json case_rating_json(const std::optional<job::CaseRating>& rating) {
+    if (!rating) return nullptr;
+    return {{"power_W", rating->power}, {"junction_max_K", rating->junction_max}};
+}
+
 Json parts_json(const job::Job& job) {
     Json list = Json::array();
     for (const job::Part& part : job.parts)
         list.push_back({{"name", part.name},
                         {"power_W", part.power},
+                        {"power_by_junction_K_W", table_json(part.power_table)},
                         {"junction_limit_K", optional_json(part.junction_limit)},
                         {"junction_to_case_K_W", part.junction_to_case},
+                        {"rating_at_25_degC_case", case_rating_json(part.rating)},
                         {"interface_K_W", part.interface},
+                        {"contact_area_m2", optional_json(part.contact_area)},
+                        {"insulated", part.insulated ? Json(*part.insulated) : Json(nullptr)},
                         {"pad_across_m", part.pad_across},
                         {"pad_along_m", part.pad_along}});
     return list;
@@ -281,7 +313,7 @@ std::string results_json(const job::Job& job, const sizing::Answer& answer) {
 }
 
 std::string results_json(const job::Job& job, const sink::Rating& rating) {
-    return finished({{"result", "rated"},
+    return finished({{"result", rating.runs_away() ? "runs away" : "rated"},
                      {"broken_limits", sizing::broken_limits(job, rating)},
                      {"job", job_json(job)},
                      {"geometry", geometry_json(rating.geometry)},

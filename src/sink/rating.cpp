@@ -1,6 +1,7 @@
 #include "src/sink/rating.hpp"
 
 #include "src/sink/placing.hpp"
+#include "src/sink/power_balance.hpp"
 #include <algorithm>
 #include <cmath>
 
@@ -232,7 +233,10 @@ BaseMap base_map(const Geometry<double>& g, const Duty& duty, const Rating& rati
     return map;
 }
 
-Rating rate(const Geometry<double>& g, const Duty& duty) {
+namespace {
+
+/// Every part at its `power`, whatever its table says.
+Rating rate_at_powers(const Geometry<double>& g, const Duty& duty) {
     const Balance<double> settled = balance(g, duty);
     Rating rating;
     rating.geometry = g;
@@ -248,6 +252,50 @@ Rating rate(const Geometry<double>& g, const Duty& duty) {
     rate_air(rating, duty, settled.driving_rise);
     rating.laws.insert(rating.laws.end(), duty.inlet_laws.begin(), duty.inlet_laws.end());
     rate_parts(rating, duty);
+    return rating;
+}
+
+/// The parts whose power follows their junction.
+struct TableParts {
+    std::vector<std::size_t> indices;
+    std::vector<job::PowerTable> tables;
+
+    explicit TableParts(const std::vector<job::Part>& parts) {
+        for (std::size_t i = 0; i < parts.size(); ++i)
+            if (parts[i].power_table) {
+                indices.push_back(i);
+                tables.push_back(*parts[i].power_table);
+            }
+    }
+
+    Duty at(Duty duty, const std::vector<double>& powers) const {
+        for (std::size_t i = 0; i < indices.size(); ++i)
+            duty.parts[indices[i]].power = powers[i];
+        return duty;
+    }
+
+    std::vector<double> junctions(const Rating& rating) const {
+        std::vector<double> junctions;
+        for (const std::size_t i : indices)
+            junctions.push_back(rating.parts[i].junction_temperature);
+        return junctions;
+    }
+};
+
+} // namespace
+
+Rating rate(const Geometry<double>& g, const Duty& duty) {
+    const TableParts parts(duty.parts);
+    if (parts.indices.empty()) return rate_at_powers(g, duty);
+    const PowerBalance settled =
+        balance_powers(parts.tables, [&](const std::vector<double>& powers) {
+            return parts.junctions(rate_at_powers(g, parts.at(duty, powers)));
+        });
+    Rating rating = rate_at_powers(g, parts.at(duty, settled.powers));
+    rating.feedback = Feedback{settled.loop_gain, settled.air_left, std::nullopt};
+    if (const auto& away = settled.runaway)
+        rating.feedback->runaway = Feedback::Runaway{duty.parts[parts.indices[away->part]].name,
+                                                     away->junction, away->loop_gain};
     return rating;
 }
 

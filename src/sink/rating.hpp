@@ -33,6 +33,22 @@ struct PartRating {
     }
 };
 
+/// How parts with a power table and the sink act on each other (power_balance.hpp).
+struct Feedback {
+    struct Runaway {
+        std::string part;
+        double junction = 0.0; ///< from which on it gets away [K]
+        double loop_gain = 0.0;
+    };
+
+    double loop_gain = 0.0; ///< 1 is runaway [-]
+    std::optional<double>
+        air_left; ///< how much warmer the inlet air may be before they run away [K]
+    /// The rating then is the moment in which the climb was left, a junction at the hottest there
+    /// is.
+    std::optional<Runaway> runaway;
+};
+
 struct Rating {
     Geometry<double> geometry;
     double power = 0.0;           ///< [W]
@@ -47,7 +63,9 @@ struct Rating {
     std::variant<StillAirView<double>, MovingAirView<double>> view;
     std::vector<PartRating> parts;
     std::vector<LawUse> laws;
+    std::optional<Feedback> feedback; ///< where a part's power follows its junction
 
+    bool runs_away() const { return feedback && feedback->runaway; }
     /// Hottest pad's rise over inlet air per watt of total power [K/W].
     double sink_resistance() const { return hottest_pad_rise / power; }
     /// Mean base rise per watt [K/W].
@@ -86,7 +104,8 @@ struct ColderThanAir : std::runtime_error {
                              "the wall's conductance and both temperatures") {}
 };
 
-/// The whole rating. Throws ColderThanAir. Throws std::domain_error for impossible geometry.
+/// The whole rating, with the powers that tables and sink agree on. Throws ColderThanAir, and
+/// std::domain_error for impossible geometry.
 Rating rate(const Geometry<double>& g, const Duty& duty);
 
 } // namespace finwright::sink

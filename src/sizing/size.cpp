@@ -129,10 +129,8 @@ std::optional<Refusal> too_warm_to_begin(const Job& job) {
     return std::nullopt;
 }
 
-} // namespace
-
-Sizing size(const Job& job, const SearchOptions& options) {
-    if (auto refusal = too_warm_to_begin(job)) return *refusal;
+/// With the fan that serves best, if there are several.
+Sizing size_with_best_fan(const Job& job, const SearchOptions& options) {
     const auto* air = std::get_if<job::FanAir>(&job.air.state);
     if (!air || air->fans.size() == 1) return size_with_one_fan(job, options);
     std::optional<Sizing> best;
@@ -151,6 +149,25 @@ Sizing size(const Job& job, const SearchOptions& options) {
     }
     if (auto* answer = std::get_if<Answer>(&*best)) answer->fans = std::move(fans);
     return std::move(*best);
+}
+
+/// Every part at the power it is sized for.
+Job at_sizing_powers(Job job) {
+    for (job::Part& part : job.parts)
+        part.power_table.reset();
+    return job;
+}
+
+} // namespace
+
+Sizing size(const Job& job, const SearchOptions& options) {
+    if (auto refusal = too_warm_to_begin(job)) return *refusal;
+    if (!job.has_power_table()) return size_with_best_fan(job, options);
+    Sizing sizing = size_with_best_fan(at_sizing_powers(job), options);
+    if (auto* answer = std::get_if<Answer>(&sizing))
+        answer->rating =
+            sink::rate(answer->design.rounded, sink::duty_of(as_answered(job, *answer)));
+    return sizing;
 }
 
 Job as_answered(const Job& job, const Answer& answer) {

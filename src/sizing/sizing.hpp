@@ -80,7 +80,9 @@ struct SearchOptions {
 };
 
 /// With one fan after the other where the job leaves the choice, and downstream parts held to what
-/// the base map says of them.
+/// the base map says of them. Parts with a power table are searched for at their `power`, the most
+/// the table says up to the junction allowed: exact where a rising table's limit binds, on the safe
+/// side elsewhere. An answer is then rated with the powers that settle, a refusal is not.
 Sizing size(const job::Job& job, const SearchOptions& options = {});
 
 /// The same for the first fan, every part on air of one temperature.

@@ -132,10 +132,18 @@ TEST_CASE("interfaces: four ways of stating one, by definition of the quantities
 }
 
 TEST_CASE("a 25 degC case rating: R_jc = (Tj,max - 25 degC) / P") {
-    const Part part =
-        read(with(metric, "junction_to_case: 0.2 K/W", "rated_power: 500 W")).parts[0];
+    const auto rated = [](const std::string& rating) {
+        return read(with(metric, "junction_to_case: 0.2 K/W", "rating: " + rating)).parts[0];
+    };
+    const Part part = rated("{power: 500 W, junction_max: 150 degC}");
     CHECK(part.junction_to_case == near(125.0 / 500.0, 1e-12));
-    CHECK(*part.rated_power == near(500.0, 1e-12));
+    CHECK(part.rating->power == near(500.0, 1e-12));
+    CHECK(part.rating->junction_max == near(423.15, 1e-12));
+    // Common practice: derating by 2 W/degC from 25 degC case to nothing at 175 degC is 300 W at
+    // 25 degC and 1/2 K/W, whatever the job allows the junction.
+    const Part derated = rated("{power: 300 W, junction_max: 175 degC}");
+    CHECK(derated.junction_to_case == near(0.5, 1e-12));
+    CHECK(*derated.junction_limit == near(423.15, 1e-12));
 }
 
 TEST_CASE("count makes equal parts with names of their own") {
