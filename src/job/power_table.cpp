@@ -5,14 +5,6 @@
 
 namespace finwright::job {
 
-namespace {
-
-bool less_power(const PowerTable::Point& a, const PowerTable::Point& b) {
-    return a.power < b.power;
-}
-
-} // namespace
-
 PowerTable::PowerTable(std::vector<Point> points) : points_(std::move(points)) {
     constexpr double endless = std::numeric_limits<double>::infinity();
     pieces_.push_back({-endless, points_.front().temperature, points_.front(), 0.0});
@@ -33,10 +25,6 @@ std::size_t PowerTable::piece_at(double temperature) const {
 
 double PowerTable::power_at(double temperature) const {
     return pieces_[piece_at(temperature)].power_at(temperature);
-}
-
-double PowerTable::least_power() const {
-    return std::min_element(points_.begin(), points_.end(), less_power)->power;
 }
 
 double PowerTable::most_power(double from, double to) const {

@@ -35,7 +35,6 @@ public:
     std::size_t piece_at(double temperature) const;
 
     double power_at(double temperature) const; ///< [W]
-    double least_power() const;                ///< [W]
     /// The most between two temperatures [W].
     double most_power(double from, double to) const;
 

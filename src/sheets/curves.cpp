@@ -64,9 +64,11 @@ CurvePoint at_air(Job job, const sink::Geometry<double>& g, double share) {
 std::vector<CurvePoint> curves(const Job& job, const sink::Geometry<double>& g) {
     const bool still = std::holds_alternative<job::StillAir>(job.air.state);
     const double least = still ? least_power : least_air;
+    Job settled = job;
+    settled.parts = sink::at_rated_powers(job.parts, sink::rate(g, sink::duty_of(job)));
     std::vector<CurvePoint> list;
     for (double altitude : altitudes_of(job)) {
-        Job there = job;
+        Job there = settled;
         there.air.altitude = altitude;
         for (int k = 0; k < points_on_a_curve; ++k) {
             const double share = least + (most - least) * k / (points_on_a_curve - 1);

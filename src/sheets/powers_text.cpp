@@ -65,10 +65,11 @@ std::string settled_powers(const job::Job& job, const Rating& rating) {
             "those of the moment in which the climb was left; they are no rating. Fewer watts, "
             "less resistance between junction and air, or cooler air.",
             hottest(), getting_away(*feedback.runaway));
-    return fmt::format("Powers by table settle at {}. Loop gain {}: a disturbance grows {}-fold, "
-                       "and at 1 the junctions run away. {}",
-                       powers_and_junctions(job, rating), fixed(feedback.loop_gain, 3),
-                       fixed(1.0 / (1.0 - feedback.loop_gain), 2), distance(feedback));
+    return fmt::format(
+        "Powers by table settle at {}. Loop gain {}: a disturbance is multiplied by {}, "
+        "and at 1 the junctions run away. {}",
+        powers_and_junctions(job, rating), fixed(feedback.loop_gain, 3),
+        fixed(1.0 / (1.0 - feedback.loop_gain), 2), distance(feedback));
 }
 
 } // namespace finwright::sheets

@@ -107,7 +107,8 @@ Json laws_json(const std::vector<sink::LawUse>& laws) {
 
 /// The base's temperature place by place: values[j][i] at (x[i], y[j]).
 Json base_map_json(const job::Job& job, const sink::Rating& r) {
-    const auto duty = sink::duty_of(job);
+    auto duty = sink::duty_of(job);
+    duty.parts = sink::at_rated_powers(duty.parts, r);
     const auto field = sink::base_field(sink::base_map(r.geometry, duty, r));
     Json x = Json::array(), y = Json::array(), rises = Json::array();
     for (int i = 0; i < field.across.cells(); ++i)

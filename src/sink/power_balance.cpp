@@ -21,7 +21,7 @@ constexpr double served = 0.1;           // what a step leaves of the residual w
 constexpr double beyond_gain = 1e-3;
 constexpr double air_resolution = 0.05; // [K]
 
-/// A state from which the junctions grow by themselves, in the shape that grows fastest.
+/// The loop gain, and the shape in which the junctions grow fastest.
 struct Growth {
     double gain;
     VectorXd shape;
@@ -36,14 +36,11 @@ Growth growth_of(const MatrixXd& feedback) {
 
 class Climb {
 public:
-    Climb(const std::vector<job::PowerTable>& tables, const Junctions& junctions)
-        : tables_(tables), junctions_(junctions), count_(Index(tables.size())) {
-        VectorXd least(count_);
-        for (Index i = 0; i < count_; ++i)
-            least[i] = tables_[std::size_t(i)].least_power();
-        junction_ = junctions_at(least);
-        for (Index i = 0; i < count_; ++i)
-            piece_.push_back(tables_[std::size_t(i)].piece_at(junction_[i]));
+    Climb(const std::vector<job::PowerTable>& tables, double coldest, const Junctions& junctions)
+        : tables_(tables), junctions_(junctions), count_(Index(tables.size())),
+          junction_(VectorXd::Constant(count_, coldest)) {
+        for (const job::PowerTable& table : tables_)
+            piece_.push_back(table.piece_at(coldest));
     }
 
     PowerBalance run() {
@@ -219,11 +216,11 @@ Junctions straight(const PowerBalance& at, const MatrixXd& slopes, double warmer
     };
 }
 
-std::optional<double> air_left(const std::vector<job::PowerTable>& tables, const PowerBalance& at,
-                               const MatrixXd& slopes) {
+std::optional<double> air_left(const std::vector<job::PowerTable>& tables, double coldest,
+                               const PowerBalance& at, const MatrixXd& slopes) {
     const auto runaway = [&](double warmer) {
         const Junctions lifted = straight(at, slopes, warmer);
-        return Climb(tables, lifted).run().runaway;
+        return Climb(tables, coldest + warmer, lifted).run().runaway;
     };
     const auto hottest = *std::max_element(at.junctions.begin(), at.junctions.end());
     double low = 0.0, high = std::max(job::hottest_junction - hottest, air_resolution);
@@ -240,11 +237,11 @@ std::optional<double> air_left(const std::vector<job::PowerTable>& tables, const
 
 } // namespace
 
-PowerBalance balance_powers(const std::vector<job::PowerTable>& tables,
+PowerBalance balance_powers(const std::vector<job::PowerTable>& tables, double coldest,
                             const Junctions& junctions) {
-    Climb climb(tables, junctions);
+    Climb climb(tables, coldest, junctions);
     PowerBalance balance = climb.run();
-    if (!balance.runaway) balance.air_left = air_left(tables, balance, climb.slopes());
+    if (!balance.runaway) balance.air_left = air_left(tables, coldest, balance, climb.slopes());
     return balance;
 }
 

@@ -44,6 +44,8 @@ struct PowerBalance {
     std::optional<Runaway> runaway; ///< the state then is the one in which the climb ended
 };
 
-PowerBalance balance_powers(const std::vector<job::PowerTable>& tables, const Junctions& junctions);
+/// `coldest`: no junction is below it, and the climb begins there [K].
+PowerBalance balance_powers(const std::vector<job::PowerTable>& tables, double coldest,
+                            const Junctions& junctions);
 
 } // namespace finwright::sink

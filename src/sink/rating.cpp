@@ -287,8 +287,8 @@ struct TableParts {
 Rating rate(const Geometry<double>& g, const Duty& duty) {
     const TableParts parts(duty.parts);
     if (parts.indices.empty()) return rate_at_powers(g, duty);
-    const PowerBalance settled =
-        balance_powers(parts.tables, [&](const std::vector<double>& powers) {
+    const PowerBalance settled = balance_powers(
+        parts.tables, duty.surroundings.air_temperature, [&](const std::vector<double>& powers) {
             return parts.junctions(rate_at_powers(g, parts.at(duty, powers)));
         });
     Rating rating = rate_at_powers(g, parts.at(duty, settled.powers));
@@ -297,6 +297,14 @@ Rating rate(const Geometry<double>& g, const Duty& duty) {
         rating.feedback->runaway = Feedback::Runaway{duty.parts[parts.indices[away->part]].name,
                                                      away->junction, away->loop_gain};
     return rating;
+}
+
+std::vector<job::Part> at_rated_powers(std::vector<job::Part> parts, const Rating& rating) {
+    for (std::size_t i = 0; i < parts.size(); ++i) {
+        parts[i].power = rating.parts[i].power;
+        parts[i].power_table.reset();
+    }
+    return parts;
 }
 
 } // namespace finwright::sink

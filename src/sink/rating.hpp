@@ -108,4 +108,7 @@ struct ColderThanAir : std::runtime_error {
 /// std::domain_error for impossible geometry.
 Rating rate(const Geometry<double>& g, const Duty& duty);
 
+/// The parts at the powers of their rating, tables settled.
+std::vector<job::Part> at_rated_powers(std::vector<job::Part> parts, const Rating& rating);
+
 } // namespace finwright::sink

@@ -69,7 +69,6 @@ TEST_CASE("the most between two temperatures: at an end, or at a point between")
     CHECK(rising.most_power(290.0, 425.0) == near(17.0, 1e-15));
     CHECK(humped.most_power(310.0, 390.0) == near(30.0, 1e-15));
     CHECK(humped.most_power(360.0, 390.0) == near(28.0, 1e-15));
-    CHECK(humped.least_power() == near(10.0, 1e-15));
 }
 
 TEST_CASE("a job's table arrives in SI and is sized at the junction allowed") {
