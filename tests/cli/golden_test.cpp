@@ -40,6 +40,11 @@ TEST_CASE("rate: the sink already in the drawer") {
     check_golden("rate configs/jobs/drawer_sink.yaml", "rate_drawer_sink.txt");
 }
 
+TEST_CASE("rate: parts whose power follows their junction") {
+    check_golden("rate configs/jobs/warm_switches.yaml", "rate_warm_switches.txt");
+    check_golden("check configs/jobs/warm_switches.yaml", "check_warm_switches.txt");
+}
+
 TEST_CASE("check: what was understood") {
     check_golden("check configs/jobs/pump_controller.yaml", "check_pump_controller.txt");
 }

@@ -1,5 +1,6 @@
 // The program from outside: exit codes, errors on the right stream, JSON whole or not at all,
 // numbers that agree.
+#include "src/job/power_table.hpp"
 #include "src/job/read_job.hpp"
 #include "tests/cli/run_program.hpp"
 #include "tests/near.hpp"
@@ -181,6 +182,91 @@ TEST_CASE("a job in inches equals the same job in millimetres") {
           near(jb["rating"]["base_rise_K"].get<double>(), 1e-10));
 }
 
+namespace {
+
+std::string warm() {
+    return text_of(std::string(SOURCE_DIR) + "/configs/jobs/warm_switches.yaml");
+}
+
+/// The same switches on a sink that is far too small.
+std::string hopeless() {
+    return replaced(replaced(warm(), "length: 80 mm", "length: 25 mm"), "fin_height: 30 mm",
+                    "fin_height: 6 mm");
+}
+
+} // namespace
+
+TEST_CASE("rate: powers by table settle, and JSON says how far from running away") {
+    const Folder folder;
+    const auto target = (folder.path / "r.json").string();
+    const auto run = run_program("rate configs/jobs/warm_switches.yaml --json " + target);
+    CHECK(run.exit_code == 0);
+    CHECK(run.output.find("Powers by table settle at") != std::string::npos);
+    const Json j = Json::parse(text_of(target));
+    CHECK(j["result"] == "rated");
+    const auto& feedback = j["rating"]["feedback"];
+    CHECK(feedback["runaway"].is_null());
+    CHECK(feedback["loop_gain"].get<double>() > 0.0);
+    CHECK(feedback["loop_gain"].get<double>() < 1.0);
+    for (std::size_t i = 0; i < 2; ++i) {
+        const auto& part = j["rating"]["parts"][i];
+        const auto& points = j["job"]["parts"][i]["power_by_junction_K_W"];
+        std::vector<finwright::job::PowerTable::Point> table;
+        for (const auto& point : points)
+            table.push_back({point[0], point[1]});
+        CHECK(
+            part["power_W"].get<double>() ==
+            near(finwright::job::PowerTable(table).power_at(part["junction_temperature_K"]), 1e-9));
+    }
+}
+
+TEST_CASE("rate: a sink on which the parts run away is a result with its own words, exit 4") {
+    const Folder folder;
+    const auto target = (folder.path / "r.json").string();
+    const auto run = run_program("rate " + folder.file("a.yaml", hopeless()) + " --json " + target);
+    CHECK(run.exit_code == 4);
+    CHECK(run.errors.empty());
+    CHECK(run.output.find("THERMAL RUNAWAY") != std::string::npos);
+    CHECK(run.output.find("is nearest to what it is allowed") == std::string::npos);
+    const Json j = Json::parse(text_of(target));
+    CHECK(j["result"] == "runs away");
+    const auto& away = j["rating"]["feedback"]["runaway"];
+    CHECK(away["part"] == "high switch"); // the steeper table
+    CHECK(away["loop_gain"].get<double>() >= 1.0);
+    CHECK(away["junction_temperature_K"].get<double>() < 873.15);
+}
+
+TEST_CASE("size: a power table is sized at the junction allowed, and the page says so") {
+    const Folder folder;
+    auto text = warm();
+    text.erase(text.find("  fins: 10"));
+    const auto target = (folder.path / "r.json").string();
+    const auto run = run_program("size " + folder.file("a.yaml", text) + " --json " + target);
+    CHECK(run.exit_code == 0);
+    CHECK(run.output.find("Sized for the most each power table says") != std::string::npos);
+    CHECK(run.output.find("high switch 13.2 W") != std::string::npos); // 125 degC, by hand
+    CHECK(run.output.find("Powers by table settle at") != std::string::npos);
+    for (const auto& part : Json::parse(text_of(target))["rating"]["parts"])
+        CHECK(part["headroom_K"].get<double>() >= 0.0);
+}
+
+TEST_CASE("what is said of the tabs decides how the caution reads") {
+    const Folder folder;
+    const auto caution = [&](const std::string& high, const std::string& low) {
+        auto text = replaced(warm(), "    insulated: no\n", high);
+        return run_program("rate " +
+                           folder.file("a.yaml", replaced(text, "    insulated: yes\n", low)))
+            .output;
+    };
+    CHECK(caution("", "").find("Tabs and leads may be live: check creepage") != std::string::npos);
+    const std::string yes = "    insulated: yes\n", no = "    insulated: no\n";
+    CHECK(caution("", yes).find("Tabs and leads may be live: check creepage") != std::string::npos);
+    CHECK(caution(yes, yes).find("stated to be insulated inside") != std::string::npos);
+    CHECK(caution(no, yes).find("Stated as live: the tab of high switch.") != std::string::npos);
+    CHECK(caution(no, no).find("Stated as live: the tab of high switch, low switch.") !=
+          std::string::npos);
+}
+
 TEST_CASE("laws: a value worked by hand") {
     // Elenbaas 1942: (54.3/24)(1 - exp(-35/54.3))^(3/4)
     const double by_hand = 54.3 / 24.0 * std::pow(1.0 - std::exp(-35.0 / 54.3), 0.75);
@@ -218,4 +304,19 @@ TEST_CASE("JSON: the base map's hottest place is no cooler than any pad") {
     CHECK(map["rise_over_inlet_K"][0].size() == map["across_m"].size());
     CHECK(map["hottest"]["rise_K"].get<double>() >=
           j["rating"]["hottest_pad_rise_K"].get<double>() - 0.05);
+}
+
+TEST_CASE("curves and base map of parts with a power table rest on the powers that settle") {
+    const Folder folder;
+    const auto result = (folder.path / "r.json").string(),
+               curves = (folder.path / "c.json").string();
+    REQUIRE(
+        run_program("rate configs/jobs/warm_switches.yaml --json " + result + " --curves " + curves)
+            .exit_code == 0);
+    const Json rated = Json::parse(text_of(result)), points = Json::parse(text_of(curves));
+    const double power = rated["rating"]["power_W"];
+    CHECK(points[0]["power_W"].get<double>() == near(0.1 * power, 1e-9));
+    CHECK(points[19]["power_W"].get<double>() == near(2.0 * power, 1e-9));
+    CHECK(rated["base_map"]["hottest"]["rise_K"].get<double>() ==
+          near(rated["rating"]["hottest_pad_rise_K"].get<double>(), 0.02));
 }
