@@ -19,10 +19,9 @@ constexpr double gap_that_clogs = 2e-3;       // unfiltered air [m]
 constexpr double heavy = 0.4;                 // for leads to carry [kg]
 constexpr double sharp = 1e-3;                // fin edge [m]
 constexpr double beyond_reading =
-    273.15 + 250.0;                      // a figure above it would say more than is known [K]
-constexpr double worn_interface = 1.5;   // end of life, common practice [-]
-constexpr double specific_heat = 1007.0; // of air, near enough for a density [J/(kg K)]
-constexpr double clogged_flow = 0.7;     // filter loaded, common practice [-]
+    273.15 + 250.0;                    // a figure above it would say more than is known [K]
+constexpr double worn_interface = 1.5; // end of life, common practice [-]
+constexpr double clogged_flow = 0.7;   // filter loaded, common practice [-]
 
 double least_headroom(const Rating& rating) {
     double least = std::numeric_limits<double>::infinity();
@@ -167,7 +166,7 @@ std::string fan_curve_cautions(const job::Job& job, const Rating& rating) {
     if (!driven) return {};
     const job::Fan& fan = driven->fans.front();
     const auto& v = std::get<sink::MovingAirView<double>>(rating.view);
-    const sink::FanCurve curve(fan, v.capacity_flow / v.entering_flow / specific_heat);
+    const sink::FanCurve curve(fan, fan.density);
     std::string text;
     if (!curve.falls())
         text =
@@ -192,8 +191,7 @@ std::string serrations(const Rating& rating) {
 std::string stacked_parts(const job::Job& job) {
     if (!std::holds_alternative<job::StillAir>(job.air.state) || job.parts.size() < 2) return {};
     return "In still air all parts are rated on air of one temperature: of two above each other "
-           "the "
-           "upper one runs somewhat hotter than stated, the lower cooler.";
+           "the upper one runs somewhat hotter than stated, the lower cooler.";
 }
 
 } // namespace

@@ -4,6 +4,7 @@
 #include <algorithm>
 #include <fmt/format.h>
 #include <nlohmann/json.hpp>
+#include <optional>
 
 namespace finwright::sheets {
 
@@ -35,26 +36,36 @@ void scale_air(job::FanAir& air, double by) {
         fan.speed *= by;
 }
 
-CurvePoint point(const char* curve, const Job& job, const sink::Geometry<double>& g, double air) {
-    const sink::Rating rating = sink::rate(g, sink::duty_of(job));
-    const auto* moving = std::get_if<sink::MovingAirView<double>>(&rating.view);
-    return {curve,
-            job.air.altitude,
-            rating.power,
-            air,
-            moving ? moving->volume_flow : 0.0,
-            rating.pressure_drop,
-            rating.hottest_pad_rise,
-            rating.sink_resistance()};
+std::optional<sink::Rating> covered(const Job& job, const sink::Geometry<double>& g) {
+    try {
+        return sink::rate(g, sink::duty_of(job));
+    } catch (const sink::ColderThanAir&) {
+        return std::nullopt;
+    }
 }
 
-CurvePoint at_power(Job job, const sink::Geometry<double>& g, double share) {
+std::optional<CurvePoint> point(const char* curve, const Job& job, const sink::Geometry<double>& g,
+                                double air) {
+    const auto rating = covered(job, g);
+    if (!rating) return std::nullopt;
+    const auto* moving = std::get_if<sink::MovingAirView<double>>(&rating->view);
+    return CurvePoint{curve,
+                      job.air.altitude,
+                      rating->power,
+                      air,
+                      moving ? moving->volume_flow : 0.0,
+                      rating->pressure_drop,
+                      rating->hottest_pad_rise,
+                      rating->sink_resistance()};
+}
+
+std::optional<CurvePoint> at_power(Job job, const sink::Geometry<double>& g, double share) {
     for (job::Part& part : job.parts)
         part.power *= share;
     return point("power", job, g, 1.0);
 }
 
-CurvePoint at_air(Job job, const sink::Geometry<double>& g, double share) {
+std::optional<CurvePoint> at_air(Job job, const sink::Geometry<double>& g, double share) {
     std::visit([&](auto& air) { scale_air(air, share); }, job.air.state);
     return point("air", job, g, share);
 }
@@ -72,7 +83,8 @@ std::vector<CurvePoint> curves(const Job& job, const sink::Geometry<double>& g) 
         there.air.altitude = altitude;
         for (int k = 0; k < points_on_a_curve; ++k) {
             const double share = least + (most - least) * k / (points_on_a_curve - 1);
-            list.push_back(still ? at_power(there, g, share) : at_air(there, g, share));
+            const auto at = still ? at_power(there, g, share) : at_air(there, g, share);
+            if (at) list.push_back(*at);
         }
     }
     return list;

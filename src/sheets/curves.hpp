@@ -24,6 +24,7 @@ struct CurvePoint {
 /// Still air: power from a tenth to twice the job's. Moving air: the air from a quarter to twice
 /// the job's. Each at the job's altitude and at sea level, 1000, 2000 and 3000 m. Powers by table
 /// are held where they settle.
+/// Points at which a wall or surroundings would hold the base colder than its air are left out.
 std::vector<CurvePoint> curves(const job::Job& job, const sink::Geometry<double>& g);
 
 std::string curves_csv(const std::vector<CurvePoint>& points);

@@ -285,10 +285,17 @@ std::string key_line(const Rating& rating, const Job& job) {
         fixed(rating.hottest_pad_rise, 1), significant(rating.base_resistance(), 3));
     const auto* moving = std::get_if<sink::MovingAirView<double>>(&rating.view);
     if (!moving) return paragraph(text);
-    text += fmt::format(
-        "; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
-        significant(rating.pressure_drop, 3), significant(moving->channel_velocity, 3),
-        significant(moving->volume_flow * 3600.0, 3), celsius(rating.outlet_temperature()));
+    if (const auto outlet = rating.outlet_temperature())
+        text += fmt::format("; {} Pa, {} m/s between the fins, {} m³/h, air leaves at {} °C",
+                            significant(rating.pressure_drop, 3),
+                            significant(moving->channel_velocity, 3),
+                            significant(moving->volume_flow * 3600.0, 3), celsius(*outlet));
+    else
+        text += fmt::format("; {} m/s between the fins, {} m³/h enter there and {} leave at their "
+                            "end",
+                            significant(moving->channel_velocity, 3),
+                            significant(moving->entering_flow * 3600.0, 3),
+                            significant(moving->exit_flow * 3600.0, 3));
     return paragraph(text) + air_path(job, rating, *moving);
 }
 

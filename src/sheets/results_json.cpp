@@ -154,7 +154,7 @@ Json rating_json(const sink::Rating& r) {
             {"sink_resistance_K_W", r.sink_resistance()},
             {"base_resistance_K_W", r.base_resistance()},
             {"pressure_drop_Pa", r.pressure_drop},
-            {"outlet_temperature_K", r.outlet_temperature()},
+            {"outlet_temperature_K", optional_json(r.outlet_temperature())},
             {"heat_W",
              {{"channels", r.heat.channels},
               {"outer_faces", r.heat.outer_faces},

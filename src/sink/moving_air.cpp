@@ -20,7 +20,7 @@ constexpr double newton_tolerance = 1e-12;
 constexpr double longest_step = 0.7; // of the logarithm of a flow
 constexpr double settled = 1e-9;
 constexpr double slopes_serve = 0.2;  // what a step must leave at most of the imbalance [-]
-constexpr double probe = 1e-6;        // for slopes by central differences, of the same
+constexpr double probe = 1e-6;        // for slopes by differences, of the same
 constexpr double most_entering = 3.0; // over the mean along the channel [-]
 constexpr int scan_points = 60;       // for the crossing of highest flow on a curve with a dip
 

@@ -51,6 +51,9 @@ struct MovingAirView {
     T channel_loss = T(0.0);       ///< from the approach's total to the exit's static pressure [Pa]
     T bypass_loss = T(0.0);        ///< the same past the fins [Pa]
     T pressure_drop = T(0.0);      ///< static, from before the fins to behind them [Pa]
+
+    /// Air goes past the fins without walls around it.
+    bool free_stream() const { return bypass_velocity > 0.0 && bypass_exit_flow == 0.0; }
 };
 
 /// Velocity between the fins at a stated flow in a closed duct, at inlet density; 0 where the flow

@@ -36,7 +36,7 @@ LawUse channel_law_use(const StillAirView<double>& v, const Geometry<double>& g,
     case ChannelLaw::fin_channel:
         break;
     }
-    return {"fin_channel", "channels", {v.elenbaas, v.plate, gap, g.height, g.length}};
+    return {"fin_channel", "channels", {v.elenbaas, v.plate, gap, g.height, g.fin_length()}};
 }
 
 std::vector<LawUse> channel_laws(const StillAirView<double>& v, const Geometry<double>& g,
@@ -50,7 +50,7 @@ std::vector<LawUse> channel_laws(const StillAirView<double>& v, const Geometry<d
     if (std::sin(tilt) == 0.0) return uses;
     const double ra = v.grashof_unit * std::abs(std::sin(tilt)) * gap * gap * gap;
     uses.push_back({tilt > 0.0 ? "horizontal_array" : "array_facing_down", "channels", {ra}});
-    uses.push_back({"horizontal_length", "channels, their length", {g.length}});
+    uses.push_back({"horizontal_length", "channels, their length", {g.fin_length()}});
     if (std::cos(tilt) > level_to_the_eye)
         uses.push_back({"tilted_array", "channels, tilt", {tilt}});
     return uses;
@@ -75,21 +75,22 @@ std::vector<LawUse> still_air_laws(const StillAirView<double>& v, const Geometry
                         "outer faces, tips, edges, rim",
                         {v.grashof_unit, v.prandtl, g.length, g.width(), still.mounting.tilt}});
     if (still.drift && still.drift->direction != job::Drift::Direction::crossing) {
-        uses.push_back({"drift_in_channel",
-                        "drift through the channels",
-                        {still.drift->velocity, v.kinematic_viscosity, g.mean_gap(), g.length}});
+        uses.push_back(
+            {"drift_in_channel",
+             "drift through the channels",
+             {still.drift->velocity, v.kinematic_viscosity, g.mean_gap(), g.fin_length()}});
         if (still.drift->direction == job::Drift::Direction::opposing)
             uses.push_back(
                 {"mixed_against", "drift against rising air", {v.forced_film, v.natural_film}});
     }
     uses.push_back({"channel_radiation_zoned",
                     "radiation of the channels",
-                    {emissivity, g.mean_gap(), g.height, g.length}});
+                    {emissivity, g.mean_gap(), g.height, g.fin_length()}});
     return uses;
 }
 
 std::vector<LawUse> moving_air_laws(const MovingAirView<double>& v, const Geometry<double>& g) {
-    const double length_ratio = g.length / v.hydraulic_diameter;
+    const double length_ratio = g.fin_length() / v.hydraulic_diameter;
     std::vector<LawUse> uses{
         {"air_conductivity", "air in the film", {v.film_temperature}},
         {"duct_all_regimes", "channels", {v.reynolds, v.prandtl, v.aspect, length_ratio}},
@@ -171,9 +172,9 @@ WarmingAir warming(const MovingAirView<double>& v, const Rating& rating) {
 
 } // namespace
 
-double Rating::outlet_temperature() const {
+std::optional<double> Rating::outlet_temperature() const {
     const auto* moving = std::get_if<MovingAirView<double>>(&view);
-    if (!moving) return air_temperature;
+    if (!moving || moving->free_stream()) return std::nullopt;
     const double whole = moving->capacity_flow * moving->volume_flow / moving->entering_flow;
     return air_temperature + power / whole;
 }

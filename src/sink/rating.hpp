@@ -70,8 +70,8 @@ struct Rating {
     double sink_resistance() const { return hottest_pad_rise / power; }
     /// Mean base rise per watt [K/W].
     double base_resistance() const { return base_rise / power; }
-    /// Mean temperature of the air leaving a ducted sink, the inlet's in still air [K].
-    double outlet_temperature() const;
+    /// Mean temperature of all the air behind the sink; none in still air and in a free stream [K].
+    std::optional<double> outlet_temperature() const;
 };
 
 /// Rise of the base under each pad over the inlet air, spreading included [K].

@@ -13,7 +13,8 @@ namespace {
 
 constexpr int rounds = 6;              // of search and map
 constexpr double worth_a_search = 0.1; // [K]
-constexpr double agreed = 1e-3;        // what a part may stand over what it is allowed [K]
+constexpr double agreed = 1e-7;        // what a part may stand over what it is allowed [K]
+constexpr double step_aside = 1e-3;    // what a round keeps free beyond the map's word [K]
 
 Job with_fan(const Job& job, std::size_t fan) {
     Job one = job;
@@ -56,6 +57,7 @@ double rounded_aim(const Sizing& sizing) {
     return std::get<Answer>(sizing).design.rounded_aim;
 }
 
+/// Nothing where wall or surroundings would hold so large a plate colder than its air.
 std::optional<PlainPlate> plain_plate(const Job& job, double thickness) {
     const job::Space& space = job.limits.space;
     const auto allowed = allowed_pad_rises(job);
@@ -64,9 +66,13 @@ std::optional<PlainPlate> plain_plate(const Job& job, double thickness) {
     if (!space.width || !space.length || !held) return std::nullopt;
     PlainPlate plate;
     plate.geometry = {0, 0.0, 0.0, *space.width, thickness, *space.length};
-    const sink::Rating rating = sink::rate(plate.geometry, sink::duty_of(job));
-    plate.mass = rating.mass;
-    plate.excess = excess(job, rating);
+    try {
+        const sink::Rating rating = sink::rate(plate.geometry, sink::duty_of(job));
+        plate.mass = rating.mass;
+        plate.excess = excess(job, rating);
+    } catch (const sink::ColderThanAir&) {
+        return std::nullopt;
+    }
     return plate;
 }
 
@@ -101,7 +107,7 @@ Sizing size_with_one_fan(const Job& job, const SearchOptions& options) {
         if (holds && (!best || rounded_aim(sizing) < rounded_aim(*best))) best = sizing;
         if (holds && (round > 0 || !matters(warmed, kept))) break;
         for (std::size_t i = 0; i < kept.size(); ++i)
-            kept[i] = round == 0 ? warmed[i] : std::max(kept[i], warmed[i]) + agreed;
+            kept[i] = round == 0 ? warmed[i] : std::max(kept[i], warmed[i]) + step_aside;
         sizing = size_on_even_air(lowered(job, kept), options);
     }
     if (best) return *best;
@@ -120,8 +126,8 @@ std::optional<Refusal> too_warm_to_begin(const Job& job) {
             Refusal refusal;
             refusal.reason = fmt::format(
                 "The air that reaches the fins has {:.1f} °C: {} could not be kept cool enough "
-                "even "
-                "by a perfect sink. Move the sink below further away or aside, lower its power, or "
+                "even by a perfect sink. Move the sink below further away or aside, lower its "
+                "power, or "
                 "bring cooler air.",
                 sink::inlet_temperature(job) - 273.15, job.parts[i].name);
             return refusal;

@@ -320,3 +320,19 @@ TEST_CASE("curves and base map of parts with a power table rest on the powers th
     CHECK(rated["base_map"]["hottest"]["rise_K"].get<double>() ==
           near(rated["rating"]["hottest_pad_rise_K"].get<double>(), 0.02));
 }
+
+TEST_CASE(
+    "cold surroundings: an answer stands though a larger plate or less power is not covered") {
+    const Folder folder;
+    const auto sized = run_program("size tests/data/jobs/cold_sky.yaml");
+    CHECK(sized.exit_code == 0);
+    CHECK(sized.output.find("Are fins needed?") == std::string::npos);
+    auto drawer = text_of(std::string(SOURCE_DIR) + "/configs/jobs/drawer_sink.yaml");
+    drawer = replaced(drawer, "parts:", "around: {radiating_temperature: 10 degC}\nparts:");
+    const auto csv = (folder.path / "c.csv").string();
+    CHECK(run_program("rate " + folder.file("b.yaml", drawer) + " --curves " + csv).exit_code == 0);
+    const auto lines = text_of(csv);
+    const auto rows = std::count(lines.begin(), lines.end(), '\n') - 1;
+    CHECK(rows > 40);
+    CHECK(rows < 80);
+}

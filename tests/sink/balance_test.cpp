@@ -107,7 +107,7 @@ TEST_CASE("air leaving a duct carries the whole power") {
         const auto duty = random.ducted(g);
         const auto rating = sink::rate(g, duty);
         const auto& view = std::get<sink::MovingAirView<double>>(rating.view);
-        CHECK(view.capacity_flow * (rating.outlet_temperature() - rating.air_temperature) ==
+        CHECK(view.capacity_flow * (rating.outlet_temperature().value() - rating.air_temperature) ==
               near(duty.power(), 1e-9));
     }
 }

@@ -27,7 +27,7 @@ int answered(job::Job (tests::RandomJobs::*make)(), unsigned seed, int count) {
         const job::Job asked = sizing::as_answered(job, *answer);
         const auto rating = sink::rate(answer->design.rounded, sink::duty_of(asked));
         for (const auto& part : rating.parts)
-            CHECK(*part.headroom() > -2e-3);
+            CHECK(*part.headroom() > -1e-6);
         CHECK(sizing::broken_limits(asked, rating).empty());
         CHECK(rating.mass == near(answer->rating.mass, 1e-12));
     }

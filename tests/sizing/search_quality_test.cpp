@@ -53,13 +53,13 @@ double long_multi_start(const job::Job& job) {
 }
 
 /// With every part on the air it meets, as the user gets it.
-void check_answer_keeps_limits(const job::Job& job) {
+bool answer_keeps_limits(const job::Job& job) {
     const auto sizing = sizing::size(job);
-    if (!std::holds_alternative<sizing::Answer>(sizing)) return;
+    if (!std::holds_alternative<sizing::Answer>(sizing)) return false;
     const auto& answer = std::get<sizing::Answer>(sizing);
     const auto rating = sink::rate(answer.design.rounded, sink::duty_of(job));
     for (const auto& part : rating.parts)
-        CHECK(part.junction_temperature <= *part.junction_allowed + 1e-3);
+        CHECK(part.junction_temperature <= *part.junction_allowed + 1e-6);
     const auto& g = answer.design.rounded;
     const job::Process& p = job.sink.process;
     const double slack = 1.0 + 1e-9;
@@ -75,18 +75,22 @@ void check_answer_keeps_limits(const job::Job& job) {
     if (p.smallest_base_to_thickness > 0.0)
         CHECK(g.base * slack >= p.smallest_base_to_thickness * g.thickness);
     if (job.limits.pressure_drop) CHECK(rating.pressure_drop <= *job.limits.pressure_drop * slack);
+    return true;
 }
 
 void check_regime(job::Job (RandomJobs::*make)(), unsigned seed) {
     std::vector<sizing::Answer> answers;
     const auto jobs = feasible_jobs(make, seed, jobs_per_regime, answers);
     REQUIRE(int(jobs.size()) == jobs_per_regime);
+    int answered = 0;
     for (std::size_t i = 0; i < jobs.size(); ++i) {
         CAPTURE(i);
-        check_answer_keeps_limits(jobs[i]);
+        answered += answer_keeps_limits(jobs[i]) ? 1 : 0;
         const double reference = long_multi_start(jobs[i]);
         CHECK(answers[i].least_aim <= reference * (1.0 + within));
     }
+    // What the air warms may shut out a job that even air serves, but not many.
+    CHECK(answered >= 98 * jobs_per_regime / 100);
 }
 
 /// Differential evolution (rand/1/bin) on ln(mass) with a penalty, at one fin count, by the exact
